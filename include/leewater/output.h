@@ -1,0 +1,44 @@
+/* output.h - results as text, JSON and CSV. All of them carry units, datum,
+ * method and caution. */
+#ifndef LEEWATER_OUTPUT_H
+#define LEEWATER_OUTPUT_H
+
+#include <stdbool.h>
+#include <stdio.h>
+
+#include "leewater/case.h"
+#include "leewater/series.h"
+#include "leewater/status.h"
+
+typedef enum lee_unit_system { LEE_UNITS_SI, LEE_UNITS_US } lee_unit_system;
+
+/* Text made for reading: aligned, few decimals, both ends named. */
+lee_status lee_print_steady(FILE *stream, const lee_case *from,
+                            const lee_steady_result *result,
+                            lee_unit_system units, lee_error *error);
+lee_status lee_print_run(FILE *stream, const lee_case *from,
+                         const lee_run_result *result, lee_unit_system units,
+                         lee_error *error);
+lee_status lee_print_check(FILE *stream, const lee_case *from,
+                           const lee_problem_check *check,
+                           lee_unit_system units, lee_error *error);
+
+/* JSON summaries of docs/formats.md; always SI. */
+lee_status lee_json_steady(FILE *stream, const lee_case *from,
+                           const lee_steady_result *result, lee_error *error);
+lee_status lee_json_run(FILE *stream, const lee_case *from,
+                        const lee_run_result *result, lee_error *error);
+lee_status lee_json_check(FILE *stream, const lee_case *from,
+                          const lee_problem_check *check, lee_error *error);
+
+/* Writes results as CSV with a commented head (method, datum, caution), whole
+ * or not at all: to a temporary name beside the target, synced, renamed. "-"
+ * is stdout. An existing file needs `force`; anything but a regular or a new
+ * file is refused.
+ * Errors: LEE_ERR_ARGUMENT for an ending other than .csv; LEE_ERR_FILE. */
+lee_status lee_write_steady(const char *path, bool force, const lee_case *from,
+                            const lee_steady_result *result, lee_error *error);
+lee_status lee_write_run(const char *path, bool force, const lee_case *from,
+                         const lee_run_result *result, lee_error *error);
+
+#endif

@@ -1,0 +1,235 @@
+/* setup.h - wind set-up: closed forms, steady levels, the transient engine. */
+#ifndef LEEWATER_SETUP_H
+#define LEEWATER_SETUP_H
+
+#include <stdbool.h>
+#include <stddef.h>
+
+#include "leewater/basin.h"
+#include "leewater/status.h"
+
+/* ---- bed friction ---- */
+
+typedef enum lee_bed_kind {
+    LEE_BED_NONE,
+    LEE_BED_MANNING,   /* n, s m-1/3: C_f = g n^2 / H^(1/3)                 */
+    LEE_BED_CHEZY,     /* C, m1/2 s-1: C_f = g / C^2                        */
+    LEE_BED_ROUGHNESS, /* z0, m: C_f = [kappa / (ln(H/z0) - 1)]^2           */
+    LEE_BED_DRAG,      /* C_f                                               */
+    LEE_BED_LINEAR     /* r, s-1: tau_b = rho H r u                         */
+} lee_bed_kind;
+
+typedef struct lee_bed_law {
+    lee_bed_kind kind;
+    double value;
+} lee_bed_law;
+
+/* Quadratic bed coefficient C_f at depth H (m, > 0), tau_b = rho C_f |u| u.
+ * 0 for LEE_BED_NONE and LEE_BED_LINEAR. The log law is held at H = 10 z0
+ * below that depth. Sources beside each law in docs/theory.md. */
+double lee_bed_coefficient(const lee_bed_law *law, double depth,
+                           double gravity);
+
+/* Return-flow factor lambda, 1 - tau_b/tau_s: the shear that the return flow
+ * puts on the bed of a closed basin adds to the wind. */
+typedef struct lee_return_flow {
+    bool is_computed; /* 1 + sqrt(C_f)/kappa, at most 1.5; else `value`     */
+    double value;     /* >= 1                                               */
+} lee_return_flow;
+
+/* lambda for a mean depth; C_f = 0 gives 1. `forced_to_one` for relations
+ * fitted on set-up itself and for lakes with a held end when computed. */
+double lee_return_flow_factor(const lee_return_flow *rule,
+                              const lee_bed_law *bed, double depth,
+                              double gravity, bool forced_to_one);
+
+/* ---- closed forms and handbook formulas ---- */
+
+/* a = lambda tau / (rho g), m; every function propagates NaN. */
+
+/* Uniform depth h, length L, closed, volume kept: H^2 = H0^2 + 2 a x.
+ * Returns rise at the lee wall and fall at the windward wall (negative; -h
+ * when dry), node, wet length; all by bisection to rounding.
+ * Source: first integral of d(eta)/dx = a/H (derived; docs/theory.md). */
+typedef struct lee_parabola {
+    double set_up;     /* m, lee wall                        */
+    double set_down;   /* m, windward wall, -h when dried    */
+    double node;       /* m from the windward wall, level = still water */
+    double wet_length; /* m */
+} lee_parabola;
+lee_parabola lee_closed_parabola(double a, double length, double depth);
+
+/* Open end at the windward side held at still water, uniform depth:
+ * eta(L) = h (sqrt(1 + 2 a L/h^2) - 1). Dean & Dalrymple (1991) [dean1991]. */
+double lee_open_uniform(double a, double length, double depth);
+
+/* Open end, depth falling evenly from h0 to 0 over L: level at the shore.
+ * x/L = (1 - H/h0) - A ln[(H/h0 - A)/(1 - A)], A = a L/h0^2 < 1
+ * Dean & Dalrymple (1991) [dean1991]. */
+double lee_open_slope(double a, double length, double depth);
+
+/* What a handbook's number stands for. */
+typedef enum lee_formula_result {
+    LEE_RESULT_TILT, /* lee level minus windward level                      */
+    LEE_RESULT_RISE  /* lee level above still water                         */
+} lee_formula_result;
+
+/* One handbook formula for set-up over a fetch F with mean depth D. */
+typedef struct lee_formula {
+    const char *name;
+    const char *source;
+    lee_formula_result says;    /* what its source says it returns        */
+    lee_formula_result matches; /* what it equals with C10 of 1.5-2.5e-3  */
+    double speed_min;
+    double speed_max; /* m s-1                                  */
+    bool is_from_memory;
+    /* U m s-1 at 10 m, F m, D m, g m s-2 -> m */
+    double (*set_up)(double speed, double fetch, double depth, double gravity);
+} lee_formula;
+const lee_formula *lee_formula_find(const char *name);
+const lee_formula *lee_formula_at(size_t index);
+
+/* ---- steady levels ---- */
+
+typedef struct lee_steady_input {
+    const lee_profile *profile;
+    double still_water;   /* m above the datum */
+    double stress[2];     /* east, north, Pa */
+    double return_flow;   /* lambda, >= 1 */
+    double water_density; /* kg m-3 */
+    double gravity;       /* m s-2 */
+    double dry_depth;     /* m, 0.01 by default: thinner water counts as dry */
+    double start_level;   /* held level at the first chainage; NaN: wall */
+    double end_level;     /* held level at the last chainage; NaN: wall;
+                             at most one may be held */
+} lee_steady_input;
+
+/* One connected water of the equilibrium. Owns `node`. */
+typedef struct lee_steady_water {
+    double from; /* m, chainage of its shores */
+    double to;
+    double set_up;    /* highest level minus still water, m */
+    double set_up_at; /* chainage, m */
+    double set_down;  /* lowest level minus still water, m */
+    double set_down_at;
+    double tilt; /* set_up - set_down, m */
+    size_t node_count;
+    double *node;         /* [node_count] chainages where level = still water */
+    double volume;        /* m3 */
+    double volume_defect; /* |V - V0| / max(integral b|eta|/2, 1 mm area);
+                             0 with a held end */
+    double first_period;  /* s, of the water at rest in the still lake that
+                             holds this stretch; NaN when it has no area */
+    bool was_parted;      /* a sill fell dry and cut it from its neighbour */
+} lee_steady_water;
+
+/* Owns its arrays. */
+typedef struct lee_steady {
+    size_t count;
+    lee_steady_water *water; /* [count] in order of chainage; may be 0 */
+    size_t n;
+    double *x;     /* [n] m: the surface drawn finely, all profile rows in */
+    double *level; /* [n] m above the datum; NaN where dry */
+    double dry_length; /* m of the still lake's wetted axis fallen dry */
+    double cross_tilt; /* largest lambda |tau_n| b/(rho g H), m */
+    double cross_tilt_at;
+    bool has_sill; /* waters joined or parted on the way */
+    double along;  /* area-mean of projected stress over full stress,
+                           -1 to 1; |along| < 0.01: wind across the axis */
+} lee_steady;
+
+/* Equilibrium levels d(eta)/dx = lambda tau_x/(rho g H) on the profile itself,
+ * volume of each connected water kept; shores dry and flood; over sills the
+ * limit of a wind grown slowly from rest.
+ * Errors: LEE_ERR_ARGUMENT, LEE_ERR_DATA (no water at this still water),
+ * LEE_ERR_CONVERGENCE, LEE_ERR_MEMORY. */
+lee_status lee_steady_solve(const lee_steady_input *input, lee_steady *steady,
+                            lee_error *error);
+void lee_steady_free(lee_steady *steady);
+
+/* Level at chainage x; NaN where dry or off the axis. */
+double lee_steady_level_at(const lee_steady *steady, double x);
+
+/* First natural period, s, of the water of `profile` that covers chainage x
+ * at the given level: smallest omega^2 > 0 of (g A q')' ... in the form
+ * -(1/b Q')' g A = omega^2 Q, Q = 0 at walls, Q' = 0 at held ends. 0.1 % on
+ * smooth beds. NaN when x is dry there. */
+lee_status lee_first_period(const lee_profile *profile, double level, double x,
+                            double gravity, bool start_held, bool end_held,
+                            double *period, lee_error *error);
+
+/* ---- transient engine ---- */
+
+typedef struct lee_transient_options {
+    double gravity;
+    double water_density;
+    double return_flow; /* lambda >= 1: bed acts as
+                            rho C_f |u| u - (lambda - 1) tau_s */
+    lee_bed_law bed;
+    double theta;       /* 0.52 by default */
+    double dry_depth;   /* m, 0.01 by default */
+    bool has_advection; /* on by default */
+    bool is_linear;     /* levels move, depths stay; no advection, linear
+                            friction only: for checks and screening */
+    bool start_held;    /* the first node's level is given by the forcing */
+    bool end_held;
+} lee_transient_options;
+
+lee_transient_options lee_transient_defaults(void);
+
+/* Forcing at one instant. The arrays belong to the engine, the callback fills
+ * them. */
+typedef struct lee_forcing {
+    double *stress;            /* [links] Pa along growing chainage */
+    double *pressure_gradient; /* [links] Pa m-1; zero unless filled */
+    double start_level;        /* m, for held ends */
+    double end_level;
+} lee_forcing;
+
+/* Fills `forcing` for time t (s since the engine's start). */
+typedef void lee_forcing_at(void *user, double t, lee_forcing *forcing);
+
+typedef struct lee_transient lee_transient;
+
+/* A solver for one run. The channel is borrowed and must outlive it. One
+ * reach of one class; other channels are LEE_ERR_ARGUMENT.
+ * Scheme: docs/theory.md. Free with lee_transient_free. */
+lee_status lee_transient_new(const lee_channel *channel,
+                             const lee_transient_options *options,
+                             lee_transient **engine, lee_error *error);
+void lee_transient_free(lee_transient *engine);
+
+/* Puts the engine at time t with the given levels (m; nodes at or below their
+ * bed are dry) and no current. level[nodes]. */
+void lee_transient_start(lee_transient *engine, double t, const double level[]);
+
+/* Advances by dt. Halves the step by itself where the current asks for it.
+ * Errors: LEE_ERR_CONVERGENCE when even the fifth halving is too long or a
+ * level is not finite. */
+lee_status lee_transient_step(lee_transient *engine, double dt,
+                              lee_forcing_at *forcing_at, void *user,
+                              lee_error *error);
+
+double lee_transient_time(const lee_transient *engine);
+const double *
+lee_transient_level(const lee_transient *engine); /* [nodes] m; bed where dry */
+const double *
+lee_transient_speed(const lee_transient *engine);         /* [links] m s-1 */
+double lee_transient_volume(const lee_transient *engine); /* m3 */
+double lee_transient_inflow(
+    const lee_transient *engine); /* m3 through held ends since start */
+
+/* Level of the water at chainage x, linear between nodes that are wet, and
+ * continued to a wall; NaN where dry. */
+double lee_transient_level_at(const lee_transient *engine, double x);
+
+/* How the steps went. */
+typedef struct lee_transient_counts {
+    size_t steps;
+    size_t second_passes;
+    size_t halvings;
+    size_t limited;
+} lee_transient_counts;
+lee_transient_counts lee_transient_count(const lee_transient *engine);
+
+#endif

@@ -1,0 +1,93 @@
+/* stress.h - from the wind at 10 m over open water to the surface stress. */
+#ifndef LEEWATER_STRESS_H
+#define LEEWATER_STRESS_H
+
+#include <stdbool.h>
+#include <stddef.h>
+
+#include "leewater/status.h"
+
+/* Density of fresh water at temperature T (K), kg m-3; 273.15 to 423 K.
+ * Kell (1975), J. Chem. Eng. Data 20, 97-105 [kell1975]. NaN in, NaN out. */
+double lee_water_density(double temperature);
+
+/* Density of dry air at pressure p (Pa) and temperature T (K), kg m-3:
+ * p / (287.05 T) (common practice, gas constant of dry air in J kg-1 K-1). */
+double lee_air_density(double pressure, double temperature);
+
+/* Pressure at an altitude (m, -500 to 9000) in the standard atmosphere, Pa:
+ *     p = 101325 (1 - 2.25577e-5 z)^5.25588
+ * ISO 2533:1975, troposphere [iso2533]. NaN outside the range. */
+double lee_standard_pressure(double altitude);
+
+/* What a drag relation may ask for. A further need is a new field. */
+typedef struct lee_drag_input {
+    double speed;         /* neutral 10 m wind speed, m s-1, >= 0 */
+    double air_density;   /* kg m-3                               */
+    double water_density; /* kg m-3                               */
+} lee_drag_input;
+
+/* One published drag relation: C10 of the neutral 10 m wind. */
+typedef struct lee_drag_relation {
+    const char *name;   /* spelling in case files and options, kebab-case   */
+    const char *paper;  /* key of the paper in docs/references.md; relations
+                           of one paper share it                            */
+    const char *source; /* author, year, equation or table, journal         */
+    double speed_min;   /* fitted range of the 10 m wind speed, m s-1;      */
+    double speed_max;   /*   outside it the relation extrapolates           */
+    bool includes_return_flow; /* fitted on set-up itself: lambda is 1      */
+    bool is_from_memory;       /* coefficients not re-read in the source    */
+    bool is_for_range;         /* takes part in the range of an estimate: one
+                                  relation a paper                          */
+    double (*coefficient)(const lee_drag_input *in); /* C10, [1]            */
+} lee_drag_relation;
+
+/* Relation called `name`, or NULL when there is none. Do not free. */
+const lee_drag_relation *lee_drag_find(const char *name);
+
+/* The index-th relation in order of publication, or NULL past the last. */
+const lee_drag_relation *lee_drag_at(size_t index);
+
+/* The drag an estimate uses: a relation, a constant or a table, and a cap.
+ * Owns its table. {0} is no drag; lee_drag_default gives the usual one. */
+typedef struct lee_drag {
+    const lee_drag_relation *relation; /* NULL: constant or table           */
+    double constant;                   /* C10 when not a relation, no table */
+    size_t n;                          /* rows of the table, 0 for none     */
+    double *speed;                     /* [n] m s-1, increasing             */
+    double *coefficient;               /* [n] C10; linear between rows, held
+                                          and "extrapolated" outside        */
+    double cap;                        /* largest C10; INFINITY for none    */
+} lee_drag;
+
+/* garratt-linear-1977 capped at 3.0e-3. */
+lee_drag lee_drag_default(void);
+void lee_drag_free(lee_drag *drag);
+
+/* C10 with its cap. NaN in, NaN out.
+ *
+ *   extrapolated  out (may be NULL): speed is outside the fitted range
+ *   capped        out (may be NULL): the cap took effect */
+double lee_drag_coefficient(const lee_drag *drag, const lee_drag_input *in,
+                            bool *extrapolated, bool *capped);
+
+/* Writes what the drag is, as "garratt-linear-1977, capped at 0.0030", into
+ * text[size]; returns text. */
+char *lee_drag_describe(const lee_drag *drag, size_t size, char text[]);
+
+/* Stress of a wind vector at the water surface, N m-2.
+ *
+ *     tau = rho_air C10(|U|) |U| U
+ *
+ *   drag           C10
+ *   air_density    kg m-3
+ *   water_density  kg m-3, for relations given as a share of it
+ *   wind           east, north, m s-1, at 10 m over open water
+ *   stress         out: east, north; NaN where the wind is NaN
+ *
+ * Source: definition of the drag coefficient (common practice). */
+void lee_wind_stress(const lee_drag *drag, double air_density,
+                     double water_density, const double wind[2],
+                     double stress[2]);
+
+#endif

@@ -1,0 +1,217 @@
+/* wind.h - the wind record: one model for every reader.
+ *
+ * Winds are components of where the air GOES (east, north; m s-1). Files and
+ * people say where it comes FROM, in degrees clockwise from true north; the
+ * reader converts once. A missing sample is NaN in both components; calm is
+ * the zero vector. */
+#ifndef LEEWATER_WIND_H
+#define LEEWATER_WIND_H
+
+#include <stdbool.h>
+#include <stddef.h>
+#include <stdint.h>
+
+#include "leewater/status.h"
+
+/* What the time of a sample stands for. */
+typedef enum lee_stamp {
+    LEE_STAMP_INSTANT, /* the sample holds at that time                    */
+    LEE_STAMP_START,   /* mean over the step that begins there             */
+    LEE_STAMP_MIDDLE,  /* mean over the step centred there                 */
+    LEE_STAMP_END      /* mean over the step that ends there               */
+} lee_stamp;
+
+/* Owns its columns. {0} is a valid empty record; so is a freed one. */
+typedef struct lee_wind_record {
+    size_t n;
+    int64_t *time;             /* [n] s since 1970 UTC, strictly increasing */
+    double *east;              /* [n] toward east, m s-1; NaN when missing  */
+    double *north;             /* [n] toward north, m s-1; NaN when missing */
+    double *pressure;          /* [n] or NULL: station pressure, Pa         */
+    double *air_temperature;   /* [n] or NULL: K                            */
+    double *water_temperature; /* [n] or NULL: K                            */
+    double *humidity;          /* [n] or NULL: relative humidity, 0 to 1    */
+    double *ice;               /* [n] or NULL: ice cover, 0 to 1            */
+    lee_stamp stamp;
+    size_t duplicates; /* equal repeated rows that the reader dropped       */
+    size_t variable_calm;    /* "variable" below 3 m s-1, taken as calm     */
+    size_t variable_missing; /* "variable" from 3 m s-1 on, taken as missing*/
+} lee_wind_record;
+
+/* Gives `record` room for n samples: times 0, winds NaN, no optional column.
+ * What it held before is not freed. Errors: LEE_ERR_MEMORY. */
+lee_status lee_wind_record_init(lee_wind_record *record, size_t n,
+                                lee_error *error);
+
+/* Frees the columns and empties the record. Safe to call twice. */
+void lee_wind_record_free(lee_wind_record *record);
+
+/* Components of where the air goes from speed and the direction it blows
+ * from (radians clockwise from north), and back. Calm gives direction 0. */
+void lee_wind_components(double speed, double from, double *east,
+                         double *north);
+void lee_wind_speed_from(double east, double north, double *speed,
+                         double *from);
+
+/* Columns a CSV record may have. */
+typedef enum lee_wind_column {
+    LEE_WIND_TIME, /* ISO 8601 date and time                                */
+    LEE_WIND_DATE, /* ISO date; with LEE_WIND_CLOCK                         */
+    LEE_WIND_CLOCK,
+    LEE_WIND_YEAR, /* split time: year, month, day, then optional hour ...  */
+    LEE_WIND_MONTH,
+    LEE_WIND_DAY,
+    LEE_WIND_HOUR,
+    LEE_WIND_MINUTE,
+    LEE_WIND_SPEED, /* with LEE_WIND_FROM                                   */
+    LEE_WIND_FROM,  /* degrees the wind blows from; 0 and 360 are north     */
+    LEE_WIND_EASTWARD, /* or the two components                             */
+    LEE_WIND_NORTHWARD,
+    LEE_WIND_PRESSURE,
+    LEE_WIND_AIR_TEMPERATURE,
+    LEE_WIND_WATER_TEMPERATURE,
+    LEE_WIND_HUMIDITY,
+    LEE_WIND_ICE,
+    LEE_WIND_COLUMNS
+} lee_wind_column;
+
+/* The case file's name of a column ("speed"), and the SI unit the record
+ * keeps it in ("m s-1"; NULL for times). */
+const char *lee_wind_column_name(lee_wind_column column);
+const char *lee_wind_column_unit(lee_wind_column column);
+
+/* How a CSV file is to be read. Borrows its texts. {0} plus column names is
+ * enough: separator and decimal sign are found, units stand in the header as
+ * "speed [knots]". */
+typedef struct lee_wind_csv {
+    struct {
+        const char *name; /* header without its unit, or "#3" for the third;
+                             NULL when there is no such column              */
+        const char *unit; /* when the header has none; NULL otherwise       */
+    } column[LEE_WIND_COLUMNS];
+    bool has_utc_offset;
+    int64_t utc_offset; /* s east of UTC of times without a zone; times
+                           without a zone are refused when not given        */
+    size_t missing_count;
+    const char *const *missing; /* [missing_count] texts that mean "missing",
+                              beside the empty field, NA, NaN and null      */
+    const char *variable;       /* text in the direction column that means
+                                   "variable" ("VRB"); NULL for none        */
+    lee_stamp stamp;
+} lee_wind_csv;
+
+/* Reads a wind record. Rows whose wind is missing are kept as NaN; equal
+ * repeated rows are dropped and counted; a repeated time with another wind,
+ * and a time that runs backwards, are errors with their line. Direction is
+ * in [0, 360], speed >= 0, or an error with line and column.
+ *
+ *   path    a regular file
+ *   csv     how to read it
+ *   record  out: freed with lee_wind_record_free
+ *
+ * Errors: LEE_ERR_FILE, LEE_ERR_FORMAT (file:line:column), LEE_ERR_DATA when
+ * no sample has a wind, LEE_ERR_MEMORY. */
+lee_status lee_wind_read_csv(const char *path, const lee_wind_csv *csv,
+                             lee_wind_record *record, lee_error *error);
+
+/* What to do where the record has no wind. */
+typedef struct lee_gap_rule {
+    int64_t largest; /* s: longest distance between two samples with wind,
+                        in excess of the record's own step, that is bridged */
+    bool split;      /* longer gaps part the record instead of being errors */
+} lee_gap_rule;
+
+/* A stretch without wind, longer than the record's own step. */
+typedef struct lee_wind_gap {
+    int64_t after;  /* last sample with wind before it */
+    int64_t before; /* first sample with wind after it */
+    bool is_long;   /* beyond the gap rule             */
+} lee_wind_gap;
+
+/* What a record holds; makes no change to it. {0} is valid. Owns `gap`. */
+typedef struct lee_wind_check {
+    size_t samples;
+    int64_t first;
+    int64_t last;
+    int64_t step; /* usual step: the most frequent distance, s              */
+    size_t irregular; /* steps that differ from it                          */
+    size_t missing;   /* samples without wind                               */
+    size_t calms;
+    size_t duplicates;
+    size_t variable_calm;
+    size_t variable_missing;
+    size_t beyond_belief;       /* faster than 75 m s-1                      */
+    int64_t beyond_belief_time; /* the first of them                        */
+    size_t spikes;      /* faster than both neighbours by 15 m s-1 and by a
+                      factor of 3, within three usual steps                 */
+    int64_t spike_time; /* the first of them                                */
+    double fastest;
+    double fastest_from; /* radians */
+    int64_t fastest_time;
+    double mean_speed;
+    size_t gap_count;
+    lee_wind_gap *gap; /* [gap_count] in order of time                      */
+} lee_wind_check;
+
+/* Looks through a record. Errors: LEE_ERR_MEMORY. */
+lee_status lee_wind_check_record(const lee_wind_record *record,
+                                 const lee_gap_rule *rule,
+                                 lee_wind_check *check, lee_error *error);
+void lee_wind_check_free(lee_wind_check *check);
+
+/* One unbroken stretch of a record after the gap rule: indices [first, end)
+ * of samples; missing ones inside are to be bridged. */
+typedef struct lee_wind_piece {
+    size_t first;
+    size_t end;
+} lee_wind_piece;
+
+/* Parts a record into pieces. One piece when nothing is beyond the rule.
+ * Leading and trailing missing samples belong to no piece.
+ *
+ *   pieces  out: [count], free() it
+ *
+ * Errors: LEE_ERR_DATA when a gap is beyond the rule and `split` is off: names
+ * its two times; LEE_ERR_MEMORY. */
+lee_status lee_wind_pieces(const lee_wind_record *record,
+                           const lee_gap_rule *rule, lee_wind_piece **pieces,
+                           size_t *count, lee_error *error);
+
+/* Wind at time t inside [first sample, last sample] of a piece. Instants:
+ * speed and the shorter arc of direction are linear between samples with
+ * wind (through calm: the direction of the sample that has one). Means:
+ * held over their step, so that their mean is kept; a bridged gap between
+ * means is linear like instants.
+ *
+ *   at    out: east, north; NaN outside the piece
+ *   hint  in/out: index to start the search from; start with 0 */
+void lee_wind_at(const lee_wind_record *record, const lee_wind_piece *piece,
+                 int64_t step, double t, double at[2], size_t *hint);
+
+/* First and last time that lee_wind_at covers for a piece, s since 1970:
+ * for means the begin of the first and the end of the last step. */
+void lee_wind_piece_span(const lee_wind_record *record,
+                         const lee_wind_piece *piece, int64_t step,
+                         int64_t *from, int64_t *to);
+
+/* A storm built for design: speed rises from `before` to the peak along half
+ * a cosine, holds, falls back to `after`; the direction turns at an even rate
+ * from `from` - turn/2 to `from` + turn/2 over the whole storm. */
+typedef struct lee_storm {
+    double peak;   /* m s-1                                                 */
+    double from;   /* radians, direction at the middle of the hold          */
+    double turn;   /* radians, clockwise positive                           */
+    double rise;   /* s                                                     */
+    double hold;   /* s                                                     */
+    double fall;   /* s                                                     */
+    double before; /* m s-1 ahead of the storm                              */
+    double after;  /* m s-1 once it has passed                              */
+} lee_storm;
+
+/* The storm as a record of instants each `step` s from `start` on, ending
+ * `calm` s after the fall. Errors: LEE_ERR_ARGUMENT, LEE_ERR_MEMORY. */
+lee_status lee_storm_record(const lee_storm *storm, int64_t start, int64_t step,
+                            int64_t calm, lee_wind_record *record,
+                            lee_error *error);
+
+#endif
