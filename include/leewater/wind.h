@@ -47,7 +47,13 @@ lee_status lee_wind_record_init(lee_wind_record *record, size_t n,
 void lee_wind_record_free(lee_wind_record *record);
 
 /* Components of where the air goes from speed and the direction it blows
- * from (radians clockwise from north), and back. Calm gives direction 0. */
+ * from (radians clockwise from north), and back, with the direction in
+ * [0, 2 pi).
+ *
+ *     east = -U sin(from), north = -U cos(from)
+ *
+ * Calm is (0, 0) whatever its direction and gives direction 0; NaN in either
+ * argument gives NaN in both results. */
 void lee_wind_components(double speed, double from, double *east,
                          double *north);
 void lee_wind_speed_from(double east, double north, double *speed,
@@ -75,14 +81,15 @@ typedef enum lee_wind_column {
     LEE_WIND_COLUMNS
 } lee_wind_column;
 
-/* The case file's name of a column ("speed"), and the SI unit the record
- * keeps it in ("m s-1"; NULL for times). */
+/* The case file's name of a column ("speed"), and the unit it is converted to
+ * ("m s-1"; "degree" for the direction; NULL for times). */
 const char *lee_wind_column_name(lee_wind_column column);
 const char *lee_wind_column_unit(lee_wind_column column);
 
 /* How a CSV file is to be read. Borrows its texts. {0} plus column names is
  * enough: separator and decimal sign are found, units stand in the header as
- * "speed [knots]". */
+ * "speed [knots]". Only humidity and ice may do without a unit: they are then
+ * fractions. */
 typedef struct lee_wind_csv {
     struct {
         const char *name; /* header without its unit, or "#3" for the third;
@@ -97,13 +104,17 @@ typedef struct lee_wind_csv {
                               beside the empty field, NA, NaN and null      */
     const char *variable;       /* text in the direction column that means
                                    "variable" ("VRB"); NULL for none        */
+    int century; /* 1900: what two-digit years of LEE_WIND_YEAR are added to;
+                    0: two-digit years are refused                          */
     lee_stamp stamp;
 } lee_wind_csv;
 
 /* Reads a wind record. Rows whose wind is missing are kept as NaN; equal
- * repeated rows are dropped and counted; a repeated time with another wind,
+ * repeated rows are dropped and counted; a repeated time with other values,
  * and a time that runs backwards, are errors with their line. Direction is
- * in [0, 360], speed >= 0, or an error with line and column.
+ * in [0, 360], speed >= 0, or an error with line and column. A speed of 0
+ * needs no direction: it is calm; any other does, or the wind is missing.
+ * Hour 24 with minute 0 is midnight at the end of the day.
  *
  *   path    a regular file
  *   csv     how to read it
@@ -116,8 +127,9 @@ lee_status lee_wind_read_csv(const char *path, const lee_wind_csv *csv,
 
 /* What to do where the record has no wind. */
 typedef struct lee_gap_rule {
-    int64_t largest; /* s: longest distance between two samples with wind,
-                        in excess of the record's own step, that is bridged */
+    int64_t largest; /* s, >= 0: longest distance between two samples with
+                        wind, in excess of the record's own step, that is
+                        bridged                                             */
     bool split;      /* longer gaps part the record instead of being errors */
 } lee_gap_rule;
 
@@ -133,7 +145,8 @@ typedef struct lee_wind_check {
     size_t samples;
     int64_t first;
     int64_t last;
-    int64_t step; /* usual step: the most frequent distance, s              */
+    int64_t step;     /* usual step: the most frequent distance of successive
+                     samples, the shortest of equals, s; 0 for one sample   */
     size_t irregular; /* steps that differ from it                          */
     size_t missing;   /* samples without wind                               */
     size_t calms;
@@ -142,13 +155,15 @@ typedef struct lee_wind_check {
     size_t variable_missing;
     size_t beyond_belief;       /* faster than 75 m s-1                      */
     int64_t beyond_belief_time; /* the first of them                        */
-    size_t spikes;      /* faster than both neighbours by 15 m s-1 and by a
-                      factor of 3, within three usual steps                 */
-    int64_t spike_time; /* the first of them                                */
-    double fastest;
+    size_t spikes;       /* faster than the samples with wind before and after
+                           by 15 m s-1 and by a factor of 3, both at most
+                           three usual steps away                           */
+    int64_t spike_time;  /* the first of them                                */
+    double fastest;      /* m s-1; NaN, like the next and the mean, when no
+                           sample has a wind                                */
     double fastest_from; /* radians */
     int64_t fastest_time;
-    double mean_speed;
+    double mean_speed; /* m s-1, of the samples with wind */
     size_t gap_count;
     lee_wind_gap *gap; /* [gap_count] in order of time                      */
 } lee_wind_check;
@@ -167,49 +182,65 @@ typedef struct lee_wind_piece {
 } lee_wind_piece;
 
 /* Parts a record into pieces. One piece when nothing is beyond the rule.
- * Leading and trailing missing samples belong to no piece.
+ * A piece begins and ends with a sample that has a wind (one and the same
+ * when it stands alone): missing ones at its ends belong to no piece.
  *
  *   pieces  out: [count], free() it
  *
- * Errors: LEE_ERR_DATA when a gap is beyond the rule and `split` is off: names
- * its two times; LEE_ERR_MEMORY. */
+ * Errors: LEE_ERR_DATA when a gap is beyond the rule and `split` is off (the
+ * message names its two times), or when no sample has a wind;
+ * LEE_ERR_MEMORY. */
 lee_status lee_wind_pieces(const lee_wind_record *record,
                            const lee_gap_rule *rule, lee_wind_piece **pieces,
                            size_t *count, lee_error *error);
 
-/* Wind at time t inside [first sample, last sample] of a piece. Instants:
- * speed and the shorter arc of direction are linear between samples with
- * wind (through calm: the direction of the sample that has one). Means:
- * held over their step, so that their mean is kept; a bridged gap between
- * means is linear like instants.
+/* Wind at time t inside the span of a piece. Instants: speed and the shorter
+ * arc of direction are linear between samples with wind (through calm: the
+ * direction of the sample that has one; between opposite winds the direction
+ * turns clockwise). Means: held over their step, so that their mean is kept;
+ * where samples with wind are further apart than the step, the time between
+ * the end of one step and the begin of the next is bridged, linear like
+ * instants; where they are closer, each is held up to the next (START), from
+ * the one before (END) or to half the way (MIDDLE). A jump belongs to the
+ * later step.
  *
- *   at    out: east, north; NaN outside the piece
+ *   step  the record's usual step, s (lee_wind_check)
+ *   at    out: east, north; NaN outside the span
  *   hint  in/out: index to start the search from; start with 0 */
 void lee_wind_at(const lee_wind_record *record, const lee_wind_piece *piece,
                  int64_t step, double t, double at[2], size_t *hint);
 
 /* First and last time that lee_wind_at covers for a piece, s since 1970:
- * for means the begin of the first and the end of the last step. */
+ * for means the begin of the first and the end of the last step. The step of
+ * a MIDDLE stamp begins half a step, rounded down to a second, before it. */
 void lee_wind_piece_span(const lee_wind_record *record,
                          const lee_wind_piece *piece, int64_t step,
                          int64_t *from, int64_t *to);
 
 /* A storm built for design: speed rises from `before` to the peak along half
- * a cosine, holds, falls back to `after`; the direction turns at an even rate
- * from `from` - turn/2 to `from` + turn/2 over the whole storm. */
+ * a cosine, holds, falls to `after` along half a cosine. The direction turns
+ * by `turn` at an even rate over rise, hold and fall and is `from` in the
+ * middle of the hold: a storm that rises as long as it falls turns from
+ * `from` - turn/2 to `from` + turn/2. */
 typedef struct lee_storm {
-    double peak;   /* m s-1                                                 */
+    double peak;   /* m s-1, > 0                                            */
     double from;   /* radians, direction at the middle of the hold          */
     double turn;   /* radians, clockwise positive                           */
-    double rise;   /* s                                                     */
-    double hold;   /* s                                                     */
-    double fall;   /* s                                                     */
-    double before; /* m s-1 ahead of the storm                              */
-    double after;  /* m s-1 once it has passed                              */
+    double rise;   /* s, >= 0                                               */
+    double hold;   /* s, >= 0                                               */
+    double fall;   /* s, >= 0                                               */
+    double before; /* m s-1 ahead of the storm, 0 to peak                   */
+    double after;  /* m s-1 once it has passed, 0 to peak                   */
 } lee_storm;
 
-/* The storm as a record of instants each `step` s from `start` on, ending
- * `calm` s after the fall. Errors: LEE_ERR_ARGUMENT, LEE_ERR_MEMORY. */
+/* The storm as a record of instants: each `step` s (> 0) from `start` on, at
+ * the four corners of its curve, and at the end, `calm` s (>= 0) after the
+ * fall; so its peak is in the record whatever the step. Durations are taken
+ * to the nearest second, and a rise or fall of nothing takes one second.
+ *
+ * Errors: LEE_ERR_ARGUMENT when a value is outside its range or the record
+ * would exceed ten million samples; LEE_ERR_MEMORY.
+ * Source: a shape of our own; the half cosine is common practice. */
 lee_status lee_storm_record(const lee_storm *storm, int64_t start, int64_t step,
                             int64_t calm, lee_wind_record *record,
                             lee_error *error);
