@@ -1,0 +1,81 @@
+#!/bin/sh
+# sizes.sh - proves that files and folders stay small enough to be read, and
+# that nothing written is left out of the build.
+#
+# Usage: sizes.sh SOURCE_ROOT
+set -eu
+root=$1
+. "$root/tests/support/tap.sh"
+found=$(mktemp)
+trap 'rm -f "$found"' EXIT
+cd "$root"
+
+sources() {
+    find src include tests examples -name '*.[ch]' 2>/dev/null | sort
+}
+
+sources | xargs wc -l | awk '$2 != "total" && $1 > 600 {
+    print $2 " has " $1 " lines, more than 600" }' >"$found"
+holds 'no file is longer than 600 lines' "$found"
+
+sources | xargs awk 'length($0) > 80 {
+    print FILENAME ":" FNR ": " length($0) " characters" }' >"$found"
+holds 'no line is wider than 80 characters' "$found"
+
+# A body opens with the first ") {" after the last brace in the first column,
+# and closes with the next one: the formatter sees to that.
+sources | xargs awk '
+    FNR == 1 { open = 0 }
+    /\) \{$/ && !open { open = FNR }
+    /^}/ {
+        if (open && FNR - open - 1 > 70) {
+            print FILENAME ":" open ": " FNR - open - 1 " lines"
+        }
+        open = 0
+    }' >"$found"
+holds 'no function is longer than 70 lines' "$found"
+
+for folder in src/*/; do
+    count=$(find "$folder" -name '*.c' | wc -l)
+    [ "$count" -le 13 ] || echo "$folder holds $count sources"
+done >"$found"
+holds 'no folder of src holds more than 13 sources' "$found"
+
+for file in src/*/*.c; do
+    grep -q "'${file#src/}'" src/meson.build || echo "$file is not built"
+done >"$found"
+holds 'every source is in src/meson.build' "$found"
+
+for file in tests/*/test_*.c; do
+    name=$(basename "$file" .c)
+    suite=$(basename "$(dirname "$file")")
+    awk -v suite="'$suite'" -v name="'${name#test_}'" '
+        index($0, suite ": [") { inside = 1 }
+        inside && index($0, name) { found = 1 }
+        inside && /\]/ { inside = 0 }
+        END { exit !found }' tests/meson.build || echo "$file is not run"
+done >"$found"
+holds 'every test program is in tests/meson.build' "$found"
+
+for file in include/leewater/*.h; do
+    name=$(basename "$file")
+    grep -q "'$name'" include/leewater/meson.build ||
+        echo "$name is not installed"
+    [ "$name" = leewater.h ] ||
+        grep -q "\"leewater/$name\"" include/leewater/leewater.h ||
+        echo "$name is not in leewater.h"
+done >"$found"
+holds 'every public header is installed and in leewater.h' "$found"
+
+# "/* name.c - what it holds": the first line of a source. A test's first
+# line is a sentence that says what it proves.
+for file in src/*/*.[ch] include/leewater/*.h tests/support/*.h; do
+    head -n 1 "$file" | grep -q "^/\* $(basename "$file") - [^ ]" ||
+        echo "$file"
+done >"$found"
+holds 'every source begins with its name and its responsibility' "$found"
+
+sources | xargs grep -nE '(TODO|FIXME|XXX)' | grep -v 'issue [0-9]' \
+    >"$found" || true
+holds 'nothing is left open without an issue' "$found"
+finish
