@@ -54,6 +54,7 @@ int lee_status_exit_code(lee_status status) {
     return statuses[status].exit_code;
 }
 
+LEE_PRINTF(1, 0)
 static char *formatted(const char *format, va_list arguments) {
     va_list again;
     va_copy(again, arguments);
