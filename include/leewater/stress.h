@@ -7,8 +7,8 @@
 
 #include "leewater/status.h"
 
-/* Density of fresh water at temperature T (K), kg m-3; 273.15 to 423 K.
- * Kell (1975), J. Chem. Eng. Data 20, 97-105 [kell1975]. NaN in, NaN out. */
+/* Density of fresh water at temperature T (K), kg m-3; 273.15 to 423.15 K,
+ * NaN outside. Kell (1975), J. Chem. Eng. Data 20, 97-105 [kell1975]. */
 double lee_water_density(double temperature);
 
 /* Density of dry air at pressure p (Pa) and temperature T (K), kg m-3:
