@@ -1,0 +1,40 @@
+/* spacing.h - how far apart the samples of a record stand. */
+#ifndef LEEWATER_WIND_SPACING_H
+#define LEEWATER_WIND_SPACING_H
+
+#include <math.h>
+#include <stdbool.h>
+#include <stddef.h>
+#include <stdint.h>
+
+#include "leewater/status.h"
+#include "leewater/wind.h"
+
+static inline bool lee_wind_is_there(const lee_wind_record *record,
+                                     size_t index) {
+    return !isnan(record->east[index]) && !isnan(record->north[index]);
+}
+
+/* Index of the first sample with wind in [index, end), or end. */
+static inline size_t lee_wind_seek(const lee_wind_record *record, size_t index,
+                                   size_t end) {
+    while (index < end && !lee_wind_is_there(record, index)) {
+        index++;
+    }
+    return index;
+}
+
+/* Are two successive samples with wind, this many seconds apart, further
+ * apart than the gap rule bridges? */
+static inline bool lee_wind_is_long_gap(const lee_gap_rule *rule, int64_t step,
+                                        int64_t distance) {
+    return distance - step > rule->largest;
+}
+
+/* The usual step: the most frequent distance of successive samples, missing
+ * ones included, and of equally frequent ones the shortest; 0 when there is
+ * only one sample. Errors: LEE_ERR_MEMORY. */
+lee_status lee_wind_usual_step(const lee_wind_record *record, int64_t *step,
+                               lee_error *error);
+
+#endif
