@@ -5,8 +5,8 @@
  *
  * The library never prints (but to streams it is handed), exits, aborts,
  * reads the environment or sets the locale. It uses GSL, whose default is to
- * abort on errors: call gsl_set_error_handler_off() once at the start of an
- * embedding program. */
+ * abort on errors: call lee_quiet_gsl() (or gsl_set_error_handler_off()) once
+ * at the start of an embedding program. */
 #ifndef LEEWATER_LEEWATER_H
 #define LEEWATER_LEEWATER_H
 

@@ -23,22 +23,49 @@ lee_status lee_print_check(FILE *stream, const lee_case *from,
                            const lee_problem_check *check,
                            lee_unit_system units, lee_error *error);
 
-/* JSON summaries of docs/formats.md; always SI. */
+/* The answer of `estimate`: the first wind of a closed lake of even depth and
+ * width, given as a case whose profile has two rows, with the handbook
+ * formulas beside it. */
+lee_status lee_print_estimate(FILE *stream, const lee_case *from,
+                              const lee_steady_result *result,
+                              lee_unit_system units, lee_error *error);
+
+/* Drag relations side by side. Borrows its lists. */
+typedef struct lee_drag_table {
+    size_t speeds;
+    const double *speed; /* [speeds] m s-1 at 10 m over water */
+    size_t relations;
+    const lee_drag_relation *const *relation; /* [relations] */
+    double air_density;                       /* kg m-3 */
+    double water_density;                     /* kg m-3 */
+    bool has_sources; /* text: name the source of each */
+} lee_drag_table;
+lee_status lee_print_drag(FILE *stream, const lee_drag_table *table,
+                          lee_unit_system units, lee_error *error);
+
+/* JSON summaries of docs/formats.md; always SI. A number that there is none of
+ * is null. */
 lee_status lee_json_steady(FILE *stream, const lee_case *from,
                            const lee_steady_result *result, lee_error *error);
 lee_status lee_json_run(FILE *stream, const lee_case *from,
                         const lee_run_result *result, lee_error *error);
 lee_status lee_json_check(FILE *stream, const lee_case *from,
                           const lee_problem_check *check, lee_error *error);
+lee_status lee_json_estimate(FILE *stream, const lee_case *from,
+                             const lee_steady_result *result, lee_error *error);
+lee_status lee_json_drag(FILE *stream, const lee_drag_table *table,
+                         lee_error *error);
 
 /* Writes results as CSV with a commented head (method, datum, caution), whole
  * or not at all: to a temporary name beside the target, synced, renamed. "-"
  * is stdout. An existing file needs `force`; anything but a regular or a new
- * file is refused.
+ * file is refused. `with_wind` adds the wind to a series; low and high stand
+ * beside a level when they were kept.
  * Errors: LEE_ERR_ARGUMENT for an ending other than .csv; LEE_ERR_FILE. */
 lee_status lee_write_steady(const char *path, bool force, const lee_case *from,
                             const lee_steady_result *result, lee_error *error);
-lee_status lee_write_run(const char *path, bool force, const lee_case *from,
-                         const lee_run_result *result, lee_error *error);
+lee_status lee_write_run(const char *path, bool force, bool with_wind,
+                         const lee_case *from, const lee_run_result *result,
+                         lee_error *error);
 
 #endif

@@ -74,4 +74,8 @@ const char *lee_caution(void);
 /* Stated limits of the method, one sentence each; NULL past the last. */
 const char *lee_limit_at(size_t index);
 
+/* Turns off GSL's handler that aborts the process, for the whole process. The
+ * library checks every status itself. */
+void lee_quiet_gsl(void);
+
 #endif
