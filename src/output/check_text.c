@@ -1,0 +1,251 @@
+/* check_text.c - what was understood of a case, as text. */
+#include <math.h>
+#include <stdbool.h>
+
+#include "output/print.h"
+
+#include "base/constants.h"
+#include "leewater/output.h"
+
+static const char *stamp_name(lee_stamp stamp) {
+    switch (stamp) {
+    case LEE_STAMP_INSTANT:
+        return "instants";
+    case LEE_STAMP_START:
+        return "means over the step that begins at their time";
+    case LEE_STAMP_MIDDLE:
+        return "means over the step around their time";
+    case LEE_STAMP_END:
+        return "means over the step that ends at their time";
+    }
+    return "";
+}
+
+/* Least, greatest of n numbers, n > 0. */
+static void span_of(size_t n, const double value[], double *low, double *high) {
+    *low = value[0];
+    *high = value[0];
+    for (size_t i = 1; i < n; i++) {
+        *low = fmin(*low, value[i]);
+        *high = fmax(*high, value[i]);
+    }
+}
+
+static void print_end(const lee_printer *to, const char *label,
+                      const lee_end *end) {
+    if (!end->is_held) {
+        lee_print_row(to, label, "closed");
+    } else if (end->level.n == 1) {
+        lee_print_row(to, label, "held at %s",
+                      lee_show_length(to, end->level.level[0]).text);
+    } else {
+        lee_print_row(to, label, "held at a series of %zu levels",
+                      end->level.n);
+    }
+}
+
+static void print_axis(const lee_printer *to, const lee_profile *profile) {
+    double low;
+    double high;
+    const size_t last = profile->n - 1;
+    lee_print_row(to, "axis", "%zu rows, chainage %s to %s", profile->n,
+                  lee_show_distance(to, profile->chainage[0]).text,
+                  lee_show_distance(to, profile->chainage[last]).text);
+    span_of(profile->n, profile->bearing, &low, &high);
+    if (high - low < 1e-9) { /* rad */
+        lee_print_row(to, "bearing", "%s", lee_show_direction(low).text);
+    } else {
+        lee_print_row(to, "bearing", "bent: %s at the start, %s at the end",
+                      lee_show_direction(profile->bearing[0]).text,
+                      lee_show_direction(profile->bearing[last]).text);
+    }
+    span_of(profile->n, profile->bed, &low, &high);
+    lee_print_row(to, "bed", "%s to %s", lee_show_length(to, low).text,
+                  lee_show_length(to, high).text);
+    span_of(profile->n, profile->width, &low, &high);
+    lee_print_row(to, "width", "%s to %s", lee_show_distance(to, low).text,
+                  lee_show_distance(to, high).text);
+}
+
+static void print_lake(const lee_printer *to, const lee_case *from,
+                       const lee_problem_check *check) {
+    const lee_lake *lake = &from->problem.lake;
+    (void)fputs("\nLake\n", to->stream);
+    print_axis(to, &lake->profile);
+    print_end(to, "start", &lake->start);
+    print_end(to, "end", &lake->end);
+    if (lake->still_water.n > 1) {
+        lee_print_row(to, "still water", "a series of %zu levels",
+                      lake->still_water.n);
+    }
+    lee_print_row(to, "wetted length", "%s",
+                  lee_show_distance(to, check->lake.wet_length).text);
+    lee_print_row(to, "area, volume", "%.3f km2, %.5g million m3",
+                  check->lake.area / 1e6, check->lake.volume / 1e6);
+    lee_print_row(to, "depth", "mean %s, greatest %s",
+                  lee_show_length(to, check->lake.mean_depth).text,
+                  lee_show_length(to, check->lake.max_depth).text);
+}
+
+static void print_stations(const lee_printer *to, const lee_case *from,
+                           double still_water) {
+    const lee_problem *problem = &from->problem;
+    if (problem->station_count > 0) {
+        (void)fputs("\nStations\n", to->stream);
+    }
+    for (size_t i = 0; i < problem->station_count; i++) {
+        const lee_station *station = &problem->station[i];
+        const bool has_bed = !isnan(station->bed);
+        const double bed =
+            has_bed ? station->bed
+                    : lee_profile_bed(&problem->lake.profile, station->at);
+        lee_print_row(to, station->name,
+                      "chainage %s, %s of %s below still "
+                      "water, %zu threshold%s",
+                      lee_show_distance(to, station->at).text,
+                      has_bed ? "own bed" : "section's bed",
+                      lee_show_length(to, still_water - bed).text,
+                      station->threshold_count,
+                      station->threshold_count == 1 ? "" : "s");
+    }
+}
+
+static void print_gaps(const lee_printer *to, const lee_wind_check *record) {
+    enum { SHOWN = 5 };
+    for (size_t i = 0; i < record->gap_count && i < SHOWN; i++) {
+        const lee_wind_gap *gap = &record->gap[i];
+        lee_print_row(
+            to, i == 0 ? "gaps" : "", "%s to %s: %s, %s",
+            lee_show_time(gap->after).text, lee_show_time(gap->before).text,
+            lee_show_duration((double)(gap->before - gap->after)).text,
+            gap->is_long ? "beyond the rule" : "bridged");
+    }
+    if (record->gap_count > SHOWN) {
+        lee_print_row(to, "", "and %zu more", record->gap_count - SHOWN);
+    }
+    if (record->gap_count == 0) {
+        lee_print_row(to, "gaps", "none");
+    }
+}
+
+/* Counts that are only worth a row when they are not zero. */
+static void print_doubts(const lee_printer *to, const lee_wind_check *record) {
+    const struct {
+        const char *label;
+        const char *words;
+        size_t count;
+    } doubts[] = {
+        {"irregular", "steps unlike the usual",          record->irregular    },
+        {"missing",   "samples without wind",            record->missing      },
+        {"repeated",  "equal rows, dropped",             record->duplicates   },
+        {"variable",  "light, taken as calm",            record->variable_calm},
+        {"variable",  "from 3 m/s on, taken as missing",
+         record->variable_missing                                             },
+    };
+    for (size_t i = 0; i < sizeof doubts / sizeof doubts[0]; i++) {
+        if (doubts[i].count > 0) {
+            lee_print_row(to, doubts[i].label, "%zu %s", doubts[i].count,
+                          doubts[i].words);
+        }
+    }
+    if (record->beyond_belief > 0) {
+        lee_print_row(to, "beyond belief",
+                      "%zu winds faster than 75 m/s, the first %s",
+                      record->beyond_belief,
+                      lee_show_time(record->beyond_belief_time).text);
+    }
+    if (record->spikes > 0) {
+        lee_print_row(to, "spikes", "%zu, the first %s", record->spikes,
+                      lee_show_time(record->spike_time).text);
+    }
+}
+
+static void print_record(const lee_printer *to, const lee_case *from,
+                         const lee_problem_check *check) {
+    const lee_wind_check *record = &check->record;
+    const lee_wind_source *wind = &from->problem.wind;
+    lee_print_row(to, "file", "%s",
+                  wind->record_path != NULL ? wind->record_path : "not named");
+    lee_print_row(to, "samples", "%zu, %s", record->samples,
+                  stamp_name(wind->record.stamp));
+    lee_print_row(to, "from, to", "%s, %s", lee_show_time(record->first).text,
+                  lee_show_time(record->last).text);
+    lee_print_row(to, "usual step", "%s",
+                  lee_show_duration((double)record->step).text);
+    print_doubts(to, record);
+    print_gaps(to, record);
+    lee_print_row(to, "pieces", "%zu", check->pieces);
+    lee_print_row(to, "calms", "%zu", record->calms);
+    lee_print_row(to, "mean wind", "%s",
+                  lee_show_speed(to, record->mean_speed).text);
+    lee_print_row(to, "fastest wind", "%s from %s, %s",
+                  lee_show_speed(to, record->fastest).text,
+                  lee_show_direction(record->fastest_from).text,
+                  lee_show_time(record->fastest_time).text);
+}
+
+static void print_storm(const lee_printer *to, const lee_storm *storm) {
+    lee_print_row(to, "peak", "%s from %s",
+                  lee_show_speed(to, storm->peak).text,
+                  lee_show_direction(storm->from).text);
+    lee_print_row(to, "turn", "%.0f degrees", storm->turn * 180.0 / lee_pi);
+    lee_print_row(to, "rise, hold, fall", "%s, %s, %s",
+                  lee_show_duration(storm->rise).text,
+                  lee_show_duration(storm->hold).text,
+                  lee_show_duration(storm->fall).text);
+}
+
+static void print_given(const lee_printer *to, const lee_wind_source *wind) {
+    if (wind->kind == LEE_WIND_SCAN) {
+        lee_print_row(to, "scan", "%s from %zu directions",
+                      lee_show_speed(to, wind->given[0].speed).text,
+                      wind->directions);
+        return;
+    }
+    for (size_t i = 0; i < wind->given_count; i++) {
+        const lee_given_wind *given = &wind->given[i];
+        const bool lasts = !isnan(given->duration);
+        lee_print_row(to, "given", "%s from %s%s%s",
+                      lee_show_speed(to, given->speed).text,
+                      lee_show_direction(given->from).text,
+                      lasts ? " for " : "",
+                      lasts ? lee_show_duration(given->duration).text : "");
+    }
+}
+
+static void print_wind(const lee_printer *to, const lee_case *from,
+                       const lee_problem_check *check) {
+    const lee_wind_source *wind = &from->problem.wind;
+    const lee_exposure *exposure = &from->problem.exposure;
+    (void)fputs("\nWind\n", to->stream);
+    if (check->has_record && wind->kind == LEE_WIND_RECORD) {
+        print_record(to, from, check);
+    } else if (wind->kind == LEE_WIND_STORM) {
+        print_storm(to, &wind->storm);
+    } else if (wind->kind == LEE_WIND_NONE) {
+        lee_print_row(to, "wind", "none");
+    } else {
+        print_given(to, wind);
+    }
+    lee_print_row(to, "measured", "at %s over %s%s%s",
+                  lee_show_length(to, exposure->height).text,
+                  exposure->is_over_land ? "land" : "water",
+                  isnan(exposure->averaging) ? "" : ", means over ",
+                  isnan(exposure->averaging)
+                      ? ""
+                      : lee_show_duration(exposure->averaging).text);
+}
+
+lee_status lee_print_check(FILE *stream, const lee_case *from,
+                           const lee_problem_check *check,
+                           lee_unit_system units, lee_error *error) {
+    const lee_printer to = {stream, units};
+    lee_print_head(&to, from, check->still_water);
+    print_lake(&to, from, check);
+    print_stations(&to, from, check->still_water);
+    print_wind(&to, from, check);
+    lee_print_notes(&to, "Warnings", &check->warnings);
+    lee_print_method(&to, &check->method);
+    lee_print_caution(&to);
+    return lee_print_end(&to, error);
+}

@@ -1,0 +1,197 @@
+/* estimate.c - the answer of `estimate`: a closed lake of even depth, with
+ * the handbook formulas beside it. As text and as JSON. */
+#include <math.h>
+#include <stdbool.h>
+
+#include "output/json_parts.h"
+#include "output/print.h"
+
+#include "leewater/output.h"
+#include "leewater/setup.h"
+
+static double fetch_of(const lee_case *from) {
+    const lee_profile *profile = &from->problem.lake.profile;
+    return profile->chainage[profile->n - 1] - profile->chainage[0];
+}
+
+static double depth_of(const lee_case *from, double still_water) {
+    return still_water - from->problem.lake.profile.bed[0];
+}
+
+static double formula_level(const lee_formula *formula, const lee_case *from,
+                            const lee_steady_result *result) {
+    return formula->set_up(result->wind[0].speed, fetch_of(from),
+                           depth_of(from, result->still_water),
+                           result->method.gravity);
+}
+
+static const char *result_name(lee_formula_result what) {
+    switch (what) {
+    case LEE_RESULT_TILT:
+        return "tilt";
+    case LEE_RESULT_RISE:
+        return "rise";
+    }
+    return "";
+}
+
+static bool is_outside(const lee_formula *formula, double speed) {
+    return !(speed >= formula->speed_min && speed <= formula->speed_max);
+}
+
+/* Whether a wind of this length brings the steady level about. */
+static const char *duration_verdict(const lee_wind_estimate *wind,
+                                    const lee_water_estimate *water) {
+    if (wind->wind.duration >= water->first_period) {
+        return "long enough for these levels";
+    }
+    if (wind->wind.duration >= water->develop_time) {
+        return "enough to reach these levels, not for the swing to calm";
+    }
+    return "too short: the water stays below these levels";
+}
+
+static void print_question(const lee_printer *to, const lee_case *from,
+                           const lee_steady_result *result) {
+    const lee_exposure *exposure = &from->problem.exposure;
+    const lee_wind_estimate *wind = &result->wind[0];
+    lee_print_wrapped(to, 0, "",
+                      "Wind set-up on a closed lake of even depth and width");
+    (void)fputc('\n', to->stream);
+    lee_print_row(to, "fetch", "%s",
+                  lee_show_distance(to, fetch_of(from)).text);
+    lee_print_row(
+        to, "depth", "%s",
+        lee_show_length(to, depth_of(from, result->still_water)).text);
+    lee_print_row(to, "wind", "%s, measured at %s over %s",
+                  lee_show_speed(to, wind->wind.speed).text,
+                  lee_show_length(to, exposure->height).text,
+                  exposure->is_over_land ? "land" : "water");
+    lee_print_row(to, "10 m over water", "%s",
+                  lee_show_speed(to, wind->speed).text);
+}
+
+static void print_answer(const lee_printer *to, const lee_wind_estimate *wind) {
+    const lee_water_estimate *water = &wind->water[0];
+    (void)fputc('\n', to->stream);
+    lee_print_row(to, "set-up", "%s at the lee shore",
+                  lee_show_ranged(to, &wind->set_up).text);
+    lee_print_row(to, "set-down", "%s at the windward shore",
+                  lee_show_ranged(to, &wind->set_down).text);
+    lee_print_row(to, "tilt", "%s from shore to shore",
+                  lee_show_ranged(to, &wind->tilt).text);
+    if (wind->dry_length > 0.0) {
+        lee_print_row(to, "fallen dry", "%s from the windward shore",
+                      lee_show_distance(to, wind->dry_length).text);
+    }
+    (void)fputc('\n', to->stream);
+    lee_print_row(to, "wind stress", "%.3f Pa", wind->stress);
+    lee_print_row(to, "drag coefficient", "%.2f / 1000",
+                  1e3 * wind->coefficient);
+    lee_print_row(to, "return flow", "%.3f", wind->return_flow);
+    lee_print_row(to, "first period", "%s, develops in %s",
+                  lee_show_duration(water->first_period).text,
+                  lee_show_duration(water->develop_time).text);
+    if (!isnan(wind->wind.duration)) {
+        lee_print_row(to, "duration", "%s: %s",
+                      lee_show_duration(wind->wind.duration).text,
+                      duration_verdict(wind, water));
+    }
+}
+
+static void print_formulas(const lee_printer *to, const lee_case *from,
+                           const lee_steady_result *result) {
+    static const char layout[] = "  %-24s  %8s%1s  %-10s  %s\n";
+    bool has_outside = false;
+    bool has_memory = false;
+    const lee_formula *formula;
+    (void)fputc('\n', to->stream);
+    (void)fprintf(to->stream, layout, "Handbook formulas", lee_length_unit(to),
+                  "", "is called", "equals");
+    for (size_t i = 0; (formula = lee_formula_at(i)) != NULL; i++) {
+        const bool outside = is_outside(formula, result->wind[0].speed);
+        const double level = formula_level(formula, from, result);
+        (void)fprintf(to->stream, layout, formula->name,
+                      lee_show_bare_length(to, level).text, outside ? "*" : "",
+                      result_name(formula->says),
+                      result_name(formula->matches));
+        has_outside = has_outside || outside;
+        has_memory = has_memory || formula->is_from_memory;
+    }
+    lee_print_wrapped(to, 2, "",
+                      "rise: above still water at the lee shore; tilt: lee "
+                      "minus windward shore");
+    if (has_outside) {
+        lee_print_wrapped(to, 4, "* ",
+                          "outside the wind speeds it was made for");
+    }
+    if (has_memory) {
+        lee_print_wrapped(to, 2, "",
+                          "sources, and which of them were not re-read: "
+                          "--json and docs/references.md");
+    }
+}
+
+lee_status lee_print_estimate(FILE *stream, const lee_case *from,
+                              const lee_steady_result *result,
+                              lee_unit_system units, lee_error *error) {
+    const lee_printer to = {stream, units};
+    print_question(&to, from, result);
+    print_answer(&to, &result->wind[0]);
+    lee_print_notes(&to, "Warnings", &result->wind[0].warnings);
+    lee_print_notes(&to, "Warnings on the lake", &result->warnings);
+    print_formulas(&to, from, result);
+    lee_print_method(&to, &result->method);
+    lee_print_caution(&to);
+    return lee_print_end(&to, error);
+}
+
+static void put_formulas(lee_json *json, const lee_case *from,
+                         const lee_steady_result *result) {
+    const lee_formula *formula;
+    lee_json_open_list(json, "formulas");
+    for (size_t i = 0; (formula = lee_formula_at(i)) != NULL; i++) {
+        lee_json_open_object(json, NULL);
+        lee_json_put_text(json, "name", formula->name);
+        lee_json_put_text(json, "source", formula->source);
+        lee_json_put_flag(json, "is_from_memory", formula->is_from_memory);
+        lee_json_put_number(json, "result_m",
+                            formula_level(formula, from, result));
+        lee_json_put_text(json, "is_called", result_name(formula->says));
+        lee_json_put_text(json, "equals", result_name(formula->matches));
+        lee_json_put_flag(json, "is_extrapolated",
+                          is_outside(formula, result->wind[0].speed));
+        lee_json_close(json);
+    }
+    lee_json_close(json);
+}
+
+static void put_question(lee_json *json, const lee_case *from,
+                         const lee_steady_result *result) {
+    const lee_exposure *exposure = &from->problem.exposure;
+    lee_json_put_text(json, "case", NULL);
+    lee_json_put_number(json, "fetch_m", fetch_of(from));
+    lee_json_put_number(json, "depth_m", depth_of(from, result->still_water));
+    lee_json_put_number(json, "measured_at_m", exposure->height);
+    lee_json_put_text(json, "measured_over",
+                      exposure->is_over_land ? "land" : "water");
+}
+
+lee_status lee_json_estimate(FILE *stream, const lee_case *from,
+                             const lee_steady_result *result,
+                             lee_error *error) {
+    const lee_wind_estimate *wind = &result->wind[0];
+    lee_json json = {0};
+    lee_json_begin(&json, "estimate");
+    put_question(&json, from, result);
+    lee_json_put_winds(&json, from, result);
+    if (!isnan(wind->wind.duration)) {
+        lee_json_put_text(&json, "duration",
+                          duration_verdict(wind, &wind->water[0]));
+    }
+    put_formulas(&json, from, result);
+    lee_json_put_notes(&json, "warnings", &result->warnings);
+    lee_json_put_method(&json, &result->method);
+    lee_json_put_caution(&json);
+    return lee_json_write(&json, stream, error);
+}

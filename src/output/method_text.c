@@ -1,0 +1,59 @@
+/* method_text.c - head, method and caution, the same in every text. */
+#include "output/print.h"
+
+#include <math.h>
+
+#include "base/text.h"
+
+void lee_print_head(const lee_printer *to, const lee_case *from,
+                    double still_water) {
+    const lee_lake *lake = &from->problem.lake;
+    if (from->title != NULL) {
+        lee_print_wrapped(to, 0, "", from->title);
+    }
+    lee_text line = {0};
+    lee_text_add(&line, "%s, still water %s above %s",
+                 lake->name != NULL ? lake->name : "Lake",
+                 lee_show_length(to, still_water).text, lee_datum_of(from));
+    lee_print_wrapped(to, 0, "", line.bytes != NULL ? line.bytes : "");
+    lee_text_free(&line);
+}
+
+static void print_corrections(const lee_printer *to, const lee_method *method) {
+    for (size_t i = 0; i < method->correction_count; i++) {
+        const lee_correction *link = &method->correction[i];
+        lee_print_row(to, i == 0 ? "corrections" : "", "%s x %.3f: %s",
+                      link->name, link->factor, link->method);
+    }
+    if (method->correction_count == 0) {
+        lee_print_row(to, "corrections", "none");
+    } else if (!isnan(method->correction_speed)) {
+        lee_print_row(to, "", "(factors at a measured %s)",
+                      lee_show_speed(to, method->correction_speed).text);
+    }
+}
+
+void lee_print_method(const lee_printer *to, const lee_method *method) {
+    (void)fputs("\nMethod\n", to->stream);
+    lee_print_row(to, "drag", "%s", method->drag);
+    print_corrections(to, method);
+    lee_print_row(to, "air", "%.3f kg/m3, %s", method->air_density_value,
+                  method->air_density);
+    lee_print_row(to, "water", "%.1f kg/m3, gravity %.5g m/s2",
+                  method->water_density_value, method->gravity);
+    lee_print_row(to, "bed", "%s", method->bed);
+    lee_print_row(to, "return flow", "%.3f, %s", method->return_flow,
+                  method->return_flow_how);
+    lee_print_notes(to, "The range holds", &method->range_members);
+    lee_print_notes(to, "Record", &method->record);
+}
+
+void lee_print_caution(const lee_printer *to) {
+    (void)fputs("\nLimits\n", to->stream);
+    const char *limit;
+    for (size_t i = 0; (limit = lee_limit_at(i)) != NULL; i++) {
+        lee_print_wrapped(to, 4, "- ", limit);
+    }
+    (void)fputc('\n', to->stream);
+    lee_print_wrapped(to, 0, "", lee_caution());
+}

@@ -1,0 +1,90 @@
+/* print.h - text for reading: quantities with their units, rows, notes. */
+#ifndef LEEWATER_OUTPUT_PRINT_H
+#define LEEWATER_OUTPUT_PRINT_H
+
+#include <stddef.h>
+#include <stdint.h>
+#include <stdio.h>
+
+#include "leewater/output.h"
+#include "leewater/series.h"
+#include "leewater/status.h"
+
+typedef struct lee_printer {
+    FILE *stream;
+    lee_unit_system units;
+} lee_printer;
+
+/* One quantity as text, returned by value: no buffers at the caller's. */
+typedef struct lee_cell {
+    char text[64];
+} lee_cell;
+
+/* Levels and depths to the millimetre or a hundredth of a foot, "dry" for
+ * NaN: "0.412 m", "1.35 ft". */
+lee_cell lee_show_length(const lee_printer *to, double metres);
+
+/* "0.412 m (0.310 to 0.550)"; without range only the value. */
+lee_cell lee_show_ranged(const lee_printer *to, const lee_ranged *ranged);
+
+/* Its range alone, "(0.310 to 0.550)"; empty when there is none. */
+lee_cell lee_show_range_only(const lee_printer *to, const lee_ranged *ranged);
+
+/* The bare number of lee_show_length, and its unit, "m" or "ft". */
+lee_cell lee_show_bare_length(const lee_printer *to, double metres);
+const char *lee_length_unit(const lee_printer *to);
+
+/* Chainage, fetch, width: "11.80 km", "7.33 mi"; the bare number; the unit. */
+lee_cell lee_show_distance(const lee_printer *to, double metres);
+lee_cell lee_show_bare_distance(const lee_printer *to, double metres);
+const char *lee_distance_unit(const lee_printer *to);
+
+/* "22.0 m/s", "49.2 mph"; the bare number; the unit. */
+lee_cell lee_show_speed(const lee_printer *to, double speed);
+lee_cell lee_show_bare_speed(const lee_printer *to, double speed);
+const char *lee_speed_unit(const lee_printer *to);
+
+/* Radians as whole degrees of [0, 360); "240 degrees". */
+double lee_whole_degrees(double radians);
+lee_cell lee_show_direction(double radians);
+
+/* "35 s", "45 min", "2 h 10 min", "3 d 4 h". */
+lee_cell lee_show_duration(double seconds);
+
+/* "2031-01-10 06:30 UTC". */
+lee_cell lee_show_time(int64_t time);
+
+/* "Marrow gauge zero", or "the datum" when a lake has none. */
+const char *lee_datum_of(const lee_case *from);
+
+/* A row of a block: "  label               words". */
+void lee_print_row(const lee_printer *to, const char *label, const char *format,
+                   ...) LEE_PRINTF(3, 4);
+
+/* `text` and blanks up to `width` characters (not bytes). */
+void lee_print_padded(const lee_printer *to, const char *text, size_t width);
+
+/* Characters in UTF-8 text: bytes that do not continue another. */
+size_t lee_text_width(const char *text);
+
+/* Text broken at blanks to lines of 80 characters, each indented; the first
+ * begins with `mark` inside the indentation. */
+void lee_print_wrapped(const lee_printer *to, size_t indent, const char *mark,
+                       const char *text);
+
+/* A heading and its notes, or nothing when there are none. */
+void lee_print_notes(const lee_printer *to, const char *heading,
+                     const lee_notes *notes);
+
+/* Title, lake, still water. `still_water` in m above the datum. */
+void lee_print_head(const lee_printer *to, const lee_case *from,
+                    double still_water);
+
+/* What stands behind the numbers; then stated limits and caution. */
+void lee_print_method(const lee_printer *to, const lee_method *method);
+void lee_print_caution(const lee_printer *to);
+
+/* LEE_OK, or LEE_ERR_FILE when anything could not be written. */
+lee_status lee_print_end(const lee_printer *to, lee_error *error);
+
+#endif

@@ -1,0 +1,208 @@
+/* steady_text.c - equilibrium levels as text: a block for a few winds, a
+ * table for many. */
+#include "output/print.h"
+
+#include <math.h>
+#include <stdbool.h>
+#include <string.h>
+
+#include "base/text.h"
+
+enum { BLOCKS_UP_TO = 3 }; /* winds that get a block of their own */
+
+/* What stands at a place: "lee shore, 11.80 km". */
+static lee_cell where(const lee_printer *to, const lee_wind_estimate *wind,
+                      const char *shore, double chainage) {
+    lee_cell cell;
+    (void)snprintf(cell.text, sizeof cell.text, "%s%.24s",
+                   wind->is_across ? "at " : shore,
+                   lee_show_distance(to, chainage).text);
+    return cell;
+}
+
+static void print_wind(const lee_printer *to, const lee_wind_estimate *wind) {
+    (void)fprintf(to->stream, "\nWind %s from %s\n",
+                  lee_show_speed(to, wind->wind.speed).text,
+                  lee_show_direction(wind->wind.from).text);
+    lee_print_row(to, "10 m over water", "%s",
+                  lee_show_speed(to, wind->speed).text);
+    lee_print_row(to, "drag coefficient", "%.2f / 1000",
+                  1e3 * wind->coefficient);
+    lee_print_row(to, "wind stress", "%.3f Pa, %.0f %% of it along the axis",
+                  wind->stress, 100.0 * fabs(wind->along));
+    lee_print_row(to, "return flow", "%.3f", wind->return_flow);
+    if (wind->is_across) {
+        lee_print_row(to, "", "across the axis: no end is the lee");
+    }
+}
+
+static void print_nodes(const lee_printer *to,
+                        const lee_water_estimate *water) {
+    lee_text line = {0};
+    for (size_t i = 0; i < water->node_count; i++) {
+        lee_text_add(&line, "%s%s", i > 0 ? ", " : "at ",
+                     lee_show_distance(to, water->node[i]).text);
+    }
+    if (line.bytes != NULL) {
+        lee_print_row(to, water->node_count > 1 ? "nodes" : "node", "%s",
+                      line.bytes);
+    }
+    lee_text_free(&line);
+}
+
+static void print_ends(const lee_printer *to, const lee_wind_estimate *wind,
+                       const lee_water_estimate *water) {
+    lee_print_row(to, "set-up", "%s, %s",
+                  lee_show_ranged(to, &water->set_up).text,
+                  where(to, wind, "lee shore, ", water->set_up_at).text);
+    lee_print_row(to, "set-down", "%s, %s",
+                  lee_show_ranged(to, &water->set_down).text,
+                  where(to, wind, "windward shore, ", water->set_down_at).text);
+    lee_print_row(to, "tilt", "%s", lee_show_ranged(to, &water->tilt).text);
+    print_nodes(to, water);
+    lee_print_row(to, "first period", "%s, develops in %s",
+                  lee_show_duration(water->first_period).text,
+                  lee_show_duration(water->develop_time).text);
+}
+
+static void print_waters(const lee_printer *to, const lee_wind_estimate *wind) {
+    for (size_t i = 0; i < wind->water_count; i++) {
+        const lee_water_estimate *water = &wind->water[i];
+        if (wind->water_count > 1) {
+            (void)fprintf(to->stream, "  Water %zu of %zu, %s to %s\n", i + 1,
+                          wind->water_count,
+                          lee_show_distance(to, water->from).text,
+                          lee_show_distance(to, water->to).text);
+        }
+        print_ends(to, wind, water);
+    }
+    lee_print_row(to, "cross-axis tilt", "%s at %s",
+                  lee_show_length(to, wind->cross_tilt).text,
+                  lee_show_distance(to, wind->cross_tilt_at).text);
+    if (wind->dry_length > 0.0) {
+        lee_print_row(to, "fallen dry", "%s of the axis",
+                      lee_show_distance(to, wind->dry_length).text);
+    }
+    lee_print_row(to, "volume defect", "%.1e", wind->volume_defect);
+}
+
+static size_t name_width(const lee_problem *problem) {
+    size_t width = strlen("station");
+    for (size_t i = 0; i < problem->station_count; i++) {
+        const size_t own = lee_text_width(problem->station[i].name);
+        width = own > width ? own : width;
+    }
+    return width;
+}
+
+static void print_stations(const lee_printer *to, const lee_case *from,
+                           const lee_wind_estimate *wind) {
+    const lee_problem *problem = &from->problem;
+    const size_t width = name_width(problem);
+    if (problem->station_count == 0) {
+        return;
+    }
+    (void)fprintf(to->stream, "\n  Levels, %s above %s\n", lee_length_unit(to),
+                  lee_datum_of(from));
+    for (size_t i = 0; i < problem->station_count; i++) {
+        const lee_station_level *at = &wind->station[i];
+        const bool has_bed = !isnan(problem->station[i].bed);
+        const double depth = has_bed ? at->depth : at->section_depth;
+        (void)fputs("  ", to->stream);
+        lee_print_padded(to, problem->station[i].name, width);
+        (void)fprintf(to->stream, "  %9s  %8s  %-20s  %s %s\n",
+                      lee_show_distance(to, problem->station[i].at).text,
+                      lee_show_bare_length(to, at->level.value).text,
+                      lee_show_range_only(to, &at->level).text,
+                      has_bed ? "depth" : "section depth",
+                      lee_show_length(to, depth).text);
+    }
+}
+
+static void print_block(const lee_printer *to, const lee_case *from,
+                        const lee_wind_estimate *wind) {
+    print_wind(to, wind);
+    print_waters(to, wind);
+    print_stations(to, from, wind);
+    for (size_t i = 0; i < wind->warnings.n; i++) {
+        if (i == 0) {
+            (void)fputc('\n', to->stream);
+        }
+        lee_print_wrapped(to, 4, "! ", wind->warnings.text[i]);
+    }
+}
+
+static void print_line(const lee_printer *to, const lee_wind_estimate *wind) {
+    (void)fprintf(
+        to->stream, "  %6s  %4.0f  %5.0f  %6s  %7s %-18s  %7s %-20s  %6s\n",
+        lee_show_bare_speed(to, wind->wind.speed).text,
+        lee_whole_degrees(wind->wind.from), 100.0 * wind->along + 0.0,
+        wind->is_across ? "across"
+                        : lee_show_bare_distance(to, wind->set_up_at).text,
+        lee_show_bare_length(to, wind->set_up.value).text,
+        lee_show_range_only(to, &wind->set_up).text,
+        lee_show_bare_length(to, wind->set_down.value).text,
+        lee_show_range_only(to, &wind->set_down).text,
+        lee_show_bare_length(to, wind->tilt.value).text);
+}
+
+static size_t highest(const lee_steady_result *result) {
+    size_t best = 0;
+    for (size_t i = 1; i < result->count; i++) {
+        if (result->wind[i].set_up.value > result->wind[best].set_up.value) {
+            best = i;
+        }
+    }
+    return best;
+}
+
+static void print_table(const lee_printer *to,
+                        const lee_steady_result *result) {
+    const char *unit = lee_length_unit(to);
+    static const char layout[] = "  %6s  %4s  %5s  %6s  %7s %-18s  %7s %-20s  "
+                                 "%6s\n";
+    (void)fputc('\n', to->stream);
+    (void)fprintf(to->stream, layout, "wind", "from", "along", "lee at",
+                  "set-up", "(range)", "set-down", "(range)", "tilt");
+    (void)fprintf(to->stream, layout, lee_speed_unit(to), "deg", "%",
+                  lee_distance_unit(to), unit, "", unit, "", unit);
+    for (size_t i = 0; i < result->count; i++) {
+        print_line(to, &result->wind[i]);
+    }
+}
+
+/* Each warning once, with the number of winds it holds for. */
+static void print_warnings(const lee_printer *to,
+                           const lee_steady_result *result, lee_notes *told,
+                           lee_error *error) {
+    for (size_t i = 0; i < result->count; i++) {
+        const lee_notes *notes = &result->wind[i].warnings;
+        for (size_t k = 0; k < notes->n; k++) {
+            (void)lee_notes_add(told, error, "%s", notes->text[k]);
+        }
+    }
+    lee_print_notes(to, "Warnings, for one wind or more", told);
+}
+
+lee_status lee_print_steady(FILE *stream, const lee_case *from,
+                            const lee_steady_result *result,
+                            lee_unit_system units, lee_error *error) {
+    const lee_printer to = {stream, units};
+    lee_print_head(&to, from, result->still_water);
+    if (result->count > BLOCKS_UP_TO) {
+        lee_notes told = {0};
+        print_table(&to, result);
+        (void)fputs("\nHighest set-up", stream);
+        print_block(&to, from, &result->wind[highest(result)]);
+        print_warnings(&to, result, &told, error);
+        lee_notes_free(&told);
+    } else {
+        for (size_t i = 0; i < result->count; i++) {
+            print_block(&to, from, &result->wind[i]);
+        }
+    }
+    lee_print_notes(&to, "Warnings", &result->warnings);
+    lee_print_method(&to, &result->method);
+    lee_print_caution(&to);
+    return lee_print_end(&to, error);
+}

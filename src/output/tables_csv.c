@@ -1,0 +1,251 @@
+/* tables_csv.c - results as CSV with a commented head, whole or not at all. */
+#include <math.h>
+#include <stdbool.h>
+#include <stddef.h>
+#include <string.h>
+
+#include "base/constants.h"
+#include "formats/atomic_file.h"
+
+#include "leewater/calendar.h"
+#include "leewater/output.h"
+
+/* A head line: text from a case may not break out of its line. */
+static void comment(FILE *out, const char *label, const char *text) {
+    (void)fprintf(out, "# %s: ", label);
+    for (; *text != '\0'; text++) {
+        (void)fputc((unsigned char)*text < 0x20 ? ' ' : *text, out);
+    }
+    (void)fputc('\n', out);
+}
+
+static void write_head(FILE *out, const lee_case *from,
+                       const lee_method *method, double still_water) {
+    const lee_lake *lake = &from->problem.lake;
+    (void)fprintf(out, "# leewater %s\n", lee_version());
+    comment(out, "case", from->path != NULL ? from->path : "none");
+    if (from->title != NULL) {
+        comment(out, "title", from->title);
+    }
+    if (lake->name != NULL) {
+        comment(out, "lake", lake->name);
+    }
+    comment(out, "levels above",
+            lake->datum != NULL ? lake->datum : "datum not named");
+    (void)fprintf(out, "# still water: %.3f m\n", still_water);
+    comment(out, "drag", method->drag);
+    for (size_t i = 0; i < method->correction_count; i++) {
+        const lee_correction *link = &method->correction[i];
+        (void)fprintf(out, "# correction: %s x %.4f, %s\n", link->name,
+                      link->factor, link->method);
+    }
+    (void)fprintf(out,
+                  "# air density: %.4f kg m-3; water density: %.2f kg m-3;"
+                  " gravity: %.5f m s-2\n",
+                  method->air_density_value, method->water_density_value,
+                  method->gravity);
+    comment(out, "bed", method->bed);
+    (void)fprintf(out, "# return flow: %.4f, %s\n", method->return_flow,
+                  method->return_flow_how);
+    for (size_t i = 0; i < method->range_members.n; i++) {
+        comment(out, "range", method->range_members.text[i]);
+    }
+    for (size_t i = 0; i < method->record.n; i++) {
+        comment(out, "record", method->record.text[i]);
+    }
+}
+
+static void write_foot_of_head(FILE *out, const lee_notes *warnings) {
+    for (size_t i = 0; i < warnings->n; i++) {
+        comment(out, "warning", warnings->text[i]);
+    }
+    comment(out, "caution", lee_caution());
+}
+
+/* A header "name_suffix [unit]", quoted where RFC 4180 asks for it. */
+static void write_header(FILE *out, const char *name, const char *suffix,
+                         const char *unit) {
+    const bool quoted =
+        strpbrk(name, ",\"\r\n;\t") != NULL || name[0] == '#' || name[0] == ' ';
+    (void)fputs(quoted ? ",\"" : ",", out);
+    for (const char *c = name; *c != '\0'; c++) {
+        (void)fputs(*c == '"' ? "\"" : "", out);
+        (void)fputc(*c, out);
+    }
+    (void)fprintf(out, "%s [%s]%s", suffix, unit, quoted ? "\"" : "");
+}
+
+/* A value to `decimals`; an empty field for NaN. */
+static void write_value(FILE *out, double value, int decimals) {
+    if (!isnan(value)) {
+        (void)fprintf(out, "%.*f", decimals, value);
+    }
+}
+
+static void write_next(FILE *out, double value, int decimals) {
+    (void)fputc(',', out);
+    write_value(out, value, decimals);
+}
+
+static double in_degrees(double radians) {
+    const double degrees = fmod(radians * 180.0 / lee_pi, 360.0);
+    return degrees < 0.0 ? degrees + 360.0 : degrees;
+}
+
+static lee_status check_path(const char *path, lee_error *error) {
+    const size_t length = strlen(path);
+    if (strcmp(path, "-") == 0 ||
+        (length > 4 && strcmp(path + length - 4, ".csv") == 0)) {
+        return LEE_OK;
+    }
+    return lee_fail(error, LEE_ERR_ARGUMENT,
+                    "%s: results are written as .csv; name the file so", path);
+}
+
+/* ---- steady ---- */
+
+#define AT(member) offsetof(lee_wind_estimate, member)
+
+/* One number of a wind's estimate: where it stands in the struct. */
+static const struct {
+    const char *header;
+    size_t offset;
+    int decimals;
+    bool is_angle; /* radians, to be degrees */
+} columns[] = {
+    {"wind [m s-1]",                 AT(wind.speed),     3, false},
+    {"wind from [degree]",           AT(wind.from),      2, true },
+    {"wind 10 m over water [m s-1]", AT(speed),          3, false},
+    {"drag coefficient [1]",         AT(coefficient),    6, false},
+    {"stress [Pa]",                  AT(stress),         5, false},
+    {"along share [1]",              AT(along),          4, false},
+    {"set-up [m]",                   AT(set_up.value),   4, false},
+    {"set-up_low [m]",               AT(set_up.low),     4, false},
+    {"set-up_high [m]",              AT(set_up.high),    4, false},
+    {"set-up at [m]",                AT(set_up_at),      1, false},
+    {"set-down [m]",                 AT(set_down.value), 4, false},
+    {"set-down_low [m]",             AT(set_down.low),   4, false},
+    {"set-down_high [m]",            AT(set_down.high),  4, false},
+    {"set-down at [m]",              AT(set_down_at),    1, false},
+    {"tilt [m]",                     AT(tilt.value),     4, false},
+    {"tilt_low [m]",                 AT(tilt.low),       4, false},
+    {"tilt_high [m]",                AT(tilt.high),      4, false},
+    {"cross-axis tilt [m]",          AT(cross_tilt),     4, false},
+    {"fallen dry [m]",               AT(dry_length),     1, false},
+};
+enum { COLUMNS = sizeof columns / sizeof columns[0] };
+
+static void write_steady_header(FILE *out, const lee_case *from) {
+    for (size_t k = 0; k < COLUMNS; k++) {
+        (void)fprintf(out, "%s%s", k > 0 ? "," : "", columns[k].header);
+    }
+    for (size_t i = 0; i < from->problem.station_count; i++) {
+        const char *name = from->problem.station[i].name;
+        write_header(out, name, "", "m");
+        write_header(out, name, "_low", "m");
+        write_header(out, name, "_high", "m");
+    }
+    (void)fputc('\n', out);
+}
+
+static void write_steady_row(FILE *out, const lee_wind_estimate *wind,
+                             size_t stations) {
+    for (size_t k = 0; k < COLUMNS; k++) {
+        double value;
+        memcpy(&value, (const char *)wind + columns[k].offset, sizeof value);
+        (void)fputs(k > 0 ? "," : "", out);
+        write_value(out, columns[k].is_angle ? in_degrees(value) : value,
+                    columns[k].decimals);
+    }
+    for (size_t i = 0; i < stations; i++) {
+        const lee_ranged *level = &wind->station[i].level;
+        write_next(out, level->value, 4);
+        write_next(out, level->low, 4);
+        write_next(out, level->high, 4);
+    }
+    (void)fputc('\n', out);
+}
+
+lee_status lee_write_steady(const char *path, bool force, const lee_case *from,
+                            const lee_steady_result *result, lee_error *error) {
+    lee_status status = check_path(path, error);
+    if (status != LEE_OK) {
+        return status;
+    }
+    lee_atomic_file file = {0};
+    status = lee_atomic_open(path, force, &file, error);
+    if (status != LEE_OK) {
+        return status;
+    }
+    write_head(file.stream, from, &result->method, result->still_water);
+    write_foot_of_head(file.stream, &result->warnings);
+    write_steady_header(file.stream, from);
+    for (size_t i = 0; i < result->count; i++) {
+        write_steady_row(file.stream, &result->wind[i],
+                         from->problem.station_count);
+    }
+    status = lee_atomic_commit(&file, error);
+    lee_atomic_discard(&file);
+    return status;
+}
+
+/* ---- run ---- */
+
+static void write_run_header(FILE *out, const lee_case *from,
+                             const lee_run_result *result, bool with_wind) {
+    (void)fputs("time", out);
+    if (with_wind) {
+        (void)fputs(",wind 10 m over water [m s-1],wind from [degree]", out);
+    }
+    for (size_t i = 0; i < result->station_count; i++) {
+        const char *name = from->problem.station[i].name;
+        write_header(out, name, "", "m");
+        if (result->station[i].low != NULL) {
+            write_header(out, name, "_low", "m");
+            write_header(out, name, "_high", "m");
+        }
+    }
+    (void)fputc('\n', out);
+}
+
+static void write_run_row(FILE *out, const lee_run_result *result, size_t row,
+                          bool with_wind) {
+    char text[LEE_TIME_TEXT];
+    (void)fputs(lee_time_format(result->time[row], text), out);
+    if (with_wind) {
+        write_next(out, result->speed[row], 3);
+        write_next(out, in_degrees(result->from[row]), 1);
+    }
+    for (size_t i = 0; i < result->station_count; i++) {
+        const lee_station_series *series = &result->station[i];
+        write_next(out, series->level[row], 4);
+        if (series->low != NULL) {
+            write_next(out, series->low[row], 4);
+            write_next(out, series->high[row], 4);
+        }
+    }
+    (void)fputc('\n', out);
+}
+
+lee_status lee_write_run(const char *path, bool force, bool with_wind,
+                         const lee_case *from, const lee_run_result *result,
+                         lee_error *error) {
+    lee_status status = check_path(path, error);
+    if (status != LEE_OK) {
+        return status;
+    }
+    lee_atomic_file file = {0};
+    status = lee_atomic_open(path, force, &file, error);
+    if (status != LEE_OK) {
+        return status;
+    }
+    write_head(file.stream, from, &result->method, result->still_water);
+    write_foot_of_head(file.stream, &result->warnings);
+    write_run_header(file.stream, from, result, with_wind);
+    for (size_t i = 0; i < result->n; i++) {
+        write_run_row(file.stream, result, i, with_wind);
+    }
+    status = lee_atomic_commit(&file, error);
+    lee_atomic_discard(&file);
+    return status;
+}
