@@ -29,13 +29,16 @@ typedef struct lee_exposure {
     lee_height_method height_method;
     double height_factor; /* with LEE_HEIGHT_FACTOR                        */
     double land_to_water; /* factor on the 10 m wind; 1 over water; over
-                              land it has to be given                       */
+                              land it has to be given, NaN says it is not   */
 } lee_exposure;
 
 /* 10 m over water, averaging not stated, nothing to correct. */
 lee_exposure lee_exposure_default(void);
 
-/* Ranges and combinations. Errors: LEE_ERR_ARGUMENT. */
+/* Ranges and combinations: height 0.5 to 200 m, factors 0.2 to 5, averaging
+ * of a maximum 1 to 36000 s, the land's roughness below the anemometer and
+ * below 10 m where the logarithmic profile asks for it.
+ * Errors: LEE_ERR_ARGUMENT. */
 lee_status lee_exposure_check(const lee_exposure *exposure, lee_error *error);
 
 enum { LEE_CORRECTIONS = 8 }; /* links a chain can have */
@@ -51,8 +54,11 @@ typedef struct lee_correction {
 /* 10 m wind speed over open water from a measured speed, m s-1.
  *
  * Over water the profile's roughness is the drag relation's own,
- * z0 = 10 exp(-kappa/sqrt(C10(U10))), solved for U10 by iteration.
- * NaN in, NaN out. lee_exposure_check must have passed. */
+ * z0 = 10 exp(-kappa/sqrt(C10(U10))), solved for U10 by iteration to 1e-10.
+ * Inside a jump of the relation, where no U10 solves it, U10 is the speed of
+ * the jump. NaN in, NaN out; NaN too where the roughness reaches the
+ * anemometer, which takes a C10 above 0.017 even at 0.5 m.
+ * lee_exposure_check must have passed. */
 double lee_exposure_speed(const lee_exposure *exposure, const lee_drag *drag,
                           const lee_drag_input *fluids, double measured);
 
@@ -68,7 +74,8 @@ size_t lee_exposure_chain(const lee_exposure *exposure, const lee_drag *drag,
  * belongs to the first branch. */
 double lee_averaging_ratio(double seconds);
 
-/* U10/Uz by the neutral logarithmic profile: ln(10/z0)/ln(z/z0). */
+/* U10/Uz by the neutral logarithmic profile: ln(10/z0)/ln(z/z0). NaN unless
+ * the roughness z0 is above 0 and below both heights. */
 double lee_log_profile_ratio(double height, double roughness);
 
 /* U10/Uz = (10/z)^(1/7). */

@@ -14,6 +14,9 @@ static const double lee_dry_air_gas_constant = 287.05;
 /* 0 degrees Celsius, K (definition). */
 static const double lee_celsius_zero = 273.15;
 
+/* Height that every wind is brought to, m (common practice). */
+static const double lee_reference_height = 10.0;
+
 /* pi (mathematics). */
 static const double lee_pi = 3.14159265358979323846;
 
