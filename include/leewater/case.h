@@ -12,6 +12,7 @@ typedef struct lee_case {
     char *institution;
     char *creator;
     char *license;
+    lee_notes notes; /* remarks on what was read, for every output */
     lee_problem problem;
 } lee_case;
 
