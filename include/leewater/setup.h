@@ -169,9 +169,12 @@ typedef struct lee_transient_options {
     double theta;       /* 0.52 by default */
     double dry_depth;   /* m, 0.01 by default */
     bool has_advection; /* on by default */
-    bool is_linear;     /* levels move, depths stay; no advection, linear
-                            friction only: for checks and screening */
-    bool start_held;    /* the first node's level is given by the forcing */
+    bool is_linear;     /* levels move, depths stay those of the start; no
+                            advection, no film rule, linear friction only:
+                            for checks and screening */
+    bool start_held;    /* the level at the first face of the axis is given
+                            by the forcing; the first node lies on the line
+                            from there to its neighbour */
     bool end_held;
 } lee_transient_options;
 
@@ -181,12 +184,17 @@ lee_transient_options lee_transient_defaults(void);
  * them. */
 typedef struct lee_forcing {
     double *stress;            /* [links] Pa along growing chainage */
-    double *pressure_gradient; /* [links] Pa m-1; zero unless filled */
-    double start_level;        /* m, for held ends */
+    double *pressure_gradient; /* [links] Pa m-1; both zero unless filled */
+    double start_level;        /* m, for held ends; NaN unless filled */
     double end_level;
 } lee_forcing;
 
-/* Fills `forcing` for time t (s since the engine's start). */
+/* Fills `forcing` for time t (s, on the clock that lee_transient_start set).
+ * Asked in the middle of each step: stress and pressure are then the mean of
+ * whatever is linear or held over the step, and a mean that changes between
+ * steps is never asked for at the moment of its change. With a held end asked
+ * at the end of the step first, for its level only. A step that is halved
+ * asks for each half. */
 typedef void lee_forcing_at(void *user, double t, lee_forcing *forcing);
 
 typedef struct lee_transient lee_transient;
@@ -204,8 +212,10 @@ void lee_transient_free(lee_transient *engine);
 void lee_transient_start(lee_transient *engine, double t, const double level[]);
 
 /* Advances by dt. Halves the step by itself where the current asks for it.
- * Errors: LEE_ERR_CONVERGENCE when even the fifth halving is too long or a
- * level is not finite. */
+ * Errors: LEE_ERR_ARGUMENT when dt is not positive and finite or the forcing
+ * is not finite; LEE_ERR_CONVERGENCE when even the fifth halving is too long
+ * or a level is not finite. The engine then stands at the last time it
+ * reached, in a sound state: lee_transient_time. */
 lee_status lee_transient_step(lee_transient *engine, double dt,
                               lee_forcing_at *forcing_at, void *user,
                               lee_error *error);
@@ -219,16 +229,19 @@ double lee_transient_volume(const lee_transient *engine); /* m3 */
 double lee_transient_inflow(
     const lee_transient *engine); /* m3 through held ends since start */
 
-/* Level of the water at chainage x, linear between nodes that are wet, and
- * continued to a wall; NaN where dry. */
+/* Level of the water at chainage x: linear between nodes that are wet (deeper
+ * than the dry depth); towards a wall or a held end the line of the last two
+ * wet nodes goes on, second order like the rest; in the last wet cell before
+ * a shore the level of its node holds to the cell's end, for the line of a
+ * film may lie below the bed. NaN in a dry cell and off the axis. */
 double lee_transient_level_at(const lee_transient *engine, double x);
 
-/* How the steps went. */
+/* How the steps went since the start. */
 typedef struct lee_transient_counts {
-    size_t steps;
-    size_t second_passes;
-    size_t halvings;
-    size_t limited;
+    size_t steps;         /* taken, halves counted each              */
+    size_t second_passes; /* tries repeated with depths of mid-step  */
+    size_t halvings;      /* tries given up for two of half length   */
+    size_t limited;       /* steps in which a transport was cut      */
 } lee_transient_counts;
 lee_transient_counts lee_transient_count(const lee_transient *engine);
 
