@@ -80,9 +80,9 @@ typedef struct lee_formula {
     const char *source;
     lee_formula_result says;    /* what its source says it returns        */
     lee_formula_result matches; /* what it equals with C10 of 1.5-2.5e-3  */
-    double speed_min;
-    double speed_max; /* m s-1                                  */
-    bool is_from_memory;
+    double speed_min;           /* m s-1; 0 and INFINITY where the      */
+    double speed_max;           /*   source states no range             */
+    bool is_from_memory;        /* a constant of it was not re-read     */
     /* U m s-1 at 10 m, F m, D m, g m s-2 -> m */
     double (*set_up)(double speed, double fetch, double depth, double gravity);
 } lee_formula;
