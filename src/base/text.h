@@ -23,6 +23,10 @@ void lee_text_free(lee_text *text);
 /* Copy of a string; NULL for NULL or without memory. free() it. */
 char *lee_text_copy(const char *string);
 
+/* Copy without the blanks, tabs and line ends around it; NULL without memory.
+ * free() it. */
+char *lee_text_trimmed(const char *string);
+
 enum { LEE_SHOWN = 48 }; /* room for shown text */
 
 /* Makes bytes from a file fit to be printed: at most 40 characters, control
