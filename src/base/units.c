@@ -56,10 +56,8 @@ static const struct {
     {"\u00B0 F",     "degF",          true },
     {"\xB0",         "degree",        true }, /* Latin-1 degree sign */
     {"\xB0T",        "degree",        true },
-    {"\xB0"
-     "C",       "degC",          true },
-    {"\xB0"
-     "F",       "degF",          true },
+    {"\260C",        "degC",          true },
+    {"\260F",        "degF",          true },
     {"pct",          "percent",       false},
     {"hrs",          "hours",         false},
     {"mins",         "minutes",       false},
@@ -242,20 +240,18 @@ static bool is_angle_for_number(const ut_unit *from, const ut_unit *to) {
     return length > 0 && strstr(definition, "rad") != NULL;
 }
 
-/* Factor and offset of a converter; false when it is not a straight line, as
- * from seconds to hertz. */
+/* Factor and offset of a converter; false when it is not a straight line.
+ * UDUNITS bends in two ways, and both end at infinity: the reciprocal (from
+ * seconds to hertz) at 0, logarithm and exponential at 0 or far out. */
 static bool straight_line(const cv_converter *converter, lee_conversion *line) {
     /* 2^64: beside it the offset of a temperature is lost to rounding. */
     static const double span = 18446744073709551616.0;
     const double at_zero = cv_convert_double(converter, 0.0);
     const double at_one = cv_convert_double(converter, 1.0);
-    const double at_half = cv_convert_double(converter, 0.5 * span);
     const double at_span = cv_convert_double(converter, span);
-    const double bend = at_half - 0.5 * (at_zero + at_span);
     line->offset = at_zero;
     line->factor = at_zero == 0.0 ? at_one : (at_span - at_zero) / span;
-    return isfinite(at_zero) && isfinite(at_span) && line->factor > 0.0 &&
-           fabs(bend) <= 1e-12 * (fabs(at_zero) + fabs(at_span));
+    return isfinite(at_zero) && isfinite(at_span) && line->factor > 0.0;
 }
 
 static bool convert(ut_unit *from, ut_unit *to, lee_conversion *line) {

@@ -71,8 +71,7 @@ static const struct {
     {"\xED\xA0\x80",                  "???"                          }, /* a surrogate */
     {"\xF4\x90\x80\x80",              "????"                         }, /* above U+10FFFF */
     {"\xE2\x82",                      "??"                           }, /* cut off */
-    {"\xC2\x9B"
-     "31m",                      "?31m"                         }, /* control sequence introducer, 8 bits */
+    {"\302\23331m",                   "?31m"                         }, /* control sequence introducer, 8 bits */
     {"\xE2\x80\xAE"
      "txt",                      "?txt"                         }, /* right-to-left override */
 };
@@ -159,6 +158,12 @@ static void the_nearest_of_two_near_words_is_chosen(void **state) {
     assert_ptr_equal(lee_text_nearest("speed_form", 3, known), known[0]);
 }
 
+static void the_first_of_two_words_equally_near_is_chosen(void **state) {
+    (void)state;
+    const char *const known[] = {"nord", "nort"};
+    assert_ptr_equal(lee_text_nearest("nor", 2, known), known[0]);
+}
+
 static void an_endless_word_is_near_nothing(void **state) {
     (void)state;
     char word[3000];
@@ -193,6 +198,7 @@ int main(void) {
         cmocka_unit_test(two_slips_in_a_short_word_are_too_many),
         cmocka_unit_test(three_slips_in_a_long_word_are_recognised),
         cmocka_unit_test(the_nearest_of_two_near_words_is_chosen),
+        cmocka_unit_test(the_first_of_two_words_equally_near_is_chosen),
         cmocka_unit_test(an_endless_word_is_near_nothing),
         cmocka_unit_test(sameness_ignores_case_and_nothing_else),
     };

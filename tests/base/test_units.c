@@ -135,8 +135,7 @@ static const struct {
     {"celsius",       "K"     },
     {"degF",          "K"     },
     {"K",             "K"     },
-    {"\xC2\xB0"
-     "C",        "K"     },
+    {"\302\260C",     "K"     },
     {"degree",        "radian"},
     {"degrees_true",  "radian"},
     {"radian",        "degree"},
@@ -208,9 +207,7 @@ static void
 degrees_celsius_written_apart_are_no_degrees_of_charge(void **state) {
     (void)state;
     static const char *const spellings[] = {"deg C", "Deg C", "degree C",
-                                            "degrees C",
-                                            "\xB0"
-                                            "C"};
+                                            "degrees C", "\260C"};
     for (size_t i = 0; i < sizeof spellings / sizeof spellings[0]; i++) {
         const lee_conversion found = conversion(spellings[i], "K");
         assert_near(found.factor, 1.0, 0.0);
