@@ -1,6 +1,7 @@
 /* A quantity is a number and its unit; either alone is refused. */
 #include "support/check.h"
 
+#include <stdio.h>
 #include <string.h>
 
 #include "leewater/units.h"
@@ -62,43 +63,47 @@ static const struct {
     const char *to;
     const char *message;
 } refusals[] = {
-    {"12",         "m",     "'12' has no unit; write 12 m"                               },
-    {" 12 ",       "m s-1", "'12' has no unit; write 12 m s-1"                           },
-    {"",           "m",     "'' is not a number with its unit; expected one such as 12 m"},
-    {"km",         "m",
-     "'km' is not a number with its unit; expected one such as 12 m"                     },
-    {"nan m",      "m",
-     "'nan m' is not a number with its unit; expected one such as 12 m"                  },
-    {"inf m",      "m",
-     "'inf m' is not a number with its unit; expected one such as 12 m"                  },
-    {"nan",        "1",     "'nan' is not a number; expected one such as 12.5"           },
-    {"- 5 m",      "m",
-     "'- 5 m' is not a number with its unit; expected one such as 12 m"                  },
-    {"1e999 m",    "m",     "'1e999 m' is not a finite number"                           },
-    {"-1e999",     "1",     "'-1e999' is not a finite number"                            },
-    {"1e308 km",   "m",     "'1e308 km' is not a finite number"                          },
-    {"12,5 m",     "m",
-     "'12,5 m' is not a number with its unit; expected one such as 12 m"                 },
-    {"1 000 m",    "m",
-     "'1 000 m' is not a number with its unit; expected one such as 12 m"                },
-    {"0x10 m",     "m",     "unit 'x10 m' is not known"                                  },
-    {"12 knotz",   "m s-1", "unit 'knotz' is not known"                                  },
-    {"12 kg",      "m",     "unit 'kg' cannot be converted to m"                         },
-    {"12 m",       "1",     "unit 'm' cannot be converted to a plain number"             },
-    {"10 percent", "m",     "unit 'percent' cannot be converted to m"                    },
-    {"12 C",       "K",     "unit 'C' means coulomb; write degC"                         },
+    {"12",         "m",     "'12' has no unit; write 12 m"                    },
+    {" 12 ",       "m s-1", "'12' has no unit; write 12 m s-1"                },
+    {"nan",        "1",     "'nan' is not a number; expected one such as 12.5"},
+    {"1e999 m",    "m",     "'1e999 m' is not a finite number"                },
+    {"-1e999",     "1",     "'-1e999' is not a finite number"                 },
+    {"1e308 km",   "m",     "'1e308 km' is not a finite number"               },
+    {"0x10 m",     "m",     "unit 'x10 m' is not known"                       },
+    {"12 knotz",   "m s-1", "unit 'knotz' is not known"                       },
+    {"12 kg",      "m",     "unit 'kg' cannot be converted to m"              },
+    {"12 m",       "1",     "unit 'm' cannot be converted to a plain number"  },
+    {"10 percent", "m",     "unit 'percent' cannot be converted to m"         },
+    {"12 C",       "K",     "unit 'C' means coulomb; write degC"              },
 };
+
+static void refused(const char *text, const char *to, const char *message) {
+    double value = 42.0;
+    lee_error error = {0};
+    assert_int_equal(lee_quantity_parse(text, to, &value, &error),
+                     LEE_ERR_FORMAT);
+    assert_string_equal(error.message, message);
+    assert_near(value, 42.0, 0.0);
+}
 
 static void what_is_no_quantity_is_refused_and_left_alone(void **state) {
     (void)state;
     for (size_t i = 0; i < sizeof refusals / sizeof refusals[0]; i++) {
-        double value = 42.0;
-        lee_error error = {0};
-        assert_int_equal(lee_quantity_parse(refusals[i].text, refusals[i].to,
-                                            &value, &error),
-                         LEE_ERR_FORMAT);
-        assert_string_equal(error.message, refusals[i].message);
-        assert_near(value, 42.0, 0.0);
+        refused(refusals[i].text, refusals[i].to, refusals[i].message);
+    }
+}
+
+static void what_begins_with_no_number_or_half_of_one_is_refused(void **state) {
+    (void)state;
+    static const char *const texts[] = {
+        "", "km", "nan m", "inf m", "- 5 m", "12,5 m", "1 000 m", "1.2.3 m"};
+    for (size_t i = 0; i < sizeof texts / sizeof texts[0]; i++) {
+        char message[128];
+        (void)snprintf(message, sizeof message,
+                       "'%s' is not a number with its unit; expected one such "
+                       "as 12 m",
+                       texts[i]);
+        refused(texts[i], "m", message);
     }
 }
 
@@ -106,6 +111,7 @@ int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(each_quantity_reads_in_the_wanted_unit),
         cmocka_unit_test(what_is_no_quantity_is_refused_and_left_alone),
+        cmocka_unit_test(what_begins_with_no_number_or_half_of_one_is_refused),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

@@ -55,7 +55,7 @@ static void trimming_takes_blanks_at_both_ends_only(void **state) {
     free(trimmed);
 }
 
-/* Bytes and how they are shown; `length` 0 means up to the terminator. */
+/* Bytes and how they are shown. */
 static const struct {
     const char *bytes;
     const char *shown;
@@ -65,15 +65,18 @@ static const struct {
     {"a\x01\n\x7F\x1B[2J",            "a????[2J"                     },
     {"Gr\xC3\xBC\xC3\x9F",            "Gr\xC3\xBC\xC3\x9F"           },
     {"\xE2\x82\xAC \xF0\x9F\x8C\x8A", "\xE2\x82\xAC \xF0\x9F\x8C\x8A"},
-    {"\xB0 C",                        "? C"                          }, /* Latin-1 */
-    {"\xC0\xAF",                      "??"                           }, /* overlong '/' */
-    {"\xE0\x80\xAF",                  "???"                          }, /* overlong '/' */
-    {"\xED\xA0\x80",                  "???"                          }, /* a surrogate */
-    {"\xF4\x90\x80\x80",              "????"                         }, /* above U+10FFFF */
-    {"\xE2\x82",                      "??"                           }, /* cut off */
-    {"\302\23331m",                   "?31m"                         }, /* control sequence introducer, 8 bits */
-    {"\xE2\x80\xAE"
-     "txt",                      "?txt"                         }, /* right-to-left override */
+ /* Latin-1 */
+    {"\xB0 C",                        "? C"                          },
+ /* '/' in more bytes than it takes */
+    {"\xC0\xAF",                      "??"                           },
+    {"\xE0\x80\xAF",                  "???"                          },
+ /* a surrogate; above U+10FFFF; cut off */
+    {"\xED\xA0\x80",                  "???"                          },
+    {"\xF4\x90\x80\x80",              "????"                         },
+    {"\xE2\x82",                      "??"                           },
+ /* control sequence introducer; right-to-left override */
+    {"\302\23331m",                   "?31m"                         },
+    {"\342\200\256txt",               "?txt"                         },
 };
 
 static void what_is_shown_can_be_printed(void **state) {

@@ -3,6 +3,7 @@
 #include "support/check.h"
 
 #include <locale.h>
+#include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
 
@@ -215,54 +216,88 @@ degrees_celsius_written_apart_are_no_degrees_of_charge(void **state) {
     }
 }
 
+/* Fails unless `from` is refused with this message and nothing found. */
+static void refused(const char *from, const char *to, const char *message) {
+    lee_conversion found = {42.0, 43.0};
+    lee_error error = {0};
+    assert_int_equal(lee_unit_conversion(from, to, &found, &error),
+                     LEE_ERR_FORMAT);
+    assert_string_equal(error.message, message);
+    assert_near(found.factor, 42.0, 0.0);
+    assert_near(found.offset, 43.0, 0.0);
+}
+
+static void a_blank_unit_is_refused(void **state) {
+    (void)state;
+    refused("", "m", "the unit is blank");
+    refused(" \t", "m", "the unit is blank");
+}
+
+static void what_is_no_unit_is_refused_and_named(void **state) {
+    (void)state;
+    static const char *const units[] = {
+        "knotz", "15 knots", "-1 m",         ".5 m", "m @ 5",
+        "m/",    "m//s",     "s since 2020", "10",   "reed",
+    };
+    for (size_t i = 0; i < sizeof units / sizeof units[0]; i++) {
+        char message[64];
+        (void)snprintf(message, sizeof message, "unit '%s' is not known",
+                       units[i]);
+        refused(units[i], "m", message);
+    }
+}
+
+static void a_control_character_in_a_unit_is_not_printed(void **state) {
+    (void)state;
+    refused("m\x1B[31m", "m", "unit 'm?[31m' is not known");
+}
+
+static void a_unit_that_nobody_means_is_refused_with_a_hint(void **state) {
+    (void)state;
+    refused("C", "K", "unit 'C' means coulomb; write degC");
+    refused("F", "K", "unit 'F' means farad; write degF");
+    refused("nm", "m",
+            "unit 'nm' means nanometre; write nmi for nautical miles");
+    refused("ms-1", "m s-1",
+            "unit 'ms-1' means one in a millisecond; write m s-1 or m/s");
+    refused("months", "s", "unit 'months' means no fixed time; write days");
+}
+
 static const struct {
     const char *from;
     const char *to;
-    const char *message;
-} refusals[] = {
-    {"",                      "m",      "the unit is blank"                                      },
-    {" \t",                   "m",      "the unit is blank"                                      },
-    {"knotz",                 "m s-1",  "unit 'knotz' is not known"                              },
-    {"kg",                    "m",      "unit 'kg' cannot be converted to m"                     },
-    {"km",                    "m s-1",  "unit 'km' cannot be converted to m s-1"                 },
-    {"kN",                    "m s-1",  "unit 'kN' cannot be converted to m s-1"                 },
-    {"m",                     "1",      "unit 'm' cannot be converted to a plain number"         },
-    {"15 knots",              "m s-1",  "unit '15 knots' is not known"                           },
-    {"-1 m",                  "m",      "unit '-1 m' is not known"                               },
-    {"m @ 5",                 "m",      "unit 'm @ 5' is not known"                              },
-    {"days since 2020-13-01", "s",      "unit 'days since 2020-13-01' is not known"              },
-    {"m/",                    "m",      "unit 'm/' is not known"                                 },
-    {"m\x1B[31m",             "m",      "unit 'm?[31m' is not known"                             },
-    {"C",                     "K",      "unit 'C' means coulomb; write degC"                     },
-    {"F",                     "K",      "unit 'F' means farad; write degF"                       },
-    {"nm",                    "m",      "unit 'nm' means nanometre; write nmi for nautical miles"},
-    {"ms-1",                  "m s-1",
-     "unit 'ms-1' means one in a millisecond; write m s-1 or m/s"                                },
-    {"months",                "s",      "unit 'months' means no fixed time; write days"          },
+} strangers[] = {
+    {"kg",          "m"          },
+    {"km",          "m s-1"      },
+    {"kN",          "m s-1"      },
  /* Convertible to UDUNITS, as reciprocals. */
-    {"s",                     "Hz",     "unit 's' cannot be converted to Hz"                     },
-    {"s m-1",                 "m s-1",  "unit 's m-1' cannot be converted to m s-1"              },
+    {"s",           "Hz"         },
+    {"s m-1",       "m s-1"      },
  /* Convertible to UDUNITS, as plain numbers. */
-    {"degree",                "1",      "unit 'degree' cannot be converted to a plain number"    },
-    {"percent",               "degree", "unit 'percent' cannot be converted to degree"           },
-    {"1",                     "degree", "unit '1' cannot be converted to degree"                 },
-    {"degree s-1",            "s-1",    "unit 'degree s-1' cannot be converted to s-1"           },
- /* Not a straight line. */
-    {"lg(re 1 mW)",           "W",      "unit 'lg(re 1 mW)' cannot be converted to W"            },
+    {"percent",     "degree"     },
+    {"1",           "degree"     },
+    {"degree s-1",  "s-1"        },
+ /* Convertible to UDUNITS, but not by a straight line. */
+    {"lg(re 1 mW)", "W"          },
+    {"W",           "lg(re 1 mW)"},
 };
 
-static void what_nobody_means_is_refused_and_left_alone(void **state) {
+static void units_of_different_things_do_not_convert(void **state) {
     (void)state;
-    for (size_t i = 0; i < sizeof refusals / sizeof refusals[0]; i++) {
-        lee_conversion found = {42.0, 43.0};
-        lee_error error = {0};
-        assert_int_equal(lee_unit_conversion(refusals[i].from, refusals[i].to,
-                                             &found, &error),
-                         LEE_ERR_FORMAT);
-        assert_string_equal(error.message, refusals[i].message);
-        assert_near(found.factor, 42.0, 0.0);
-        assert_near(found.offset, 43.0, 0.0);
+    for (size_t i = 0; i < sizeof strangers / sizeof strangers[0]; i++) {
+        char message[96];
+        (void)snprintf(message, sizeof message,
+                       "unit '%s' cannot be converted to %s", strangers[i].from,
+                       strangers[i].to);
+        refused(strangers[i].from, strangers[i].to, message);
     }
+}
+
+static void a_length_or_an_angle_is_no_plain_number(void **state) {
+    (void)state;
+    refused("m", "1", "unit 'm' cannot be converted to a plain number");
+    refused("degree", "1",
+            "unit 'degree' cannot be converted to a plain number");
 }
 
 static void a_unit_as_long_as_a_book_is_refused(void **state) {
@@ -303,7 +338,12 @@ int main(void) {
         cmocka_unit_test(blanks_around_a_unit_do_not_count),
         cmocka_unit_test(
             degrees_celsius_written_apart_are_no_degrees_of_charge),
-        cmocka_unit_test(what_nobody_means_is_refused_and_left_alone),
+        cmocka_unit_test(a_blank_unit_is_refused),
+        cmocka_unit_test(what_is_no_unit_is_refused_and_named),
+        cmocka_unit_test(a_control_character_in_a_unit_is_not_printed),
+        cmocka_unit_test(a_unit_that_nobody_means_is_refused_with_a_hint),
+        cmocka_unit_test(units_of_different_things_do_not_convert),
+        cmocka_unit_test(a_length_or_an_angle_is_no_plain_number),
         cmocka_unit_test(a_unit_as_long_as_a_book_is_refused),
         cmocka_unit_test(finding_a_unit_leaves_the_locale_of_the_thread_alone),
     };
