@@ -1,9 +1,9 @@
 /* yaml.h - a tree of a YAML file: mappings, lists and strings with their line
  * and column. Scalars stay text until a schema reads them.
  *
- * Refused: anchors, aliases, tags, merge keys, keys that are not plain
- * scalars, a second document, more than 1 MiB, depth 32 or 200 000 nodes,
- * invalid UTF-8, a duplicate key. */
+ * Refused: anchors, aliases, tags, merge keys, keys that are not one word
+ * (quotes allowed, so that JSON reads too), a second document, more than
+ * 1 MiB, depth 32 or 200 000 nodes, invalid UTF-8, a duplicate key. */
 #ifndef LEEWATER_FORMATS_YAML_H
 #define LEEWATER_FORMATS_YAML_H
 
