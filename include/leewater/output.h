@@ -68,4 +68,8 @@ lee_status lee_write_run(const char *path, bool force, bool with_wind,
                          const lee_case *from, const lee_run_result *result,
                          lee_error *error);
 
+/* Whether the two functions above could write to `path`, without leaving
+ * anything: ask before a long run. Errors: theirs. */
+lee_status lee_check_target(const char *path, bool force, lee_error *error);
+
 #endif

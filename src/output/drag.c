@@ -7,7 +7,7 @@
 
 #include "leewater/output.h"
 
-enum { SPEEDS_A_LINE = 8 };
+enum { SPEEDS_A_LINE = 6 };
 
 typedef double table_value(const lee_drag_table *table,
                            const lee_drag_relation *relation, double speed);
@@ -42,8 +42,9 @@ static void print_speeds(const lee_printer *to, const lee_drag_table *table,
     (void)fprintf(to->stream, "  %*s", (int)name_width(table),
                   lee_speed_unit(to));
     for (size_t k = first; k < end; k++) {
-        (void)fprintf(to->stream, " %6s ",
-                      lee_show_bare_speed(to, table->speed[k]).text);
+        (void)fprintf(to->stream, " %6s%s",
+                      lee_show_bare_speed(to, table->speed[k]).text,
+                      k + 1 < end ? " " : "");
     }
     (void)fputc('\n', to->stream);
 }
@@ -59,8 +60,9 @@ static void print_values(const lee_printer *to, const lee_drag_table *table,
                       relation->name);
         for (size_t k = first; k < end; k++) {
             const double speed = table->speed[k];
-            (void)fprintf(to->stream, " %6.3f%c", value(table, relation, speed),
-                          is_fitted(relation, speed) ? ' ' : '*');
+            const char *unmarked = k + 1 < end ? " " : "";
+            (void)fprintf(to->stream, " %6.3f%s", value(table, relation, speed),
+                          is_fitted(relation, speed) ? unmarked : "*");
         }
         (void)fputc('\n', to->stream);
     }

@@ -13,15 +13,6 @@ void lee_json_begin(lee_json *json, const char *command) {
     lee_json_put_text(json, "command", command);
 }
 
-void lee_json_put_case(lee_json *json, const lee_case *from,
-                       double still_water) {
-    lee_json_put_text(json, "case", from->path);
-    lee_json_put_text(json, "title", from->title);
-    lee_json_put_text(json, "lake", from->problem.lake.name);
-    lee_json_put_text(json, "datum", from->problem.lake.datum);
-    lee_json_put_number(json, "still_water_m", still_water);
-}
-
 void lee_json_put_notes(lee_json *json, const char *name,
                         const lee_notes *notes) {
     lee_json_open_list(json, name);
@@ -29,6 +20,16 @@ void lee_json_put_notes(lee_json *json, const char *name,
         lee_json_put_text(json, NULL, notes->text[i]);
     }
     lee_json_close(json);
+}
+
+void lee_json_put_case(lee_json *json, const lee_case *from,
+                       double still_water) {
+    lee_json_put_text(json, "case", from->path);
+    lee_json_put_text(json, "title", from->title);
+    lee_json_put_text(json, "lake", from->problem.lake.name);
+    lee_json_put_text(json, "datum", from->problem.lake.datum);
+    lee_json_put_number(json, "still_water_m", still_water);
+    lee_json_put_notes(json, "remarks", &from->notes);
 }
 
 static void put_corrections(lee_json *json, const lee_method *method) {

@@ -11,7 +11,7 @@
 /* Opens the root: program, version, command. */
 void lee_json_begin(lee_json *json, const char *command);
 
-/* Case, title, lake, datum, still water. */
+/* Case, title, lake, datum, still water, remarks of the reader. */
 void lee_json_put_case(lee_json *json, const lee_case *from,
                        double still_water);
 

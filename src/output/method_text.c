@@ -17,6 +17,9 @@ void lee_print_head(const lee_printer *to, const lee_case *from,
                  lee_show_length(to, still_water).text, lee_datum_of(from));
     lee_print_wrapped(to, 0, "", line.bytes != NULL ? line.bytes : "");
     lee_text_free(&line);
+    for (size_t i = 0; i < from->notes.n; i++) {
+        lee_print_wrapped(to, 4, "! ", from->notes.text[i]);
+    }
 }
 
 static void print_corrections(const lee_printer *to, const lee_method *method) {

@@ -258,7 +258,6 @@ void lee_print_notes(const lee_printer *to, const char *heading,
 }
 
 lee_status lee_print_end(const lee_printer *to, lee_error *error) {
-    errno = 0;
     if (fflush(to->stream) != 0 || ferror(to->stream)) {
         return lee_fail(error, LEE_ERR_FILE, "cannot write: %s",
                         errno != 0 ? strerror(errno) : "output failed");

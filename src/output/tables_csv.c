@@ -33,6 +33,9 @@ static void write_head(FILE *out, const lee_case *from,
     comment(out, "levels above",
             lake->datum != NULL ? lake->datum : "datum not named");
     (void)fprintf(out, "# still water: %.3f m\n", still_water);
+    for (size_t i = 0; i < from->notes.n; i++) {
+        comment(out, "remark", from->notes.text[i]);
+    }
     comment(out, "drag", method->drag);
     for (size_t i = 0; i < method->correction_count; i++) {
         const lee_correction *link = &method->correction[i];
@@ -100,6 +103,16 @@ static lee_status check_path(const char *path, lee_error *error) {
     }
     return lee_fail(error, LEE_ERR_ARGUMENT,
                     "%s: results are written as .csv; name the file so", path);
+}
+
+lee_status lee_check_target(const char *path, bool force, lee_error *error) {
+    lee_atomic_file file = {0};
+    lee_status status = check_path(path, error);
+    if (status == LEE_OK) {
+        status = lee_atomic_open(path, force, &file, error);
+    }
+    lee_atomic_discard(&file);
+    return status;
 }
 
 /* ---- steady ---- */

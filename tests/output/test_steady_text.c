@@ -1,0 +1,203 @@
+/* Steady levels as text name both ends, the datum, and what is unsure. */
+#include "support/captured.h"
+#include "support/results.h"
+
+static const char *printed(captured *out, const hand_made *made,
+                           lee_unit_system units) {
+    capture_begin(out);
+    assert_int_equal(
+        lee_print_steady(out->stream, &made->from, &made->steady, units, NULL),
+        LEE_OK);
+    return capture_end(out);
+}
+
+static void the_head_names_lake_still_water_and_datum(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "January gale\nMarrow Tarn, still water 101.350 m "
+                          "above Marrow gauge zero\n");
+    capture_free(&out);
+}
+
+static void both_ends_are_named_with_their_range_and_place(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "0.412 m (0.310 to 0.550), lee shore, 12.00 km\n");
+    assert_contains(text,
+                    "-0.430 m (-0.600 to -0.320), windward shore, 0.00 km\n");
+    assert_contains(text, "node                at 5.90 km\n");
+    capture_free(&out);
+}
+
+static void a_wind_across_the_axis_names_no_end(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    made.wind[0].is_across = true;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_lacks(text, "lee shore");
+    assert_lacks(text, "windward shore");
+    assert_contains(text, "across the axis: no end is the lee\n");
+    capture_free(&out);
+}
+
+static void a_station_has_depth_over_its_own_bed_or_the_section(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "Levels, m above Marrow gauge zero\n");
+    assert_contains(text, "North quay     0.40 km   100.950  (100.800 to "
+                          "101.050)  depth 1.850 m\n");
+    assert_contains(text, "Lee landing   11.80 km   101.755  (101.650 to "
+                          "101.890)  section depth 4.755 m\n");
+    capture_free(&out);
+}
+
+static void a_dry_station_reads_dry(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    const double none = (double)NAN;
+    made.level[0] = (lee_station_level){
+        {none, none, none},
+        none, none
+    };
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "North quay     0.40 km       dry ");
+    capture_free(&out);
+}
+
+/* 0.412 m is 1.352 ft, 12 km 7.456 mi, 22 m/s 49.21 mph. */
+static void american_units_reach_every_line(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    const char *text = printed(&out, &made, LEE_UNITS_US);
+    assert_contains(text, "Wind 49.2 mph from 240 degrees\n");
+    assert_contains(text, "1.35 ft (1.02 to 1.80), lee shore, 7.46 mi\n");
+    assert_lacks(text, " km");
+    assert_lacks(text, " m,");
+    assert_lacks(text, "m/s\n");
+    capture_free(&out);
+}
+
+static void method_limits_and_caution_close_the_text(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    const char *method = strstr(text, "\nMethod\n");
+    assert_non_null(method);
+    assert_contains(method, "height x 1.094: neutral log profile\n");
+    assert_contains(method, "\nLimits\n");
+    assert_contains(method, "\nPlanning estimates. ");
+    capture_free(&out);
+}
+
+static void warnings_stand_out_from_the_numbers(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    assert_int_equal(
+        lee_notes_add(&made.wind[0].warnings, NULL, "drag extrapolated"),
+        LEE_OK);
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "\n  ! drag extrapolated\n");
+    lee_notes_free(&made.wind[0].warnings);
+    capture_free(&out);
+}
+
+static void two_waters_are_told_apart(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    lee_water_estimate waters[2] = {made.water[0], made.water[0]};
+    waters[0].to = 4000.0;
+    waters[1].from = 5000.0;
+    made.wind[0].water_count = 2;
+    made.wind[0].water = waters;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "Water 1 of 2, 0.00 km to 4.00 km\n");
+    assert_contains(text, "Water 2 of 2, 5.00 km to 12.00 km\n");
+    capture_free(&out);
+}
+
+/* Four winds alike but for their speed: a line each, and the block of the one
+ * with the highest set-up. */
+static void a_scan_is_a_table_and_its_worst_wind(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    lee_wind_estimate winds[4];
+    for (size_t i = 0; i < 4; i++) {
+        winds[i] = made.wind[0];
+        winds[i].wind.from = degrees(90.0 * (double)i);
+        winds[i].set_up.value = i == 2 ? 0.9 : 0.1;
+    }
+    winds[3].is_across = true;
+    made.steady.count = 4;
+    made.steady.wind = winds;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "    22.0    90     98   12.00    0.100 (0.310 to "
+                          "0.550)");
+    assert_contains(text, "    22.0   270     98  across    0.100");
+    const char *block = strstr(text, "Highest set-up\n");
+    assert_non_null(block);
+    assert_contains(block, "Wind 22.0 m/s from 180 degrees\n");
+    assert_lacks(block, "from 90 degrees");
+    capture_free(&out);
+}
+
+static void a_warning_of_many_winds_is_told_once(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    lee_wind_estimate winds[4];
+    lee_notes notes = {0};
+    assert_int_equal(lee_notes_add(&notes, NULL, "shore falls dry"), LEE_OK);
+    for (size_t i = 0; i < 4; i++) {
+        winds[i] = made.wind[0];
+        winds[i].warnings = i == 0 ? (lee_notes){0} : notes;
+    }
+    made.steady.count = 4;
+    made.steady.wind = winds;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    const char *first = strstr(text, "shore falls dry");
+    assert_non_null(first);
+    assert_null(strstr(first + 1, "shore falls dry"));
+    lee_notes_free(&notes);
+    capture_free(&out);
+}
+
+int main(void) {
+    const struct CMUnitTest tests[] = {
+        cmocka_unit_test(the_head_names_lake_still_water_and_datum),
+        cmocka_unit_test(both_ends_are_named_with_their_range_and_place),
+        cmocka_unit_test(a_wind_across_the_axis_names_no_end),
+        cmocka_unit_test(a_station_has_depth_over_its_own_bed_or_the_section),
+        cmocka_unit_test(a_dry_station_reads_dry),
+        cmocka_unit_test(american_units_reach_every_line),
+        cmocka_unit_test(method_limits_and_caution_close_the_text),
+        cmocka_unit_test(warnings_stand_out_from_the_numbers),
+        cmocka_unit_test(two_waters_are_told_apart),
+        cmocka_unit_test(a_scan_is_a_table_and_its_worst_wind),
+        cmocka_unit_test(a_warning_of_many_winds_is_told_once),
+    };
+    return cmocka_run_group_tests(tests, NULL, NULL);
+}
