@@ -112,8 +112,11 @@ typedef struct lee_wind_csv {
 /* Reads a wind record. Rows whose wind is missing are kept as NaN; equal
  * repeated rows are dropped and counted; a repeated time with other values,
  * and a time that runs backwards, are errors with their line. Direction is
- * in [0, 360], speed >= 0, or an error with line and column. A speed of 0
- * needs no direction: it is calm; any other does, or the wind is missing.
+ * in [0, 360] degrees, speed in [0, 340] m s-1 (no wind outruns sound), and
+ * the other quantities in the ranges of docs/formats.md, or it is an error
+ * with line and column. A speed of 0 needs no direction: it is calm; any
+ * other does, or the wind is missing. The header of a time may name its zone,
+ * "time [UTC]" or "clock [+01:00]".
  * Hour 24 with minute 0 is midnight at the end of the day.
  *
  *   path    a regular file
@@ -140,32 +143,40 @@ typedef struct lee_wind_gap {
     bool is_long;   /* beyond the gap rule             */
 } lee_wind_gap;
 
-/* What a record holds; makes no change to it. {0} is valid. Owns `gap`. */
+/* What a record holds; makes no change to it. {0} is valid. Owns `gap`. Times
+ * of first finds mean nothing while their count is 0. */
 typedef struct lee_wind_check {
     size_t samples;
     int64_t first;
     int64_t last;
-    int64_t step;     /* usual step: the most frequent distance of successive
-                     samples, the shortest of equals, s; 0 for one sample   */
-    size_t irregular; /* steps that differ from it                          */
-    size_t missing;   /* samples without wind                               */
+
+    /* The usual step: the most frequent distance of successive samples, the
+     * shortest of equals, s; 0 for one sample. */
+    int64_t step;
+    size_t irregular; /* steps that differ from it */
+
+    size_t missing; /* samples without wind */
     size_t calms;
-    size_t duplicates;
+    size_t duplicates; /* as the reader counted, like the next two */
     size_t variable_calm;
     size_t variable_missing;
-    size_t beyond_belief;       /* faster than 75 m s-1                      */
-    int64_t beyond_belief_time; /* the first of them                        */
-    size_t spikes;       /* faster than the samples with wind before and after
-                           by 15 m s-1 and by a factor of 3, both at most
-                           three usual steps away                           */
-    int64_t spike_time;  /* the first of them                                */
-    double fastest;      /* m s-1; NaN, like the next and the mean, when no
-                           sample has a wind                                */
+
+    size_t beyond_belief;       /* faster than 75 m s-1 */
+    int64_t beyond_belief_time; /* the first of them    */
+
+    /* Faster than the samples with wind before and after by 15 m s-1 and by a
+     * factor of 3, both at most three usual steps away. */
+    size_t spikes;
+    int64_t spike_time; /* the first of them */
+
+    /* Of the samples with wind; NaN when there is none. */
+    double fastest;      /* m s-1   */
     double fastest_from; /* radians */
     int64_t fastest_time;
-    double mean_speed; /* m s-1, of the samples with wind */
+    double mean_speed; /* m s-1 */
+
     size_t gap_count;
-    lee_wind_gap *gap; /* [gap_count] in order of time                      */
+    lee_wind_gap *gap; /* [gap_count] in order of time */
 } lee_wind_check;
 
 /* Looks through a record. Errors: LEE_ERR_MEMORY. */
