@@ -6,10 +6,8 @@
 void lee_wind_stress(const lee_drag *drag, double air_density,
                      double water_density, const double wind[2],
                      double stress[2]) {
-    /* A sum, as hypot of an infinite and a missing component is infinite. */
-    const bool is_missing = isnan(wind[0] + wind[1]);
     const lee_drag_input in = {
-        .speed = is_missing ? NAN : hypot(wind[0], wind[1]),
+        .speed = hypot(wind[0], wind[1]),
         .air_density = air_density,
         .water_density = water_density,
     };

@@ -156,6 +156,7 @@ static const struct {
     {"andreas-2012",       25.0,  1.21497  },
     {"andreas-lines-2012", 5.0,   0.14663  },
     {"andreas-lines-2012", 8.271, 0.239199 },
+    {"andreas-lines-2012", 8.8,   0.27004  },
     {"andreas-lines-2012", 10.0,  0.34     },
     {"andreas-lines-2012", 15.0,  0.6315   },
     {"andreas-lines-2012", 20.0,  0.923    },
