@@ -71,8 +71,9 @@ void lee_drag_free(lee_drag *drag);
 double lee_drag_coefficient(const lee_drag *drag, const lee_drag_input *in,
                             bool *extrapolated, bool *capped);
 
-/* Writes what the drag is, as "garratt-linear-1977, capped at 0.0030", into
- * text[size]; returns text. */
+/* Writes what the drag is, as "garratt-linear-1977, capped at 0.0030",
+ * "constant 0.0018", "table of 5 rows" or "no drag", into text[size], size
+ * above 0; returns text. */
 char *lee_drag_describe(const lee_drag *drag, size_t size, char text[]);
 
 /* Stress of a wind vector at the water surface, N m-2.
@@ -83,7 +84,8 @@ char *lee_drag_describe(const lee_drag *drag, size_t size, char text[]);
  *   air_density    kg m-3
  *   water_density  kg m-3, for relations given as a share of it
  *   wind           east, north, m s-1, at 10 m over open water
- *   stress         out: east, north; NaN where the wind is NaN
+ *   stress         out: east, north; both NaN when either component of the
+ *                  wind is; may alias wind
  *
  * Source: definition of the drag coefficient (common practice). */
 void lee_wind_stress(const lee_drag *drag, double air_density,
