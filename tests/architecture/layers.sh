@@ -96,7 +96,7 @@ foreign_room() {
     gsl/*) echo numerics ;;
     udunits2.h) echo base ;;
     yaml.h) echo formats ;;
-    jansson.h) echo formats output ;; # output builds the summaries' trees
+    jansson.h) echo formats ;;
     netcdf*.h) echo formats ;;
     assert.h | ctype.h | errno.h | fenv.h | float.h | inttypes.h | limits.h | \
         math.h | stdarg.h | stdbool.h | stddef.h | stdint.h | stdio.h | \
