@@ -1,6 +1,7 @@
 /* check_text.c - what was understood of a case, as text. */
 #include <math.h>
 #include <stdbool.h>
+#include <string.h>
 
 #include "output/print.h"
 
@@ -44,6 +45,15 @@ static void print_end(const lee_printer *to, const char *label,
     }
 }
 
+static void print_span(const lee_printer *to, const char *label,
+                       const char *low, const char *high) {
+    if (strcmp(low, high) == 0) {
+        lee_print_row(to, label, "%s throughout", low);
+    } else {
+        lee_print_row(to, label, "%s to %s", low, high);
+    }
+}
+
 static void print_axis(const lee_printer *to, const lee_profile *profile) {
     double low;
     double high;
@@ -60,11 +70,11 @@ static void print_axis(const lee_printer *to, const lee_profile *profile) {
                       lee_show_direction(profile->bearing[last]).text);
     }
     span_of(profile->n, profile->bed, &low, &high);
-    lee_print_row(to, "bed", "%s to %s", lee_show_length(to, low).text,
-                  lee_show_length(to, high).text);
+    print_span(to, "bed", lee_show_length(to, low).text,
+               lee_show_length(to, high).text);
     span_of(profile->n, profile->width, &low, &high);
-    lee_print_row(to, "width", "%s to %s", lee_show_distance(to, low).text,
-                  lee_show_distance(to, high).text);
+    print_span(to, "width", lee_show_distance(to, low).text,
+               lee_show_distance(to, high).text);
 }
 
 static void print_lake(const lee_printer *to, const lee_case *from,
@@ -87,6 +97,23 @@ static void print_lake(const lee_printer *to, const lee_case *from,
                   lee_show_length(to, check->lake.max_depth).text);
 }
 
+static void print_station(const lee_printer *to, const lee_lake *lake,
+                          const lee_station *station, double still_water) {
+    const bool has_bed = !isnan(station->bed);
+    const double bed =
+        has_bed ? station->bed : lee_profile_bed(&lake->profile, station->at);
+    lee_print_row(to, station->name, "chainage %s, %s %s",
+                  lee_show_distance(to, station->at).text,
+                  has_bed ? "depth" : "section depth",
+                  lee_show_length(to, still_water - bed).text);
+    for (size_t i = 0; i < station->threshold_count; i++) {
+        const lee_threshold *threshold = &station->threshold[i];
+        lee_print_row(to, "", "watched %s %s",
+                      threshold->is_below ? "below" : "above",
+                      lee_show_length(to, threshold->level).text);
+    }
+}
+
 static void print_stations(const lee_printer *to, const lee_case *from,
                            double still_water) {
     const lee_problem *problem = &from->problem;
@@ -94,19 +121,7 @@ static void print_stations(const lee_printer *to, const lee_case *from,
         (void)fputs("\nStations\n", to->stream);
     }
     for (size_t i = 0; i < problem->station_count; i++) {
-        const lee_station *station = &problem->station[i];
-        const bool has_bed = !isnan(station->bed);
-        const double bed =
-            has_bed ? station->bed
-                    : lee_profile_bed(&problem->lake.profile, station->at);
-        lee_print_row(to, station->name,
-                      "chainage %s, %s of %s below still "
-                      "water, %zu threshold%s",
-                      lee_show_distance(to, station->at).text,
-                      has_bed ? "own bed" : "section's bed",
-                      lee_show_length(to, still_water - bed).text,
-                      station->threshold_count,
-                      station->threshold_count == 1 ? "" : "s");
+        print_station(to, &problem->lake, &problem->station[i], still_water);
     }
 }
 
@@ -115,9 +130,9 @@ static void print_gaps(const lee_printer *to, const lee_wind_check *record) {
     for (size_t i = 0; i < record->gap_count && i < SHOWN; i++) {
         const lee_wind_gap *gap = &record->gap[i];
         lee_print_row(
-            to, i == 0 ? "gaps" : "", "%s to %s: %s, %s",
-            lee_show_time(gap->after).text, lee_show_time(gap->before).text,
+            to, i == 0 ? "gaps" : "", "%s after %s, %s",
             lee_show_duration((double)(gap->before - gap->after)).text,
+            lee_show_time(gap->after).text,
             gap->is_long ? "beyond the rule" : "bridged");
     }
     if (record->gap_count > SHOWN) {

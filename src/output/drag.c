@@ -28,6 +28,17 @@ static bool is_fitted(const lee_drag_relation *relation, double speed) {
     return speed >= relation->speed_min && speed <= relation->speed_max;
 }
 
+static bool has_unfitted(const lee_drag_table *table) {
+    for (size_t i = 0; i < table->relations; i++) {
+        for (size_t k = 0; k < table->speeds; k++) {
+            if (!is_fitted(table->relation[i], table->speed[k])) {
+                return true;
+            }
+        }
+    }
+    return false;
+}
+
 static size_t name_width(const lee_drag_table *table) {
     size_t width = 0;
     for (size_t i = 0; i < table->relations; i++) {
@@ -98,10 +109,12 @@ lee_status lee_print_drag(FILE *stream, const lee_drag_table *table,
     (void)fprintf(stream, "Drag relations by the wind at 10 m over water\n");
     print_all(&to, table, "Drag coefficient, 1000 C10", thousandfold);
     print_all(&to, table, "Wind stress, Pa", stress_of);
-    (void)fprintf(stream,
-                  "\n  * outside the speeds the relation was fitted on\n"
-                  "  air %.3f kg/m3, water %.1f kg/m3; no cap\n",
+    (void)fprintf(stream, "\n  air %.3f kg/m3, water %.1f kg/m3; no cap\n",
                   table->air_density, table->water_density);
+    if (has_unfitted(table)) {
+        (void)fputs("  * outside the speeds the relation was fitted on\n",
+                    stream);
+    }
     if (table->has_sources) {
         print_sources(&to, table);
     }
