@@ -208,6 +208,13 @@ static void a_file_without_content_is_refused(void **state) {
     assert_refused(state, "---\n", "a.yaml:1:1: the file is empty");
 }
 
+static void an_empty_text_in_quotes_is_content(void **state) {
+    lee_yaml_node *root = read_text(state, "''\n");
+    assert_int_equal(root->kind, LEE_YAML_SCALAR);
+    assert_string_equal(root->text, "");
+    lee_yaml_free(root);
+}
+
 static void a_nul_byte_is_refused_where_it_stands(void **state) {
     assert_refused_bytes(state, 10, "a: 1\nb: \0\n",
                          "a.yaml:2:4: control characters are not allowed");
@@ -216,6 +223,8 @@ static void a_nul_byte_is_refused_where_it_stands(void **state) {
 static void broken_utf8_is_refused_where_it_stands(void **state) {
     assert_refused(state, "a: \xC3\xA9\nb: x\xFF\n",
                    "a.yaml:2:5: invalid leading UTF-8 octet");
+    assert_refused(state, "a: \xC3\xA9\xFF\n",
+                   "a.yaml:1:5: invalid leading UTF-8 octet");
     assert_refused(state, "a: \xC0\xAF\n",
                    "a.yaml:1:4: invalid length of a UTF-8 sequence");
 }
@@ -379,6 +388,7 @@ int main(void) {
         TEST(an_empty_key_is_refused),
         TEST(a_second_document_is_refused),
         TEST(a_file_without_content_is_refused),
+        TEST(an_empty_text_in_quotes_is_content),
         TEST(a_nul_byte_is_refused_where_it_stands),
         TEST(broken_utf8_is_refused_where_it_stands),
         TEST(brackets_without_end_are_refused_at_depth_32),
