@@ -1,0 +1,83 @@
+/* check_problem.c - what was understood, before anything is computed. */
+#include <math.h>
+
+#include "leewater/series.h"
+#include "series/setting.h"
+
+/* The speed that corrections are shown for: the fastest there is. */
+static double shown_speed(const lee_problem *problem,
+                          const lee_problem_check *check) {
+    const lee_wind_source *source = &problem->wind;
+    double fastest = check->has_record ? check->record.fastest : 0.0;
+    for (size_t i = 0; i < source->given_count; i++) {
+        fastest = fmax(fastest, source->given[i].speed);
+    }
+    if (source->kind == LEE_WIND_STORM) {
+        fastest = source->storm.peak;
+    }
+    return fastest;
+}
+
+static lee_status check_record(const lee_problem *problem,
+                               lee_problem_check *check, lee_error *error) {
+    const lee_wind_source *source = &problem->wind;
+    lee_status status = lee_wind_check_record(&source->record, &source->gap,
+                                              &check->record, error);
+    if (status != LEE_OK) {
+        return status;
+    }
+    check->has_record = true;
+    check->pieces = 1;
+    for (size_t i = 0; i < check->record.gap_count; i++) {
+        check->pieces += check->record.gap[i].is_long;
+    }
+    if (check->pieces > 1 && !source->gap.split) {
+        return lee_notes_add(&check->warnings, error,
+                             "%zu gaps are longer than largest_gap allows: "
+                             "`run` will refuse this record unless `gaps: "
+                             "split` is set",
+                             check->pieces - 1);
+    }
+    return LEE_OK;
+}
+
+lee_status lee_check_problem(const lee_problem *problem,
+                             lee_problem_check *check, lee_error *error) {
+    *check = (lee_problem_check){0};
+    lee_setting setting;
+    lee_status status = lee_exposure_check(&problem->exposure, error);
+    if (status == LEE_OK) {
+        const double begin = problem->wind.kind == LEE_WIND_RECORD
+                                 ? (double)problem->wind.record.time[0]
+                                 : -INFINITY;
+        status = lee_setting_init(problem, begin, &setting, error);
+    }
+    if (status != LEE_OK) {
+        return status;
+    }
+    check->still_water = setting.still_water;
+    check->lake = setting.lake;
+    if (problem->wind.kind == LEE_WIND_RECORD) {
+        status = check_record(problem, check, error);
+    }
+    if (status == LEE_OK) {
+        status =
+            lee_setting_tell(problem, &setting, shown_speed(problem, check),
+                             &check->method, error);
+    }
+    if (status == LEE_OK && check->has_record) {
+        status = lee_record_tell(&check->record, &problem->wind.gap,
+                                 &check->method.record, error);
+    }
+    if (status != LEE_OK) {
+        lee_problem_check_free(check);
+    }
+    return status;
+}
+
+void lee_problem_check_free(lee_problem_check *check) {
+    lee_wind_check_free(&check->record);
+    lee_method_free(&check->method);
+    lee_notes_free(&check->warnings);
+    *check = (lee_problem_check){0};
+}

@@ -1,0 +1,327 @@
+/* course.c - one run of the engine over the spans of a record. */
+#include "series/course.h"
+
+#include <math.h>
+#include <stdlib.h>
+
+/* Eta below which a set-up volume is not worth dividing by, m (docs/theory.md,
+ * "Levels in time"). */
+static const double least_eta = 1e-3;
+
+/* One span being run. */
+typedef struct leg {
+    const lee_course *course;
+    const lee_span *span;
+    const lee_channel *channel;
+    lee_transient *engine;
+    lee_drive drive;
+    size_t break_count;
+    int64_t *breaks; /* times that steps must hit, increasing */
+    size_t next_output;
+    double *at_stations; /* [stations] scratch */
+    double start_volume;
+    double largest_loss;   /* |V - V0 - inflow|, m3 */
+    double largest_set_up; /* integral of b |eta| / 2, m3 */
+    double area;
+} leg;
+
+static int by_time(const void *a, const void *b) {
+    const int64_t left = *(const int64_t *)a;
+    const int64_t right = *(const int64_t *)b;
+    return (left > right) - (left < right);
+}
+
+/* Times around sample i at which the wind may bend or jump. */
+static size_t sample_breaks(const lee_run_wind *wind, size_t i, int64_t at[2]) {
+    const int64_t time = wind->record->time[i];
+    const int64_t half = wind->step / 2;
+    switch (wind->record->stamp) {
+    case LEE_STAMP_INSTANT:
+        at[0] = time;
+        return 1;
+    case LEE_STAMP_START:
+        at[0] = time;
+        at[1] = time + wind->step;
+        return 2;
+    case LEE_STAMP_MIDDLE:
+        at[0] = time - half;
+        at[1] = time - half + wind->step;
+        return 2;
+    case LEE_STAMP_END:
+        at[0] = time - wind->step;
+        at[1] = time;
+        return 2;
+    }
+    return 0;
+}
+
+static void add_break(leg *l, int64_t time) {
+    if (time >= l->span->from && time <= l->span->to) {
+        l->breaks[l->break_count++] = time;
+    }
+}
+
+static lee_status gather_breaks(leg *l, lee_error *error) {
+    const lee_course *course = l->course;
+    const lee_wind_piece *piece = &l->span->piece;
+    const size_t room =
+        2 * (piece->end - piece->first) + course->time_count + 2;
+    l->breaks = calloc(room, sizeof *l->breaks);
+    if (l->breaks == NULL) {
+        return lee_fail(error, LEE_ERR_MEMORY, "no room for %zu times", room);
+    }
+    add_break(l, l->span->from);
+    add_break(l, l->span->to);
+    for (size_t i = piece->first; i < piece->end; i++) {
+        int64_t at[2];
+        const size_t count = sample_breaks(course->wind, i, at);
+        for (size_t k = 0; k < count; k++) {
+            add_break(l, at[k]);
+        }
+    }
+    for (size_t i = 0; i < course->time_count; i++) {
+        add_break(l, course->time[i]);
+    }
+    qsort(l->breaks, l->break_count, sizeof *l->breaks, by_time);
+    size_t kept = 1;
+    for (size_t i = 1; i < l->break_count; i++) {
+        if (l->breaks[i] != l->breaks[kept - 1]) {
+            l->breaks[kept++] = l->breaks[i];
+        }
+    }
+    l->break_count = kept;
+    return LEE_OK;
+}
+
+/* Levels of equilibrium with the wind at the begin of the span. */
+static lee_status steady_levels(leg *l, const lee_profile *profile,
+                                double level[], lee_error *error) {
+    const lee_course *course = l->course;
+    double wind[2];
+    lee_steady steady = {0};
+    lee_drive_wind(&l->drive, 0.0, wind);
+    lee_steady_input input = {
+        .profile = profile,
+        .still_water = course->setting->still_water,
+        .return_flow = 1.0, /* lambda is in the pull */
+        .water_density = course->setting->fluids.water_density,
+        .gravity = course->setting->gravity,
+        .dry_depth = course->problem->solver.dry_depth,
+        .start_level = course->setting->start_level,
+        .end_level = course->setting->end_level,
+    };
+    lee_drive_pull(&l->drive, wind, input.stress);
+    const lee_status status = lee_steady_solve(&input, &steady, error);
+    for (size_t i = 0; i < l->channel->nodes && status == LEE_OK; i++) {
+        const double found =
+            lee_steady_level_at(&steady, l->channel->chainage[i]);
+        level[i] = isnan(found) ? l->channel->bed[i] : found;
+    }
+    lee_steady_free(&steady);
+    return status;
+}
+
+static lee_status start_engine(leg *l, const lee_profile *profile,
+                               lee_error *error) {
+    const size_t n = l->channel->nodes;
+    double *level = calloc(n, sizeof *level);
+    if (level == NULL) {
+        return lee_fail(error, LEE_ERR_MEMORY, "no room for %zu levels", n);
+    }
+    lee_status status = LEE_OK;
+    for (size_t i = 0; i < n; i++) {
+        level[i] = fmax(l->channel->bed[i], l->course->setting->still_water);
+        l->area += l->channel->area[i] *
+                   (l->course->setting->still_water > l->channel->bed[i]);
+    }
+    if (l->span->starts_steady) {
+        status = steady_levels(l, profile, level, error);
+    }
+    if (status == LEE_OK) {
+        lee_transient_start(l->engine, 0.0, level);
+        l->start_volume = lee_transient_volume(l->engine);
+    }
+    free(level);
+    return status;
+}
+
+/* Keeps the volume's books at an output time. */
+static void audit(leg *l) {
+    const double *level = lee_transient_level(l->engine);
+    const double loss = lee_transient_volume(l->engine) - l->start_volume -
+                        lee_transient_inflow(l->engine);
+    double moved = 0.0;
+    for (size_t i = 0; i < l->channel->nodes; i++) {
+        const double still =
+            fmax(l->channel->bed[i], l->course->setting->still_water);
+        moved += 0.5 * l->channel->area[i] * fabs(level[i] - still);
+    }
+    l->largest_loss = fmax(l->largest_loss, fabs(loss));
+    l->largest_set_up = fmax(l->largest_set_up, moved);
+}
+
+/* Looks at the stations at the engine's present time. */
+static void look(leg *l) {
+    const lee_course *course = l->course;
+    const double time = (double)l->span->from + lee_transient_time(l->engine);
+    for (size_t i = 0; i < course->watch->count; i++) {
+        l->at_stations[i] =
+            lee_transient_level_at(l->engine, course->watch->station[i].at);
+    }
+    lee_watch_see(course->watch, time, l->at_stations,
+                  time >= (double)l->span->judged_from);
+}
+
+/* Writes levels when `time` is an output time. */
+static void write_levels(leg *l, int64_t time) {
+    const lee_course *course = l->course;
+    if (l->next_output >= course->time_count ||
+        course->time[l->next_output] != time) {
+        return;
+    }
+    audit(l);
+    for (size_t i = 0; course->level != NULL && i < course->watch->count; i++) {
+        course->level[i][l->next_output] = l->at_stations[i];
+    }
+    l->next_output++;
+}
+
+static lee_status go_to(leg *l, int64_t from, int64_t to, lee_error *error) {
+    const double distance = (double)(to - from);
+    const double parts = fmax(1.0, ceil(distance / l->course->step - 1e-9));
+    const double end = (double)(to - l->span->from);
+    for (double k = 0.0; k < parts; k += 1.0) {
+        const double now = lee_transient_time(l->engine);
+        const double step = (end - now) / (parts - k);
+        const lee_status status = lee_transient_step(
+            l->engine, step, lee_drive_forcing, &l->drive, error);
+        if (status != LEE_OK) {
+            return status;
+        }
+        look(l);
+    }
+    l->course->progress->done += parts * (double)l->channel->nodes;
+    return LEE_OK;
+}
+
+static lee_status tell_progress(const lee_progress *progress,
+                                lee_error *error) {
+    const lee_run_options *options = progress->options;
+    if (options->keep_going != NULL &&
+        !options->keep_going(options->user,
+                             fmin(1.0, progress->done / progress->total))) {
+        return lee_fail(error, LEE_ERR_INTERRUPTED, "interrupted");
+    }
+    return LEE_OK;
+}
+
+static lee_status run_leg(leg *l, lee_error *error) {
+    lee_watch_break(l->course->watch);
+    while (l->next_output < l->course->time_count &&
+           l->course->time[l->next_output] < l->span->from) {
+        l->next_output++;
+    }
+    look(l);
+    write_levels(l, l->span->from);
+    for (size_t i = 1; i < l->break_count; i++) {
+        lee_status status = go_to(l, l->breaks[i - 1], l->breaks[i], error);
+        if (status == LEE_OK) {
+            status = tell_progress(l->course->progress, error);
+        }
+        if (status != LEE_OK) {
+            return status;
+        }
+        write_levels(l, l->breaks[i]);
+    }
+    audit(l);
+    return LEE_OK;
+}
+
+static lee_transient_options engine_options(const lee_course *course) {
+    const lee_problem *problem = course->problem;
+    lee_transient_options options = lee_transient_defaults();
+    options.gravity = course->setting->gravity;
+    options.water_density = course->setting->fluids.water_density;
+    options.return_flow = 1.0; /* lambda is in the pull */
+    options.bed = lee_member_bed(&problem->bed, course->member.bed_share);
+    options.dry_depth = problem->solver.dry_depth;
+    options.has_advection = problem->solver.has_advection;
+    options.start_held = problem->lake.start.is_held;
+    options.end_held = problem->lake.end.is_held;
+    return options;
+}
+
+static lee_status prepare_leg(leg *l, const lee_profile *profile,
+                              lee_error *error) {
+    const lee_course *course = l->course;
+    const lee_transient_options options = engine_options(course);
+    l->drive = (lee_drive){
+        .problem = course->problem,
+        .setting = course->setting,
+        .table = course->table,
+        .wind = course->wind,
+        .pull = course->member.pull,
+        .piece = l->span->piece,
+        .zero = l->span->from,
+    };
+    l->at_stations = calloc(course->watch->count + 1, sizeof(double));
+    if (l->at_stations == NULL) {
+        return lee_fail(error, LEE_ERR_MEMORY, "no room for stations");
+    }
+    lee_status status = lee_drive_init(l->channel, &l->drive, error);
+    if (status == LEE_OK) {
+        status = lee_transient_new(l->channel, &options, &l->engine, error);
+    }
+    if (status == LEE_OK) {
+        status = gather_breaks(l, error);
+    }
+    return status == LEE_OK ? start_engine(l, profile, error) : status;
+}
+
+static lee_status run_span(const lee_course *course, const lee_span *span,
+                           const lee_profile *profile,
+                           const lee_channel *channel, double *defect,
+                           lee_error *error) {
+    leg l = {.course = course, .span = span, .channel = channel};
+    lee_status status = prepare_leg(&l, profile, error);
+    if (status == LEE_OK) {
+        status = run_leg(&l, error);
+    }
+    *defect = fmax(*defect,
+                   l.largest_loss / fmax(l.largest_set_up, least_eta * l.area));
+    lee_transient_free(l.engine);
+    lee_drive_free(&l.drive);
+    free(l.breaks);
+    free(l.at_stations);
+    return status;
+}
+
+lee_status lee_course_run(const lee_course *course, double *volume_defect,
+                          lee_error *error) {
+    lee_profile profile = {0};
+    lee_channel channel = {0};
+    *volume_defect = 0.0;
+    lee_status status =
+        lee_member_profile(&course->problem->lake.profile,
+                           course->member.bed_shift, &profile, error);
+    if (status == LEE_OK) {
+        status =
+            lee_channel_from_profile(&profile, course->cells, &channel, error);
+    }
+    for (size_t i = 0; i < course->span_count && status == LEE_OK; i++) {
+        status = run_span(course, &course->span[i], &profile, &channel,
+                          volume_defect, error);
+    }
+    lee_watch_break(course->watch);
+    lee_channel_free(&channel);
+    lee_profile_free(&profile);
+    return status;
+}
+
+double lee_course_work(const lee_course *course) {
+    double seconds = 0.0;
+    for (size_t i = 0; i < course->span_count; i++) {
+        seconds += (double)(course->span[i].to - course->span[i].from);
+    }
+    return seconds / course->step * (double)course->cells;
+}

@@ -1,0 +1,214 @@
+/* drive.c - the wind of a run as a force on a channel, in time. */
+#include "series/drive.h"
+
+#include <math.h>
+#include <stdlib.h>
+
+/* Steps of made records, s (common practice: a 10 min mean). */
+static const int64_t made_step = 600;
+
+/* Rows of the pull tables each 0.1 m s-1, up to 100 m s-1. */
+static const double table_spacing = 0.1;
+enum { TABLE_ROWS = 1001 };
+
+/* One given wind that begins at once, lasts, and is followed by calm: a
+ * record of means, so that begin and end are sharp. */
+static lee_status given_record(const lee_given_wind *wind, int64_t start,
+                               double calm, lee_run_wind *made,
+                               lee_error *error) {
+    const int64_t duration = (int64_t)llround(wind->duration);
+    const int64_t parts = (duration + made_step - 1) / made_step;
+    const int64_t step = duration / parts;
+    const int64_t after = (int64_t)ceil(calm / (double)step);
+    const size_t n = (size_t)(parts + after);
+    const lee_status status = lee_wind_record_init(&made->made, n, error);
+    if (status != LEE_OK) {
+        return status;
+    }
+    made->made.stamp = LEE_STAMP_START;
+    made->step = step;
+    for (size_t i = 0; i < n; i++) {
+        made->made.time[i] = start + (int64_t)i * step;
+        lee_wind_components((int64_t)i < parts ? wind->speed : 0.0, wind->from,
+                            &made->made.east[i], &made->made.north[i]);
+    }
+    return LEE_OK;
+}
+
+static lee_status make_record(const lee_problem *problem, double calm,
+                              lee_run_wind *wind, lee_error *error) {
+    const lee_wind_source *source = &problem->wind;
+    const int64_t start = problem->run.has_from ? problem->run.from : 0;
+    wind->record = &wind->made;
+    wind->step = made_step;
+    if (source->kind == LEE_WIND_STORM) {
+        wind->starts_calm = !(source->storm.before > 0.0);
+        return lee_storm_record(&source->storm, start, made_step,
+                                (int64_t)ceil(calm), &wind->made, error);
+    }
+    wind->starts_calm = true;
+    if (source->given_count != 1 || !(source->given[0].duration >= 60.0)) {
+        return lee_fail(error, LEE_ERR_DATA,
+                        "a run of a given wind needs one wind with a duration "
+                        "of at least 1 min");
+    }
+    return given_record(&source->given[0], start, calm, wind, error);
+}
+
+static lee_status find_pieces(const lee_problem *problem, lee_run_wind *wind,
+                              lee_error *error) {
+    lee_wind_check check = {0};
+    lee_status status =
+        lee_wind_check_record(wind->record, &problem->wind.gap, &check, error);
+    if (status == LEE_OK) {
+        wind->step = wind->made.n > 0 ? wind->step : check.step;
+        status = lee_wind_pieces(wind->record, &problem->wind.gap, &wind->piece,
+                                 &wind->count, error);
+    }
+    lee_wind_check_free(&check);
+    return status;
+}
+
+lee_status lee_run_wind_init(const lee_problem *problem, double calm,
+                             lee_run_wind *wind, lee_error *error) {
+    *wind = (lee_run_wind){0};
+    lee_status status = LEE_OK;
+    switch (problem->wind.kind) {
+    case LEE_WIND_RECORD:
+        wind->record = &problem->wind.record;
+        break;
+    case LEE_WIND_STORM:
+    case LEE_WIND_GIVEN:
+        status = make_record(problem, calm, wind, error);
+        break;
+    case LEE_WIND_NONE:
+    case LEE_WIND_SCAN:
+        status = lee_fail(error, LEE_ERR_DATA,
+                          "a run needs a wind record, a storm, or one given "
+                          "wind with a duration");
+        break;
+    }
+    if (status == LEE_OK) {
+        status = find_pieces(problem, wind, error);
+    }
+    if (status != LEE_OK) {
+        lee_run_wind_free(wind);
+    }
+    return status;
+}
+
+void lee_run_wind_free(lee_run_wind *wind) {
+    free(wind->piece);
+    lee_wind_record_free(&wind->made);
+    *wind = (lee_run_wind){0};
+}
+
+lee_status lee_pull_table_init(const lee_problem *problem,
+                               const lee_setting *setting,
+                               lee_pull_table *table, lee_error *error) {
+    *table = (lee_pull_table){
+        .problem = problem,
+        .setting = setting,
+        .n = TABLE_ROWS,
+        .low = calloc(TABLE_ROWS, sizeof *table->low),
+        .high = calloc(TABLE_ROWS, sizeof *table->high),
+    };
+    if (table->low == NULL || table->high == NULL) {
+        lee_pull_table_free(table);
+        return lee_fail(error, LEE_ERR_MEMORY, "no room for the range");
+    }
+    for (size_t i = 1; i < TABLE_ROWS; i++) {
+        const double speed = (double)i * table_spacing;
+        const lee_pull_range range = lee_setting_pull(problem, setting, speed);
+        table->low[i] = range.low / (speed * speed);
+        table->high[i] = range.high / (speed * speed);
+    }
+    table->low[0] = table->low[1];
+    table->high[0] = table->high[1];
+    return LEE_OK;
+}
+
+void lee_pull_table_free(lee_pull_table *table) {
+    free(table->low);
+    free(table->high);
+    *table = (lee_pull_table){0};
+}
+
+lee_status lee_drive_init(const lee_channel *channel, lee_drive *drive,
+                          lee_error *error) {
+    drive->links = channel->links;
+    drive->sine = calloc(channel->links, sizeof *drive->sine);
+    drive->cosine = calloc(channel->links, sizeof *drive->cosine);
+    if (drive->sine == NULL || drive->cosine == NULL) {
+        lee_drive_free(drive);
+        return lee_fail(error, LEE_ERR_MEMORY, "no room for %zu links",
+                        channel->links);
+    }
+    for (size_t i = 0; i < channel->links; i++) {
+        drive->sine[i] = sin(channel->bearing[i]);
+        drive->cosine[i] = cos(channel->bearing[i]);
+    }
+    return LEE_OK;
+}
+
+void lee_drive_free(lee_drive *drive) {
+    free(drive->sine);
+    free(drive->cosine);
+    drive->sine = NULL;
+    drive->cosine = NULL;
+}
+
+void lee_drive_wind(lee_drive *drive, double t, double at[2]) {
+    lee_wind_at(drive->wind->record, &drive->piece, drive->wind->step,
+                (double)drive->zero + t, at, &drive->hint);
+}
+
+/* Pull over speed squared of a bound, Pa s2 m-2. */
+static double tabled(const lee_pull_table *table, const double column[],
+                     double speed) {
+    const double place =
+        fmin(speed / table_spacing, (double)(table->n - 1) - 1e-9);
+    const size_t row = (size_t)place;
+    const double share = place - (double)row;
+    return column[row] + share * (column[row + 1] - column[row]);
+}
+
+void lee_drive_pull(const lee_drive *drive, const double wind[2],
+                    double pull[2]) {
+    const double speed = hypot(wind[0], wind[1]);
+    double per_speed = 0.0; /* pull over speed, Pa s m-1 */
+    if (speed > 0.0 && drive->pull == LEE_PULL_MAIN) {
+        lee_drag_input in = drive->setting->fluids;
+        in.speed = lee_setting_speed(drive->problem, drive->setting, speed);
+        per_speed =
+            drive->setting->return_flow * in.air_density *
+            lee_drag_coefficient(&drive->problem->drag, &in, NULL, NULL) *
+            in.speed * in.speed / speed;
+    } else if (speed > 0.0) {
+        const double *column = drive->pull == LEE_PULL_LOW ? drive->table->low
+                                                           : drive->table->high;
+        per_speed = tabled(drive->table, column, speed) * speed;
+    }
+    pull[0] = per_speed * wind[0];
+    pull[1] = per_speed * wind[1];
+}
+
+void lee_drive_forcing(void *user, double t, lee_forcing *forcing) {
+    lee_drive *drive = user;
+    double wind[2];
+    double pull[2];
+    lee_drive_wind(drive, t, wind);
+    lee_drive_pull(drive, wind, pull);
+    for (size_t i = 0; i < drive->links; i++) {
+        forcing->stress[i] =
+            pull[0] * drive->sine[i] + pull[1] * drive->cosine[i];
+    }
+    const lee_lake *lake = &drive->problem->lake;
+    const double time = (double)drive->zero + t;
+    if (lake->start.is_held) {
+        forcing->start_level = lee_level_at(&lake->start.level, time);
+    }
+    if (lake->end.is_held) {
+        forcing->end_level = lee_level_at(&lake->end.level, time);
+    }
+}

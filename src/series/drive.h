@@ -1,0 +1,69 @@
+/* drive.h - the wind of a run as a force on a channel, in time. */
+#ifndef LEEWATER_SERIES_DRIVE_H
+#define LEEWATER_SERIES_DRIVE_H
+
+#include "leewater/series.h"
+#include "series/members.h"
+#include "series/setting.h"
+
+/* The wind of a run: the problem's own record, or one made from a storm or a
+ * given wind. Owns `made` and `piece`. */
+typedef struct lee_run_wind {
+    const lee_wind_record *record; /* the problem's, or &made */
+    lee_wind_record made;
+    int64_t step; /* usual step of the record, s */
+    size_t count;
+    lee_wind_piece *piece; /* [count] */
+    bool starts_calm;      /* made: rest is the true state at its begin */
+} lee_run_wind;
+
+/* Finds the record and its pieces. `calm` is how long (s) a made record goes
+ * on after its wind.
+ * Errors: LEE_ERR_DATA, LEE_ERR_MEMORY. */
+lee_status lee_run_wind_init(const lee_problem *problem, double calm,
+                             lee_run_wind *wind, lee_error *error);
+void lee_run_wind_free(lee_run_wind *wind);
+
+/* Pull by measured speed for the bounds of a range, as a share of speed
+ * squared; tables by speed, linear between rows. Owns its table. */
+typedef struct lee_pull_table {
+    const lee_problem *problem;
+    const lee_setting *setting;
+    size_t n;
+    double *low;  /* [n] Pa s2 m-2 */
+    double *high; /* [n] */
+} lee_pull_table;
+lee_status lee_pull_table_init(const lee_problem *problem,
+                               const lee_setting *setting,
+                               lee_pull_table *table, lee_error *error);
+void lee_pull_table_free(lee_pull_table *table);
+
+/* Force on one channel in one piece. Owns sine and cosine, borrows the rest. */
+typedef struct lee_drive {
+    const lee_problem *problem;
+    const lee_setting *setting;
+    const lee_pull_table *table;
+    const lee_run_wind *wind;
+    lee_pull pull;
+    lee_wind_piece piece;
+    int64_t zero; /* s since 1970 of the engine's time 0 */
+    size_t hint;
+    size_t links;
+    double *sine; /* [links] of the bearing */
+    double *cosine;
+} lee_drive;
+lee_status lee_drive_init(const lee_channel *channel, lee_drive *drive,
+                          lee_error *error);
+void lee_drive_free(lee_drive *drive);
+
+/* Measured wind (east, north) at engine time t. */
+void lee_drive_wind(lee_drive *drive, double t, double at[2]);
+
+/* Pull vector (east, north), Pa, of a measured wind. */
+void lee_drive_pull(const lee_drive *drive, const double wind[2],
+                    double pull[2]);
+
+/* The engine's callback: user is a lee_drive. */
+void lee_drive_forcing(void *user, double t, lee_forcing *forcing);
+
+#endif

@@ -1,0 +1,430 @@
+/* run_estimate.c - levels in time with their range for a wind record. */
+#include <math.h>
+#include <stdlib.h>
+
+#include "leewater/calendar.h"
+#include "leewater/series.h"
+#include "series/own_error.h"
+#include "series/run_plan.h"
+
+/* The residual seiche is looked for once the pull is below this share of the
+ * strongest, over this many first periods (design choices). */
+static const double dropped_share = 0.25;
+static const double residual_periods = 2.0;
+
+/* An own error above these is warned of (docs/theory.md, "Own numerical
+ * error"). */
+static const double error_share = 0.01;
+static const double error_least = 2e-3; /* m */
+
+lee_run_options lee_run_options_default(void) {
+    return (lee_run_options){
+        .has_range = true, .keep_range = false, .has_own_error = true};
+}
+
+/* All that is at hand while a run is estimated. */
+typedef struct workshop {
+    const lee_problem *problem;
+    const lee_run_options *options;
+    lee_run_plan plan;
+    lee_pull_table table;
+    lee_member member[LEE_MEMBERS];
+    size_t member_count;
+    double residual_from;
+    double residual_to;
+    lee_progress progress;
+    lee_run_result *result;
+} workshop;
+
+static bool is_in_spans(const lee_run_plan *plan, int64_t time) {
+    for (size_t i = 0; i < plan->span_count; i++) {
+        if (time >= plan->span[i].judged_from && time <= plan->span[i].to) {
+            return true;
+        }
+    }
+    return false;
+}
+
+/* When the wind has dropped after its strongest moment. */
+static void find_residual_window(workshop *shop) {
+    const lee_run_plan *plan = &shop->plan;
+    const lee_wind_record *record = plan->wind.record;
+    double strongest = 0.0;
+    size_t peak = 0;
+    for (size_t i = 0; i < record->n; i++) {
+        if (plan->pull[i] > strongest && is_in_spans(plan, record->time[i])) {
+            strongest = plan->pull[i];
+            peak = i;
+        }
+    }
+    shop->residual_from = NAN;
+    shop->residual_to = NAN;
+    for (size_t i = peak + 1; i < record->n && strongest > 0.0; i++) {
+        if (plan->pull[i] < dropped_share * strongest) {
+            shop->residual_from = (double)record->time[i];
+            shop->residual_to =
+                shop->residual_from + residual_periods * plan->first_period;
+            return;
+        }
+    }
+}
+
+static lee_course course_of(workshop *shop, const lee_member *member) {
+    return (lee_course){
+        .problem = shop->problem,
+        .setting = &shop->plan.setting,
+        .wind = &shop->plan.wind,
+        .table = &shop->table,
+        .member = *member,
+        .cells = shop->plan.cells,
+        .step = shop->plan.step,
+        .span_count = shop->plan.span_count,
+        .span = shop->plan.span,
+        .time_count = shop->plan.time_count,
+        .time = shop->plan.time,
+        .progress = &shop->progress,
+    };
+}
+
+/* Levels [stations][times], or NULL. */
+static double **levels_init(size_t stations, size_t times, lee_error *error) {
+    double **level = calloc(stations + 1, sizeof *level);
+    for (size_t i = 0; level != NULL && i < stations; i++) {
+        level[i] = calloc(times, sizeof *level[i]);
+        if (level[i] == NULL) {
+            for (size_t k = 0; k < i; k++) {
+                free(level[k]);
+            }
+            free(level);
+            level = NULL;
+        }
+    }
+    if (level == NULL) {
+        (void)lee_fail(error, LEE_ERR_MEMORY, "no room for %zu levels",
+                       stations * times);
+    }
+    return level;
+}
+
+static void levels_free(double **level, size_t stations) {
+    for (size_t i = 0; level != NULL && i < stations; i++) {
+        free(level[i]);
+    }
+    free(level);
+}
+
+static void note_seen(lee_run_result *result, const lee_watch *watch) {
+    for (size_t i = 0; i < watch->count; i++) {
+        lee_station_series *station = &result->station[i];
+        const lee_watched_station *seen = &watch->station[i];
+        station->max.low = fmin(station->max.low, seen->max);
+        station->max.high = fmax(station->max.high, seen->max);
+        station->min.low = fmin(station->min.low, seen->min);
+        station->min.high = fmax(station->min.high, seen->min);
+    }
+}
+
+/* Takes the levels of the estimate itself into the result. */
+static void take_levels(lee_run_result *result, double **level) {
+    for (size_t i = 0; i < result->station_count; i++) {
+        result->station[i].level = level[i];
+        level[i] = NULL;
+    }
+}
+
+/* Widens the kept range by the levels of a member. */
+static void widen_range(lee_run_result *result, double **level) {
+    for (size_t i = 0; i < result->station_count; i++) {
+        lee_station_series *station = &result->station[i];
+        for (size_t k = 0; k < result->n && station->low != NULL; k++) {
+            station->low[k] = fmin(station->low[k], level[i][k]);
+            station->high[k] = fmax(station->high[k], level[i][k]);
+        }
+    }
+}
+
+static lee_status open_range(lee_run_result *result, lee_error *error) {
+    for (size_t i = 0; i < result->station_count; i++) {
+        lee_station_series *station = &result->station[i];
+        station->low = calloc(result->n, sizeof *station->low);
+        station->high = calloc(result->n, sizeof *station->high);
+        if (station->low == NULL || station->high == NULL) {
+            return lee_fail(error, LEE_ERR_MEMORY, "no room for the range");
+        }
+        for (size_t k = 0; k < result->n; k++) {
+            station->low[k] = station->level[k];
+            station->high[k] = station->level[k];
+        }
+    }
+    return LEE_OK;
+}
+
+static lee_status run_main(workshop *shop, lee_watch *watch, double **level,
+                           lee_error *error) {
+    lee_run_result *result = shop->result;
+    lee_course course = course_of(shop, &shop->member[0]);
+    course.watch = watch;
+    course.level = level;
+    watch->still_water = shop->plan.setting.still_water;
+    watch->residual_from = shop->residual_from;
+    watch->residual_to = shop->residual_to;
+    lee_status status = lee_course_run(&course, &result->volume_defect, error);
+    for (size_t i = 0; i < watch->count && status == LEE_OK; i++) {
+        status = lee_watch_tell(&watch->station[i], &result->station[i], error);
+    }
+    if (status == LEE_OK) {
+        take_levels(result, level);
+    }
+    if (status == LEE_OK && shop->options->keep_range) {
+        status = open_range(result, error);
+    }
+    return status;
+}
+
+static lee_status run_bound(workshop *shop, const lee_member *member,
+                            lee_watch *watch, double **level,
+                            lee_error *error) {
+    double defect;
+    lee_course course = course_of(shop, member);
+    course.watch = watch;
+    course.level = shop->options->keep_range ? level : NULL;
+    const lee_status status = lee_course_run(&course, &defect, error);
+    if (status == LEE_OK) {
+        note_seen(shop->result, watch);
+        widen_range(shop->result, level);
+    } else if (status != LEE_ERR_INTERRUPTED) {
+        lee_context(error, "in a member of the range (bed %+.3g m): ",
+                    member->bed_shift);
+    }
+    return status;
+}
+
+static lee_status run_member(workshop *shop, size_t index, lee_error *error) {
+    const lee_problem *problem = shop->problem;
+    lee_watch watch = {0};
+    double **level =
+        levels_init(problem->station_count, shop->plan.time_count, error);
+    lee_status status = level == NULL ? LEE_ERR_MEMORY : LEE_OK;
+    if (status == LEE_OK) {
+        status = lee_watch_init(problem->station_count, problem->station,
+                                &watch, error);
+    }
+    if (status == LEE_OK && index == 0) {
+        status = run_main(shop, &watch, level, error);
+    } else if (status == LEE_OK) {
+        status = run_bound(shop, &shop->member[index], &watch, level, error);
+    }
+    lee_watch_free(&watch);
+    levels_free(level, problem->station_count);
+    return status;
+}
+
+static void count_work(workshop *shop) {
+    lee_progress *progress = &shop->progress;
+    progress->options = shop->options;
+    for (size_t i = 0; i < shop->member_count; i++) {
+        const lee_course course = course_of(shop, &shop->member[i]);
+        progress->total += lee_course_work(&course);
+    }
+    if (shop->options->has_own_error) {
+        progress->total += lee_own_error_work(shop->problem, &shop->plan);
+    }
+}
+
+static lee_status find_own_error(workshop *shop, lee_error *error) {
+    lee_run_result *result = shop->result;
+    lee_own_error own;
+    const lee_status status = lee_own_error_find(shop->problem, &shop->plan,
+                                                 &shop->progress, &own, error);
+    if (status != LEE_OK) {
+        return status;
+    }
+    result->numerical_error = own.total;
+    result->numerical_error_time = own.time;
+    result->numerical_error_space = own.space;
+    double largest = 0.0;
+    for (size_t i = 0; i < result->station_count; i++) {
+        const lee_station_series *station = &result->station[i];
+        largest = fmax(largest, station->max.value - result->still_water);
+        largest = fmax(largest, result->still_water - station->min.value);
+    }
+    if (own.total > fmax(error_least, error_share * largest)) {
+        return lee_notes_add(&result->warnings, error,
+                             "own numerical error %.1f mm (%.1f from the step, "
+                             "%.1f from the cells): a smaller solver.step or "
+                             "more solver.cells lower it",
+                             1e3 * own.total, 1e3 * own.time, 1e3 * own.space);
+    }
+    return LEE_OK;
+}
+
+/* Wind of the output times. */
+static lee_status tell_wind(workshop *shop, lee_error *error) {
+    lee_run_result *result = shop->result;
+    const lee_run_plan *plan = &shop->plan;
+    result->speed = calloc(result->n, sizeof *result->speed);
+    result->from = calloc(result->n, sizeof *result->from);
+    if (result->speed == NULL || result->from == NULL) {
+        return lee_fail(error, LEE_ERR_MEMORY, "no room for the wind");
+    }
+    size_t s = 0;
+    size_t hint = 0;
+    for (size_t i = 0; i < result->n; i++) {
+        while (s + 1 < plan->span_count && result->time[i] > plan->span[s].to) {
+            s++;
+            hint = 0;
+        }
+        double wind[2];
+        double measured;
+        lee_wind_at(plan->wind.record, &plan->span[s].piece, plan->wind.step,
+                    (double)result->time[i], wind, &hint);
+        lee_wind_speed_from(wind[0], wind[1], &measured, &result->from[i]);
+        result->speed[i] =
+            lee_setting_speed(shop->problem, &plan->setting, measured);
+    }
+    return LEE_OK;
+}
+
+static double fastest_of(const lee_wind_record *record) {
+    double fastest = 0.0;
+    for (size_t i = 0; i < record->n; i++) {
+        fastest = fmax(fastest, hypot(record->east[i], record->north[i]));
+    }
+    return fastest;
+}
+
+static lee_status warn_of_drag(workshop *shop, double fastest,
+                               lee_error *error) {
+    const lee_problem *problem = shop->problem;
+    lee_drag_input in = shop->plan.setting.fluids;
+    in.speed = lee_setting_speed(problem, &shop->plan.setting, fastest);
+    bool extrapolated = false;
+    bool capped = false;
+    (void)lee_drag_coefficient(&problem->drag, &in, &extrapolated, &capped);
+    lee_notes *warnings = &shop->result->warnings;
+    lee_status status = LEE_OK;
+    if (extrapolated) {
+        status = lee_notes_add(warnings, error,
+                               "drag extrapolated: the strongest wind, %.1f "
+                               "m/s, is outside the range that %s was fitted "
+                               "on",
+                               in.speed, shop->result->method.drag);
+    }
+    if (status == LEE_OK && capped) {
+        status = lee_notes_add(warnings, error,
+                               "drag coefficient held at its cap %.4f in the "
+                               "strongest wind",
+                               problem->drag.cap);
+    }
+    return status;
+}
+
+static lee_status tell_method(workshop *shop, lee_error *error) {
+    const lee_problem *problem = shop->problem;
+    lee_run_result *result = shop->result;
+    const double fastest = fastest_of(shop->plan.wind.record);
+    lee_status status = lee_setting_tell(problem, &shop->plan.setting, fastest,
+                                         &result->method, error);
+    if (status == LEE_OK && problem->wind.kind == LEE_WIND_RECORD) {
+        lee_wind_check check = {0};
+        status = lee_wind_check_record(&problem->wind.record,
+                                       &problem->wind.gap, &check, error);
+        if (status == LEE_OK) {
+            status = lee_record_tell(&check, &problem->wind.gap,
+                                     &result->method.record, error);
+        }
+        lee_wind_check_free(&check);
+    }
+    return status == LEE_OK ? warn_of_drag(shop, fastest, error) : status;
+}
+
+/* Moves what the plan and the result share. */
+static lee_status open_result(workshop *shop, lee_error *error) {
+    lee_run_result *result = shop->result;
+    lee_run_plan *plan = &shop->plan;
+    result->still_water = plan->setting.still_water;
+    result->n = plan->time_count;
+    result->cells = plan->cells;
+    result->step = plan->step;
+    result->first_period = plan->first_period;
+    result->pieces = plan->span_count;
+    result->numerical_error = NAN;
+    result->numerical_error_time = NAN;
+    result->numerical_error_space = NAN;
+    result->time = calloc(result->n, sizeof *result->time);
+    result->is_spin_up = calloc(result->n, sizeof *result->is_spin_up);
+    result->station =
+        calloc(shop->problem->station_count + 1, sizeof *result->station);
+    if (result->time == NULL || result->is_spin_up == NULL ||
+        result->station == NULL) {
+        return lee_fail(error, LEE_ERR_MEMORY, "no room for the result");
+    }
+    result->station_count = shop->problem->station_count;
+    for (size_t i = 0; i < result->n; i++) {
+        result->time[i] = plan->time[i];
+        result->is_spin_up[i] = plan->is_spin_up[i];
+    }
+    return LEE_OK;
+}
+
+static lee_status estimate(workshop *shop, lee_error *error) {
+    lee_status status = open_result(shop, error);
+    if (status == LEE_OK) {
+        status = tell_method(shop, error);
+    }
+    if (status == LEE_OK) {
+        status = tell_wind(shop, error);
+    }
+    if (status == LEE_OK) {
+        status = lee_pull_table_init(shop->problem, &shop->plan.setting,
+                                     &shop->table, error);
+    }
+    shop->member_count = lee_members_list(shop->problem, shop->member);
+    if (!shop->options->has_range) {
+        shop->member_count = 1;
+    }
+    find_residual_window(shop);
+    count_work(shop);
+    for (size_t i = 0; i < shop->member_count && status == LEE_OK; i++) {
+        status = run_member(shop, i, error);
+    }
+    if (status == LEE_OK && shop->options->has_own_error) {
+        status = find_own_error(shop, error);
+    }
+    return status;
+}
+
+lee_status lee_estimate_run(const lee_problem *problem,
+                            const lee_run_options *options,
+                            lee_run_result *result, lee_error *error) {
+    *result = (lee_run_result){0};
+    workshop shop = {.problem = problem, .options = options, .result = result};
+    lee_status status =
+        lee_run_plan_init(problem, &shop.plan, &result->warnings, error);
+    if (status == LEE_OK) {
+        status = estimate(&shop, error);
+    }
+    lee_pull_table_free(&shop.table);
+    lee_run_plan_free(&shop.plan);
+    if (status != LEE_OK) {
+        lee_run_result_free(result);
+    }
+    return status;
+}
+
+void lee_run_result_free(lee_run_result *result) {
+    for (size_t i = 0; i < result->station_count; i++) {
+        free(result->station[i].level);
+        free(result->station[i].low);
+        free(result->station[i].high);
+        free(result->station[i].exceedance);
+    }
+    free(result->station);
+    free(result->time);
+    free(result->speed);
+    free(result->from);
+    free(result->is_spin_up);
+    lee_method_free(&result->method);
+    lee_notes_free(&result->warnings);
+    *result = (lee_run_result){0};
+}

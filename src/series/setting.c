@@ -1,0 +1,142 @@
+/* setting.c - densities, return flow and the pull of the wind. */
+#include "series/setting.h"
+
+#include <math.h>
+#include <stdio.h>
+
+#include "base/constants.h"
+
+double lee_air_density_of(const lee_air *air, double altitude, size_t size,
+                          char text[]) {
+    if (!isnan(air->density)) {
+        (void)snprintf(text, size, "given");
+        return air->density;
+    }
+    const bool has_pressure = !isnan(air->pressure);
+    const bool has_temperature = !isnan(air->temperature);
+    const double height = isnan(altitude) ? 0.0 : altitude;
+    const double pressure =
+        has_pressure ? air->pressure : lee_standard_pressure(height);
+    const double temperature = has_temperature ? air->temperature : 288.15;
+    (void)snprintf(text, size, "dry air at %.1f hPa (%s) and %.1f degC (%s)",
+                   pressure / 100.0,
+                   has_pressure      ? "given"
+                   : isnan(altitude) ? "standard, sea level"
+                                     : "standard at the lake's altitude",
+                   temperature - lee_celsius_zero,
+                   has_temperature ? "given" : "assumed");
+    return lee_air_density(pressure, temperature);
+}
+
+static double highest_return_flow(const lee_problem *problem,
+                                  const lee_setting *setting) {
+    const bool is_open =
+        !isnan(setting->start_level) || !isnan(setting->end_level);
+    const double share =
+        isnan(problem->uncertainty.bed) ? 0.0 : problem->uncertainty.bed;
+    const lee_return_flow computed = {.is_computed = true};
+    double highest = setting->return_flow;
+    for (int sign = -1; sign <= 1; sign += 2) {
+        lee_bed_law bed = problem->bed;
+        bed.value *= 1.0 + sign * share;
+        highest = fmax(highest, lee_return_flow_factor(
+                                    &computed, &bed, setting->lake.mean_depth,
+                                    setting->gravity, is_open));
+    }
+    return highest + lee_return_flow_margin;
+}
+
+static void settle_return_flow(const lee_problem *problem,
+                               lee_setting *setting) {
+    const lee_lake *lake = &problem->lake;
+    const lee_drag_relation *relation = problem->drag.relation;
+    const bool is_open = lake->start.is_held || lake->end.is_held;
+    setting->return_flow_forced =
+        (relation != NULL && relation->includes_return_flow) ||
+        (is_open && !problem->return_flow_given);
+    setting->return_flow = lee_return_flow_factor(
+        &problem->return_flow, &problem->bed, setting->lake.mean_depth,
+        setting->gravity, setting->return_flow_forced);
+    setting->return_flow_high = highest_return_flow(problem, setting);
+}
+
+lee_status lee_setting_init(const lee_problem *problem, double time,
+                            lee_setting *setting, lee_error *error) {
+    const lee_lake *lake = &problem->lake;
+    char how[160];
+    *setting = (lee_setting){
+        .still_water = lee_level_at(&lake->still_water, time),
+        .gravity = lake->gravity,
+        .start_level = NAN,
+        .end_level = NAN,
+    };
+    setting->fluids = (lee_drag_input){
+        .air_density =
+            lee_air_density_of(&problem->air, lake->altitude, sizeof how, how),
+        .water_density = lake->water_density,
+    };
+    setting->lake = lee_profile_summary(&lake->profile, setting->still_water);
+    if (!(setting->lake.volume > 0.0)) {
+        return lee_fail(error, LEE_ERR_DATA,
+                        "the lake holds no water at the still-water level "
+                        "%.3f m: its bed is nowhere below it",
+                        setting->still_water);
+    }
+    if (lake->start.is_held) {
+        setting->start_level = lee_level_at(&lake->start.level, time);
+    }
+    if (lake->end.is_held) {
+        setting->end_level = lee_level_at(&lake->end.level, time);
+    }
+    settle_return_flow(problem, setting);
+    return LEE_OK;
+}
+
+static double stress_of(const lee_problem *problem, const lee_setting *setting,
+                        const lee_drag *drag, double measured) {
+    lee_drag_input in = setting->fluids;
+    in.speed = lee_exposure_speed(&problem->exposure, drag, &setting->fluids,
+                                  measured);
+    const double coefficient = lee_drag_coefficient(drag, &in, NULL, NULL);
+    return in.air_density * coefficient * in.speed * in.speed;
+}
+
+double lee_setting_speed(const lee_problem *problem, const lee_setting *setting,
+                         double measured) {
+    return lee_exposure_speed(&problem->exposure, &problem->drag,
+                              &setting->fluids, measured);
+}
+
+/* Widens `range` by what one drag makes of the wind and its uncertainty. */
+static void widen(const lee_problem *problem, const lee_setting *setting,
+                  const lee_drag *drag, double measured,
+                  lee_pull_range *range) {
+    const double share =
+        isnan(problem->uncertainty.wind) ? 0.0 : problem->uncertainty.wind;
+    const bool holds_it =
+        drag->relation != NULL && drag->relation->includes_return_flow;
+    const double least =
+        stress_of(problem, setting, drag, measured * fmax(0.0, 1.0 - share));
+    const double greatest =
+        stress_of(problem, setting, drag, measured * (1.0 + share));
+    const double lambda = holds_it ? 1.0 : setting->return_flow_high;
+    range->low = fmin(range->low, least / lee_lateral_depth_divisor);
+    range->high = fmax(range->high, lambda * greatest);
+}
+
+lee_pull_range lee_setting_pull(const lee_problem *problem,
+                                const lee_setting *setting, double measured) {
+    lee_pull_range range = {.low = INFINITY, .high = 0.0};
+    range.main = setting->return_flow *
+                 stress_of(problem, setting, &problem->drag, measured);
+    widen(problem, setting, &problem->drag, measured, &range);
+    const lee_drag_relation *relation;
+    for (size_t i = 0; (relation = lee_drag_at(i)) != NULL; i++) {
+        if (relation->is_for_range) {
+            const lee_drag drag = {.relation = relation,
+                                   .cap = problem->drag.cap};
+            widen(problem, setting, &drag, measured, &range);
+        }
+    }
+    return range;
+}

@@ -1,0 +1,63 @@
+/* setting.h - the numbers a problem settles before any level is computed. */
+#ifndef LEEWATER_SERIES_SETTING_H
+#define LEEWATER_SERIES_SETTING_H
+
+#include <stdbool.h>
+#include <stddef.h>
+
+#include "leewater/series.h"
+#include "leewater/status.h"
+
+/* Divisor of the tilt at the low end of a range, [1]: a table of bed and width
+ * hides the depth across the lake, and gyres over uneven depth lower the tilt
+ * (docs/theory.md, "Range"). */
+static const double lee_lateral_depth_divisor = 1.2;
+
+/* Added to lambda at the high end of a range, [1] (docs/theory.md). */
+static const double lee_return_flow_margin = 0.1;
+
+typedef struct lee_setting {
+    double still_water; /* m above the datum */
+    lee_basin_summary lake;
+    double gravity;
+    lee_drag_input fluids;   /* densities; its speed is not used */
+    double return_flow;      /* lambda of the estimate */
+    double return_flow_high; /* lambda at the high end of the range */
+    bool return_flow_forced; /* to 1, by the relation or by an open end */
+    double start_level;      /* held level at the begin; NaN: wall */
+    double end_level;
+} lee_setting;
+
+/* Settles densities, lambda and levels at `time` (s since 1970).
+ * Errors: LEE_ERR_DATA when the lake holds no water at its still level. */
+lee_status lee_setting_init(const lee_problem *problem, double time,
+                            lee_setting *setting, lee_error *error);
+
+/* 10 m wind speed over open water from a measured speed, by the problem's
+ * exposure and drag. */
+double lee_setting_speed(const lee_problem *problem, const lee_setting *setting,
+                         double measured);
+
+/* Least and greatest pull lambda tau, Pa, of a measured wind speed on the
+ * water: over one relation a paper, the stated wind uncertainty, lambda and
+ * (low end) the hidden lateral depth. */
+typedef struct lee_pull_range {
+    double low;
+    double main; /* lambda tau of the estimate itself */
+    double high;
+} lee_pull_range;
+lee_pull_range lee_setting_pull(const lee_problem *problem,
+                                const lee_setting *setting, double measured);
+
+/* Tells in `method` what stands behind the numbers; `measured` is the speed
+ * the corrections are shown for. Errors: LEE_ERR_MEMORY. */
+lee_status lee_setting_tell(const lee_problem *problem,
+                            const lee_setting *setting, double measured,
+                            lee_method *method, lee_error *error);
+
+/* Tells what a record holds. Errors: LEE_ERR_MEMORY. */
+lee_status lee_record_tell(const lee_wind_check *check,
+                           const lee_gap_rule *rule, lee_notes *notes,
+                           lee_error *error);
+
+#endif

@@ -1,0 +1,425 @@
+/* steady_estimate.c - equilibrium levels with their range for given winds. */
+#include <math.h>
+#include <stdlib.h>
+
+#include "base/constants.h"
+#include "leewater/series.h"
+#include "series/members.h"
+#include "series/setting.h"
+
+/* Cross-axis tilt above this share of the tilt along the axis is warned of
+ * (design choice; docs/theory.md, "Range"). */
+static const double cross_tilt_share = 0.2;
+
+/* Projected stress below this share of the full one is "across the axis". */
+static const double across_share = 0.01;
+
+/* The equilibria of one wind: the estimate first, then the bounds. */
+typedef struct solutions {
+    size_t count;
+    lee_steady steady[LEE_MEMBERS];
+    double section_bed_shift[LEE_MEMBERS];
+} solutions;
+
+static void free_solutions(solutions *all) {
+    for (size_t i = 0; i < LEE_MEMBERS; i++) {
+        lee_steady_free(&all->steady[i]);
+    }
+}
+
+static lee_status solve_member(const lee_problem *problem,
+                               const lee_setting *setting,
+                               const lee_member *member, const double pull[2],
+                               lee_steady *steady, lee_error *error) {
+    lee_profile profile = {0};
+    lee_status status = lee_member_profile(&problem->lake.profile,
+                                           member->bed_shift, &profile, error);
+    if (status == LEE_OK) {
+        const lee_steady_input input = {
+            .profile = &profile,
+            .still_water = setting->still_water,
+            .stress = {pull[0], pull[1]},
+            .return_flow = 1.0, /* lambda is in the pull */
+            .water_density = setting->fluids.water_density,
+            .gravity = setting->gravity,
+            .dry_depth = problem->solver.dry_depth,
+            .start_level = setting->start_level,
+            .end_level = setting->end_level,
+        };
+        status = lee_steady_solve(&input, steady, error);
+    }
+    lee_profile_free(&profile);
+    return status;
+}
+
+static lee_status solve_all(const lee_problem *problem,
+                            const lee_setting *setting,
+                            const lee_given_wind *wind, solutions *all,
+                            lee_error *error) {
+    lee_member member[LEE_MEMBERS];
+    all->count = lee_members_list(problem, member);
+    const lee_pull_range range =
+        lee_setting_pull(problem, setting, wind->speed);
+    for (size_t i = 0; i < all->count; i++) {
+        double pull[2];
+        lee_wind_components(lee_pull_of(&range, member[i].pull), wind->from,
+                            &pull[0], &pull[1]);
+        const lee_status status = solve_member(problem, setting, &member[i],
+                                               pull, &all->steady[i], error);
+        if (status != LEE_OK) {
+            if (member[i].bed_shift != 0.0) {
+                lee_context(error,
+                            "with the bed %+.3g m: ", member[i].bed_shift);
+            }
+            return status;
+        }
+    }
+    return LEE_OK;
+}
+
+static void widen(lee_ranged *ranged, double value) {
+    ranged->low = fmin(ranged->low, value);
+    ranged->high = fmax(ranged->high, value);
+}
+
+static lee_ranged point(double value) {
+    return (lee_ranged){value, value, value};
+}
+
+/* Widens a water's numbers by the waters of a member that overlap it. */
+static void widen_water(const lee_steady *member, lee_water_estimate *water) {
+    for (size_t i = 0; i < member->count; i++) {
+        const lee_steady_water *other = &member->water[i];
+        if (other->from < water->to && other->to > water->from) {
+            widen(&water->set_up, other->set_up);
+            widen(&water->set_down, other->set_down);
+            widen(&water->tilt, other->tilt);
+        }
+    }
+}
+
+static lee_status copy_nodes(const lee_steady_water *from,
+                             lee_water_estimate *water, lee_error *error) {
+    water->node = calloc(from->node_count + 1, sizeof *water->node);
+    if (water->node == NULL) {
+        return lee_fail(error, LEE_ERR_MEMORY, "no room for %zu nodes",
+                        from->node_count);
+    }
+    water->node_count = from->node_count;
+    for (size_t i = 0; i < from->node_count; i++) {
+        water->node[i] = from->node[i];
+    }
+    return LEE_OK;
+}
+
+static lee_status tell_waters(const solutions *all, lee_wind_estimate *wind,
+                              lee_error *error) {
+    const lee_steady *main = &all->steady[0];
+    wind->water = calloc(main->count + 1, sizeof *wind->water);
+    if (wind->water == NULL) {
+        return lee_fail(error, LEE_ERR_MEMORY, "no room for %zu waters",
+                        main->count);
+    }
+    for (size_t i = 0; i < main->count; i++) {
+        const lee_steady_water *from = &main->water[i];
+        lee_water_estimate *water = &wind->water[wind->water_count++];
+        *water = (lee_water_estimate){
+            .from = from->from,
+            .to = from->to,
+            .set_up = point(from->set_up),
+            .set_up_at = from->set_up_at,
+            .set_down = point(from->set_down),
+            .set_down_at = from->set_down_at,
+            .tilt = point(from->tilt),
+            .volume_defect = from->volume_defect,
+            .first_period = from->first_period,
+            .develop_time = 0.5 * from->first_period,
+        };
+        const lee_status status = copy_nodes(from, water, error);
+        if (status != LEE_OK) {
+            return status;
+        }
+        for (size_t k = 1; k < all->count; k++) {
+            widen_water(&all->steady[k], water);
+        }
+    }
+    return LEE_OK;
+}
+
+/* Highest set-up, lowest set-down and largest tilt of all waters. */
+typedef struct extremes {
+    double set_up;
+    double set_up_at;
+    double set_down;
+    double set_down_at;
+    double tilt;
+    double volume_defect;
+} extremes;
+
+static extremes extremes_of(const lee_steady *steady) {
+    extremes all = {.set_up = NAN, .set_down = NAN, .tilt = 0.0};
+    for (size_t i = 0; i < steady->count; i++) {
+        const lee_steady_water *water = &steady->water[i];
+        if (!(water->set_up <= all.set_up)) {
+            all.set_up = water->set_up;
+            all.set_up_at = water->set_up_at;
+        }
+        if (!(water->set_down >= all.set_down)) {
+            all.set_down = water->set_down;
+            all.set_down_at = water->set_down_at;
+        }
+        all.tilt = fmax(all.tilt, water->tilt);
+        all.volume_defect = fmax(all.volume_defect, water->volume_defect);
+    }
+    return all;
+}
+
+static void tell_extremes(const solutions *all, lee_wind_estimate *wind) {
+    const extremes main = extremes_of(&all->steady[0]);
+    wind->set_up = point(main.set_up);
+    wind->set_up_at = main.set_up_at;
+    wind->set_down = point(main.set_down);
+    wind->set_down_at = main.set_down_at;
+    wind->tilt = point(main.tilt);
+    wind->volume_defect = main.volume_defect;
+    for (size_t k = 1; k < all->count; k++) {
+        const extremes member = extremes_of(&all->steady[k]);
+        widen(&wind->set_up, member.set_up);
+        widen(&wind->set_down, member.set_down);
+        widen(&wind->tilt, member.tilt);
+    }
+}
+
+static lee_status tell_stations(const lee_problem *problem,
+                                const solutions *all, lee_wind_estimate *wind,
+                                lee_error *error) {
+    wind->station = calloc(problem->station_count + 1, sizeof *wind->station);
+    if (wind->station == NULL) {
+        return lee_fail(error, LEE_ERR_MEMORY, "no room for %zu stations",
+                        problem->station_count);
+    }
+    for (size_t i = 0; i < problem->station_count; i++) {
+        const lee_station *station = &problem->station[i];
+        const double level = lee_steady_level_at(&all->steady[0], station->at);
+        lee_station_level *out = &wind->station[i];
+        out->level = point(level);
+        out->section_depth =
+            level - lee_profile_bed(&problem->lake.profile, station->at);
+        out->depth = level - station->bed;
+        bool falls_dry = isnan(level);
+        for (size_t k = 1; k < all->count; k++) {
+            const double other =
+                lee_steady_level_at(&all->steady[k], station->at);
+            falls_dry = falls_dry || isnan(other);
+            widen(&out->level, other);
+        }
+        if (falls_dry) {
+            out->level.low = NAN;
+        }
+    }
+    return LEE_OK;
+}
+
+static lee_status warn_of_drag(const lee_problem *problem,
+                               const lee_setting *setting,
+                               lee_wind_estimate *wind, lee_error *error) {
+    lee_drag_input in = setting->fluids;
+    in.speed = wind->speed;
+    bool extrapolated = false;
+    bool capped = false;
+    char drag[160];
+    wind->coefficient =
+        lee_drag_coefficient(&problem->drag, &in, &extrapolated, &capped);
+    wind->stress =
+        in.air_density * wind->coefficient * wind->speed * wind->speed;
+    (void)lee_drag_describe(&problem->drag, sizeof drag, drag);
+    lee_status status = LEE_OK;
+    if (extrapolated) {
+        status = lee_notes_add(&wind->warnings, error,
+                               "drag extrapolated: %.1f m/s is outside the "
+                               "range that %s was fitted on",
+                               wind->speed, drag);
+    }
+    if (status == LEE_OK && capped) {
+        status = lee_notes_add(&wind->warnings, error,
+                               "drag coefficient held at its cap %.4f",
+                               problem->drag.cap);
+    }
+    return status;
+}
+
+static lee_status warn_of_shores(const lee_steady *main,
+                                 lee_wind_estimate *wind, lee_error *error) {
+    lee_status status = LEE_OK;
+    if (main->dry_length > 0.0) {
+        status = lee_notes_add(&wind->warnings, error,
+                               "%.0f m of the axis fall dry at the windward "
+                               "shore or over shoals",
+                               main->dry_length);
+    }
+    if (status == LEE_OK && main->has_sill) {
+        status = lee_notes_add(&wind->warnings, error,
+                               "waters part or join over a sill: the levels "
+                               "are those of a wind grown slowly from rest");
+    }
+    if (status == LEE_OK && wind->is_across && wind->stress > 0.0) {
+        status = lee_notes_add(&wind->warnings, error,
+                               "the wind blows across the axis: no end is "
+                               "named lee or windward");
+    }
+    if (status == LEE_OK && !wind->is_across &&
+        wind->cross_tilt > cross_tilt_share * wind->tilt.value) {
+        status = lee_notes_add(&wind->warnings, error,
+                               "the tilt across the axis, %.3f m, passes a "
+                               "fifth of the tilt along it",
+                               wind->cross_tilt);
+    }
+    return status;
+}
+
+static lee_status warn_of_duration(lee_wind_estimate *wind, lee_error *error) {
+    double longest = 0.0;
+    for (size_t i = 0; i < wind->water_count; i++) {
+        longest = fmax(longest, wind->water[i].develop_time);
+    }
+    if (wind->wind.duration < longest) {
+        return lee_notes_add(&wind->warnings, error,
+                             "the wind lasts %.2f h, less than half the first "
+                             "period (%.2f h): the levels will not be reached",
+                             wind->wind.duration / 3600.0, longest / 3600.0);
+    }
+    return LEE_OK;
+}
+
+static lee_status tell_wind(const lee_problem *problem,
+                            const lee_setting *setting, const solutions *all,
+                            lee_wind_estimate *wind, lee_error *error) {
+    const lee_steady *main = &all->steady[0];
+    wind->speed = lee_setting_speed(problem, setting, wind->wind.speed);
+    wind->along = main->along;
+    wind->is_across = !(fabs(main->along) >= across_share);
+    wind->return_flow = setting->return_flow;
+    wind->cross_tilt = main->cross_tilt;
+    wind->cross_tilt_at = main->cross_tilt_at;
+    wind->dry_length = main->dry_length;
+    tell_extremes(all, wind);
+    lee_status status = warn_of_drag(problem, setting, wind, error);
+    if (status == LEE_OK) {
+        status = tell_waters(all, wind, error);
+    }
+    if (status == LEE_OK) {
+        status = tell_stations(problem, all, wind, error);
+    }
+    if (status == LEE_OK) {
+        status = warn_of_shores(main, wind, error);
+    }
+    return status == LEE_OK ? warn_of_duration(wind, error) : status;
+}
+
+static lee_status estimate_wind(const lee_problem *problem,
+                                const lee_setting *setting,
+                                const lee_given_wind *given,
+                                lee_wind_estimate *wind, lee_error *error) {
+    wind->wind = *given;
+    solutions all = {0};
+    lee_status status = solve_all(problem, setting, given, &all, error);
+    if (status == LEE_OK) {
+        status = tell_wind(problem, setting, &all, wind, error);
+    }
+    free_solutions(&all);
+    return status;
+}
+
+/* The index-th wind of a list or a scan. */
+static lee_given_wind wind_at(const lee_wind_source *source, size_t index) {
+    if (source->kind != LEE_WIND_SCAN) {
+        return source->given[index];
+    }
+    lee_given_wind wind = source->given[0];
+    wind.from = 2.0 * lee_pi * (double)index / (double)source->directions;
+    return wind;
+}
+
+static lee_status estimate_winds(const lee_problem *problem,
+                                 const lee_setting *setting,
+                                 lee_steady_result *result, lee_error *error) {
+    const lee_wind_source *source = &problem->wind;
+    double fastest = 0.0;
+    for (size_t i = 0; i < result->count; i++) {
+        const lee_given_wind given = wind_at(source, i);
+        const lee_status status =
+            estimate_wind(problem, setting, &given, &result->wind[i], error);
+        if (status != LEE_OK) {
+            return status;
+        }
+        fastest = fmax(fastest, given.speed);
+    }
+    return lee_setting_tell(problem, setting, fastest, &result->method, error);
+}
+
+static lee_status warn_of_still_water(const lee_problem *problem,
+                                      lee_steady_result *result,
+                                      lee_error *error) {
+    if (problem->lake.still_water.n > 1) {
+        return lee_notes_add(&result->warnings, error,
+                             "still water is a series: its first level, "
+                             "%.3f m, is used",
+                             result->still_water);
+    }
+    return LEE_OK;
+}
+
+lee_status lee_estimate_steady(const lee_problem *problem,
+                               lee_steady_result *result, lee_error *error) {
+    const lee_wind_source *source = &problem->wind;
+    *result = (lee_steady_result){.station_count = problem->station_count};
+    if (source->kind != LEE_WIND_GIVEN && source->kind != LEE_WIND_SCAN) {
+        return lee_fail(error, LEE_ERR_DATA,
+                        "steady levels need a given wind (speed and from, a "
+                        "list of winds, or speed and directions), not a "
+                        "record or a storm");
+    }
+    lee_setting setting;
+    lee_status status = lee_exposure_check(&problem->exposure, error);
+    if (status == LEE_OK) {
+        status = lee_setting_init(problem, -INFINITY, &setting, error);
+    }
+    if (status != LEE_OK) {
+        return status;
+    }
+    result->still_water = setting.still_water;
+    result->count = source->kind == LEE_WIND_SCAN ? source->directions
+                                                  : source->given_count;
+    result->wind = calloc(result->count + 1, sizeof *result->wind);
+    if (result->wind == NULL) {
+        result->count = 0;
+        return lee_fail(error, LEE_ERR_MEMORY, "no room for the winds");
+    }
+    status = estimate_winds(problem, &setting, result, error);
+    if (status == LEE_OK) {
+        status = warn_of_still_water(problem, result, error);
+    }
+    if (status != LEE_OK) {
+        lee_steady_result_free(result);
+    }
+    return status;
+}
+
+static void free_wind(lee_wind_estimate *wind) {
+    for (size_t i = 0; i < wind->water_count; i++) {
+        free(wind->water[i].node);
+    }
+    free(wind->water);
+    free(wind->station);
+    lee_notes_free(&wind->warnings);
+}
+
+void lee_steady_result_free(lee_steady_result *result) {
+    for (size_t i = 0; i < result->count; i++) {
+        free_wind(&result->wind[i]);
+    }
+    free(result->wind);
+    lee_method_free(&result->method);
+    lee_notes_free(&result->warnings);
+    *result = (lee_steady_result){0};
+}
