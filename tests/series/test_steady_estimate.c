@@ -1,0 +1,303 @@
+/* Steady estimates: the closed form in the middle, an honest range around. */
+#include "support/lake.h"
+
+#include "leewater/series.h"
+
+static const double length = 20e3;
+static const double depth = 5.0;
+static const double from_west = 3.0 * 1.5707963267948966;
+static const double from_north = 0.0;
+
+static void a_west_wind_raises_the_east_wall_by_the_parabola(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    blow(&problem, 20.0, from_west, NAN);
+    lee_steady_result result;
+    assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+    const lee_parabola exact =
+        lee_closed_parabola(lake_pull(20.0), length, depth);
+    const double tilt = exact.set_up - exact.set_down;
+    /* 1e-6 of the tilt: the goal of the steady solver */
+    assert_near(result.wind[0].set_up.value, exact.set_up, 1e-6 * tilt);
+    assert_near(result.wind[0].set_down.value, exact.set_down, 1e-6 * tilt);
+    assert_near(result.wind[0].set_up_at, length, 1e-6);
+    assert_near(result.wind[0].station[2].level.value, exact.set_up,
+                1e-6 * tilt);
+    lee_steady_result_free(&result);
+    lee_problem_free(&problem);
+}
+
+static void the_depth_at_a_station_is_level_minus_its_bed(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    problem.station[2].bed = -2.0;
+    blow(&problem, 20.0, from_west, NAN);
+    lee_steady_result result;
+    assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+    const lee_station_level *east = &result.wind[0].station[2];
+    assert_near(east->section_depth, east->level.value + depth, 1e-12);
+    assert_near(east->depth, east->level.value + 2.0, 1e-12);
+    lee_steady_result_free(&result);
+    lee_problem_free(&problem);
+}
+
+static void each_number_lies_inside_its_range(void **state) {
+    (void)state;
+    for (double speed = 0.0; speed < 50.0; speed += 3.0) {
+        lee_problem problem = even_lake(length, depth);
+        problem.uncertainty =
+            (lee_uncertainty){.wind = 0.1, .depth = 0.3, .bed = 0.2};
+        blow(&problem, speed, from_west, NAN);
+        lee_steady_result result;
+        assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+        const lee_wind_estimate *wind = &result.wind[0];
+        assert_true(wind->set_up.low <= wind->set_up.value);
+        assert_true(wind->set_up.high >= wind->set_up.value);
+        assert_true(wind->set_down.low <= wind->set_down.value);
+        assert_true(wind->set_down.high >= wind->set_down.value);
+        assert_true(wind->water[0].tilt.low <= wind->tilt.value);
+        assert_true(wind->water[0].tilt.high >= wind->tilt.value);
+        lee_steady_result_free(&result);
+        lee_problem_free(&problem);
+    }
+}
+
+static double width_of_range(const lee_uncertainty *doubt) {
+    lee_problem problem = even_lake(length, depth);
+    problem.uncertainty = *doubt;
+    blow(&problem, 20.0, from_west, NAN);
+    lee_steady_result result;
+    assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+    const double width = result.wind[0].set_up.high - result.wind[0].set_up.low;
+    lee_steady_result_free(&result);
+    lee_problem_free(&problem);
+    return width;
+}
+
+static void each_stated_uncertainty_widens_the_range(void **state) {
+    (void)state;
+    const double none = width_of_range(&(lee_uncertainty){NAN, NAN, NAN});
+    assert_true(width_of_range(&(lee_uncertainty){0.1, NAN, NAN}) > none);
+    assert_true(width_of_range(&(lee_uncertainty){NAN, 0.3, NAN}) > none);
+}
+
+/* With nothing stated the high end is the strongest relation with lambda 1.1
+ * (computed 1 without bed friction, plus the margin). */
+static void the_high_end_is_the_strongest_relation_and_lambda(void **state) {
+    (void)state;
+    const double speed = 20.0;
+    double strongest = 1.5e-3;
+    const lee_drag_relation *relation;
+    for (size_t i = 0; (relation = lee_drag_at(i)) != NULL; i++) {
+        const lee_drag_input in = {speed, 1.25, 1000.0};
+        if (relation->is_for_range) {
+            strongest = fmax(strongest, relation->coefficient(&in));
+        }
+    }
+    lee_problem problem = even_lake(length, depth);
+    blow(&problem, speed, from_west, NAN);
+    lee_steady_result result;
+    assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+    const double pull = 1.1 * strongest / 1.5e-3 * lake_pull(speed);
+    const lee_parabola exact = lee_closed_parabola(pull, length, depth);
+    /* 1e-6 of the tilt: the goal of the steady solver */
+    assert_near(result.wind[0].set_up.high, exact.set_up,
+                1e-6 * (exact.set_up - exact.set_down));
+    lee_steady_result_free(&result);
+    lee_problem_free(&problem);
+}
+
+static void opposite_winds_mirror_each_other(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    blow(&problem, 18.0, 0.0, NAN);
+    problem.wind.kind = LEE_WIND_SCAN;
+    problem.wind.directions = 8;
+    lee_steady_result result;
+    assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+    assert_int_equal(result.count, 8);
+    for (size_t i = 0; i < 4; i++) {
+        const lee_wind_estimate *one = &result.wind[i];
+        const lee_wind_estimate *other = &result.wind[i + 4];
+        /* solver tolerance, m */
+        assert_near(one->station[0].level.value, other->station[2].level.value,
+                    1e-7);
+        assert_near(one->set_up.high, other->set_up.high, 1e-7);
+    }
+    lee_steady_result_free(&result);
+    lee_problem_free(&problem);
+}
+
+static void calm_leaves_the_lake_level(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    blow(&problem, 0.0, from_west, NAN);
+    lee_steady_result result;
+    assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+    assert_near(result.wind[0].tilt.value, 0.0, 0.0);
+    assert_near(result.wind[0].set_up.high, 0.0, 0.0);
+    assert_near(result.wind[0].station[1].level.value, 0.0, 0.0);
+    lee_steady_result_free(&result);
+    lee_problem_free(&problem);
+}
+
+static bool has_warning(const lee_notes *notes, const char *words) {
+    for (size_t i = 0; i < notes->n; i++) {
+        if (strstr(notes->text[i], words) != NULL) {
+            return true;
+        }
+    }
+    return false;
+}
+
+static bool wind_warns(double speed, double from, double duration,
+                       const lee_drag_relation *relation, const char *words) {
+    lee_problem problem = even_lake(length, depth);
+    problem.drag.relation = relation;
+    blow(&problem, speed, from, duration);
+    lee_steady_result result;
+    assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+    const bool warns = has_warning(&result.wind[0].warnings, words);
+    lee_steady_result_free(&result);
+    lee_problem_free(&problem);
+    return warns;
+}
+
+static void drag_outside_its_fitted_range_is_told(void **state) {
+    (void)state;
+    const lee_drag_relation *garratt = lee_drag_find("garratt-linear-1977");
+    assert_non_null(garratt);
+    assert_true(wind_warns(30.0, from_west, NAN, garratt, "extrapolated"));
+    assert_false(wind_warns(15.0, from_west, NAN, garratt, "extrapolated"));
+}
+
+static void wind_across_the_axis_is_told(void **state) {
+    (void)state;
+    assert_true(wind_warns(20.0, from_north, NAN, NULL, "across the axis"));
+    assert_false(wind_warns(20.0, from_west, NAN, NULL, "across the axis"));
+}
+
+/* First period 2 L / sqrt(g h) = 5711 s (Merian 1828): half is 2856 s. */
+static void wind_shorter_than_half_the_period_is_told(void **state) {
+    (void)state;
+    assert_true(wind_warns(20.0, from_west, 2800.0, NULL, "wind lasts"));
+    assert_false(wind_warns(20.0, from_west, 2900.0, NULL, "wind lasts"));
+}
+
+static void a_dried_windward_shore_is_told(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(50e3, 1.0);
+    blow(&problem, 30.0, from_west, NAN);
+    lee_steady_result result;
+    assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+    assert_true(has_warning(&result.wind[0].warnings, "fall dry"));
+    assert_true(isnan(result.wind[0].station[0].level.value));
+    assert_true(isnan(result.wind[0].station[0].level.low));
+    lee_steady_result_free(&result);
+    lee_problem_free(&problem);
+}
+
+static double lambda_of(lee_problem *problem) {
+    blow(problem, 20.0, from_west, NAN);
+    lee_steady_result result;
+    assert_int_equal(lee_estimate_steady(problem, &result, NULL), LEE_OK);
+    const double lambda = result.wind[0].return_flow;
+    lee_steady_result_free(&result);
+    lee_problem_free(problem);
+    return lambda;
+}
+
+static void a_relation_fitted_on_set_up_forces_lambda_to_one(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    problem.return_flow.value = 1.2;
+    problem.drag.relation = lee_drag_find("van-dorn-1953");
+    assert_non_null(problem.drag.relation);
+    assert_true(problem.drag.relation->includes_return_flow);
+    assert_near(lambda_of(&problem), 1.0, 0.0);
+}
+
+/* lambda = 1 + sqrt(g n^2/h^(1/3))/0.40 at h = 5 m, n = 0.025. */
+static void lambda_is_computed_from_the_bed_at_the_mean_depth(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    problem.bed = (lee_bed_law){LEE_BED_MANNING, 0.025};
+    problem.return_flow = (lee_return_flow){.is_computed = true};
+    problem.return_flow_given = false;
+    assert_near(lambda_of(&problem),
+                1.0 + sqrt(9.81 * 0.025 * 0.025 / cbrt(5.0)) / 0.40, 1e-12);
+}
+
+static void an_open_end_has_lambda_one_unless_given(void **state) {
+    (void)state;
+    for (int given = 0; given < 2; given++) {
+        lee_problem problem = even_lake(length, depth);
+        problem.bed = (lee_bed_law){LEE_BED_MANNING, 0.025};
+        problem.return_flow = (lee_return_flow){.value = 1.15};
+        problem.return_flow_given = given == 1;
+        problem.lake.start.is_held = true;
+        assert_int_equal(
+            lee_level_constant(0.0, &problem.lake.start.level, NULL), LEE_OK);
+        assert_near(lambda_of(&problem), given == 1 ? 1.15 : 1.0, 0.0);
+    }
+}
+
+static void a_problem_without_given_winds_is_refused(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    lee_steady_result result;
+    lee_error error = {0};
+    assert_int_equal(lee_estimate_steady(&problem, &result, &error),
+                     LEE_ERR_DATA);
+    assert_non_null(strstr(error.message, "steady levels need a given wind"));
+    lee_problem_free(&problem);
+}
+
+static void a_lake_without_water_is_refused(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    problem.lake.still_water.level[0] = -6.0;
+    blow(&problem, 20.0, from_west, NAN);
+    lee_steady_result result;
+    lee_error error = {0};
+    assert_int_equal(lee_estimate_steady(&problem, &result, &error),
+                     LEE_ERR_DATA);
+    assert_non_null(strstr(error.message, "holds no water"));
+    lee_problem_free(&problem);
+}
+
+static void a_depth_uncertainty_that_empties_the_lake_is_refused(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    problem.uncertainty.depth = 5.5;
+    blow(&problem, 20.0, from_west, NAN);
+    lee_steady_result result;
+    lee_error error = {0};
+    assert_int_equal(lee_estimate_steady(&problem, &result, &error),
+                     LEE_ERR_DATA);
+    assert_non_null(strstr(error.message, "with the bed +5.5 m"));
+    lee_problem_free(&problem);
+}
+
+int main(void) {
+    const struct CMUnitTest tests[] = {
+        cmocka_unit_test(a_west_wind_raises_the_east_wall_by_the_parabola),
+        cmocka_unit_test(the_depth_at_a_station_is_level_minus_its_bed),
+        cmocka_unit_test(each_number_lies_inside_its_range),
+        cmocka_unit_test(each_stated_uncertainty_widens_the_range),
+        cmocka_unit_test(the_high_end_is_the_strongest_relation_and_lambda),
+        cmocka_unit_test(opposite_winds_mirror_each_other),
+        cmocka_unit_test(calm_leaves_the_lake_level),
+        cmocka_unit_test(drag_outside_its_fitted_range_is_told),
+        cmocka_unit_test(wind_across_the_axis_is_told),
+        cmocka_unit_test(wind_shorter_than_half_the_period_is_told),
+        cmocka_unit_test(a_dried_windward_shore_is_told),
+        cmocka_unit_test(a_relation_fitted_on_set_up_forces_lambda_to_one),
+        cmocka_unit_test(lambda_is_computed_from_the_bed_at_the_mean_depth),
+        cmocka_unit_test(an_open_end_has_lambda_one_unless_given),
+        cmocka_unit_test(a_problem_without_given_winds_is_refused),
+        cmocka_unit_test(a_lake_without_water_is_refused),
+        cmocka_unit_test(a_depth_uncertainty_that_empties_the_lake_is_refused),
+    };
+    return cmocka_run_group_tests(tests, NULL, NULL);
+}
