@@ -211,6 +211,12 @@ void lee_transient_free(lee_transient *engine);
  * bed are dry) and no current. level[nodes]. */
 void lee_transient_start(lee_transient *engine, double t, const double level[]);
 
+/* Pours volume[nodes] (m3; negative takes away, at most what the node holds)
+ * into the nodes between two steps, currents unchanged: a pool that rises or
+ * falls, rain. Counts as inflow. Not for the linear variant, whose depths
+ * stay. */
+void lee_transient_pour(lee_transient *engine, const double volume[]);
+
 /* Advances by dt. Halves the step by itself where the current asks for it.
  * Errors: LEE_ERR_ARGUMENT when dt is not positive and finite or the forcing
  * is not finite; LEE_ERR_CONVERGENCE when even the fifth halving is too long
@@ -226,8 +232,8 @@ lee_transient_level(const lee_transient *engine); /* [nodes] m; bed where dry */
 const double *
 lee_transient_speed(const lee_transient *engine);         /* [links] m s-1 */
 double lee_transient_volume(const lee_transient *engine); /* m3 */
-double lee_transient_inflow(
-    const lee_transient *engine); /* m3 through held ends since start */
+/* m3 through held ends and poured, since the start */
+double lee_transient_inflow(const lee_transient *engine);
 
 /* Level of the water at chainage x: linear between nodes that are wet (deeper
  * than the dry depth); towards a wall or a held end the line of the last two

@@ -19,6 +19,8 @@ typedef struct leg {
     int64_t *breaks; /* times that steps must hit, increasing */
     size_t next_output;
     double *at_stations; /* [stations] scratch */
+    double *poured;      /* [nodes] m3, scratch */
+    double pool;         /* still water at the engine's time, m */
     double start_volume;
     double largest_loss;   /* |V - V0 - inflow|, m3 */
     double largest_set_up; /* integral of b |eta| / 2, m3 */
@@ -64,8 +66,9 @@ static void add_break(leg *l, int64_t time) {
 static lee_status gather_breaks(leg *l, lee_error *error) {
     const lee_course *course = l->course;
     const lee_wind_piece *piece = &l->span->piece;
-    const size_t room =
-        2 * (piece->end - piece->first) + course->time_count + 2;
+    const lee_level_series *pool = &course->problem->lake.still_water;
+    const size_t room = 2 * (piece->end - piece->first) + course->time_count +
+                        (pool->n > 1 ? pool->n : 0) + 2;
     l->breaks = calloc(room, sizeof *l->breaks);
     if (l->breaks == NULL) {
         return lee_fail(error, LEE_ERR_MEMORY, "no room for %zu times", room);
@@ -81,6 +84,9 @@ static lee_status gather_breaks(leg *l, lee_error *error) {
     }
     for (size_t i = 0; i < course->time_count; i++) {
         add_break(l, course->time[i]);
+    }
+    for (size_t i = 0; pool->n > 1 && i < pool->n; i++) {
+        add_break(l, pool->time[i]);
     }
     qsort(l->breaks, l->break_count, sizeof *l->breaks, by_time);
     size_t kept = 1;
@@ -102,7 +108,7 @@ static lee_status steady_levels(leg *l, const lee_profile *profile,
     lee_drive_wind(&l->drive, 0.0, wind);
     lee_steady_input input = {
         .profile = profile,
-        .still_water = course->setting->still_water,
+        .still_water = l->pool,
         .return_flow = 1.0, /* lambda is in the pull */
         .water_density = course->setting->fluids.water_density,
         .gravity = course->setting->gravity,
@@ -124,15 +130,16 @@ static lee_status steady_levels(leg *l, const lee_profile *profile,
 static lee_status start_engine(leg *l, const lee_profile *profile,
                                lee_error *error) {
     const size_t n = l->channel->nodes;
+    l->pool = lee_level_at(&l->course->problem->lake.still_water,
+                           (double)l->span->from);
     double *level = calloc(n, sizeof *level);
     if (level == NULL) {
         return lee_fail(error, LEE_ERR_MEMORY, "no room for %zu levels", n);
     }
     lee_status status = LEE_OK;
     for (size_t i = 0; i < n; i++) {
-        level[i] = fmax(l->channel->bed[i], l->course->setting->still_water);
-        l->area += l->channel->area[i] *
-                   (l->course->setting->still_water > l->channel->bed[i]);
+        level[i] = fmax(l->channel->bed[i], l->pool);
+        l->area += l->channel->area[i] * (l->pool > l->channel->bed[i]);
     }
     if (l->span->starts_steady) {
         status = steady_levels(l, profile, level, error);
@@ -145,6 +152,30 @@ static lee_status start_engine(leg *l, const lee_profile *profile,
     return status;
 }
 
+/* Still water at the engine's time, m above the datum. */
+static double pool_now(const leg *l) {
+    const lee_level_series *pool = &l->course->problem->lake.still_water;
+    return lee_level_at(pool,
+                        (double)l->span->from + lee_transient_time(l->engine));
+}
+
+/* A still water given as a series lifts or lowers a closed lake: the volume
+ * between the old and the new pool is poured where the pool stands. */
+static void follow_pool(leg *l) {
+    const lee_lake *lake = &l->course->problem->lake;
+    const double before = l->pool;
+    l->pool = pool_now(l);
+    if (lake->still_water.n < 2 || lake->start.is_held || lake->end.is_held) {
+        return;
+    }
+    for (size_t i = 0; i < l->channel->nodes; i++) {
+        const double bed = l->channel->bed[i];
+        l->poured[i] =
+            l->channel->area[i] * (fmax(bed, l->pool) - fmax(bed, before));
+    }
+    lee_transient_pour(l->engine, l->poured);
+}
+
 /* Keeps the volume's books at an output time. */
 static void audit(leg *l) {
     const double *level = lee_transient_level(l->engine);
@@ -152,8 +183,7 @@ static void audit(leg *l) {
                         lee_transient_inflow(l->engine);
     double moved = 0.0;
     for (size_t i = 0; i < l->channel->nodes; i++) {
-        const double still =
-            fmax(l->channel->bed[i], l->course->setting->still_water);
+        const double still = fmax(l->channel->bed[i], l->pool);
         moved += 0.5 * l->channel->area[i] * fabs(level[i] - still);
     }
     l->largest_loss = fmax(l->largest_loss, fabs(loss));
@@ -198,6 +228,7 @@ static lee_status go_to(leg *l, int64_t from, int64_t to, lee_error *error) {
         if (status != LEE_OK) {
             return status;
         }
+        follow_pool(l);
         look(l);
     }
     l->course->progress->done += parts * (double)l->channel->nodes;
@@ -265,7 +296,8 @@ static lee_status prepare_leg(leg *l, const lee_profile *profile,
         .zero = l->span->from,
     };
     l->at_stations = calloc(course->watch->count + 1, sizeof(double));
-    if (l->at_stations == NULL) {
+    l->poured = calloc(l->channel->nodes, sizeof *l->poured);
+    if (l->at_stations == NULL || l->poured == NULL) {
         return lee_fail(error, LEE_ERR_MEMORY, "no room for stations");
     }
     lee_status status = lee_drive_init(l->channel, &l->drive, error);
@@ -293,6 +325,7 @@ static lee_status run_span(const lee_course *course, const lee_span *span,
     lee_drive_free(&l.drive);
     free(l.breaks);
     free(l.at_stations);
+    free(l.poured);
     return status;
 }
 

@@ -158,6 +158,18 @@ void lee_transient_start(lee_transient *engine, double t,
     }
 }
 
+void lee_transient_pour(lee_transient *engine, const double volume[]) {
+    transient_state *now = &engine->now;
+    for (size_t i = 0; i < engine->nodes; i++) {
+        const double before = now->volume[i];
+        now->volume[i] = larger(0.0, before + volume[i]);
+        now->level[i] =
+            now->volume[i] * engine->inverse_area[i] + engine->bed[i];
+        lee_sum_add(&engine->inflow, now->volume[i] - before);
+    }
+    lee_transient_show(engine);
+}
+
 double lee_transient_time(const lee_transient *engine) {
     return engine->time;
 }

@@ -299,6 +299,32 @@ static void a_held_end_without_wind_lifts_the_lake_to_its_level(void **state) {
     lee_problem_free(&problem);
 }
 
+/* The pool rises by 0.3 m within a day in calm air. */
+static void a_still_water_series_is_followed_without_wind(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    problem.bed = (lee_bed_law){LEE_BED_MANNING, 0.025};
+    lee_level_series *pool = &problem.lake.still_water;
+    lee_level_series_free(pool);
+    *pool = (lee_level_series){.n = 2,
+                               .time = calloc(2, sizeof *pool->time),
+                               .level = calloc(2, sizeof *pool->level)};
+    assert_non_null(pool->time);
+    assert_non_null(pool->level);
+    pool->time[1] = 86400;
+    pool->level[1] = 0.3;
+    problem.run.every = 43200;
+    blow(&problem, 0.0, from_west, 86400.0);
+    lee_run_result result = run(&problem, &plain);
+    for (size_t s = 0; s < LAKE_STATIONS; s++) {
+        assert_near(result.station[s].level[1], 0.15, 1e-12); /* rounding */
+        assert_near(result.station[s].level[2], 0.30, 1e-12);
+    }
+    assert_true(result.volume_defect <= 1e-12); /* goal of the design */
+    lee_run_result_free(&result);
+    lee_problem_free(&problem);
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(a_sudden_wind_overshoots_to_twice_the_steady_rise),
@@ -316,6 +342,7 @@ int main(void) {
         cmocka_unit_test(daily_wind_is_refused),
         cmocka_unit_test(a_run_stops_when_its_caller_says_so),
         cmocka_unit_test(a_held_end_without_wind_lifts_the_lake_to_its_level),
+        cmocka_unit_test(a_still_water_series_is_followed_without_wind),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }
