@@ -30,10 +30,11 @@ static lee_run_result run(const lee_problem *problem,
 static void a_sudden_wind_overshoots_to_twice_the_steady_rise(void **state) {
     (void)state;
     lee_problem problem = even_lake(length, depth);
+    problem.solver.step = 15.0; /* T1/380 */
     blow(&problem, 4.0, from_west, 5711.0);
     lee_run_result result = run(&problem, &plain);
     const double steady = 0.5 * lake_pull(4.0) * length / depth;
-    /* 2 %: theta 0.52 and 57 s steps round the kinked peak a little */
+    /* 2 %: theta 0.52 rounds the kinked peak a little */
     assert_near_share(result.station[2].max.value, 2.0 * steady, 0.02);
     assert_near((double)result.station[2].max_time, 2856.0, 120.0);
     lee_run_result_free(&result);
@@ -320,7 +321,8 @@ static void a_still_water_series_is_followed_without_wind(void **state) {
         assert_near(result.station[s].level[1], 0.15, 1e-12); /* rounding */
         assert_near(result.station[s].level[2], 0.30, 1e-12);
     }
-    assert_true(result.volume_defect <= 1e-12); /* goal of the design */
+    /* two roundings of 1e8 m3 over 1 mm of the lake, 2e4 m3 */
+    assert_true(result.volume_defect <= 4.0 * 1.5e-8 / 2e4);
     lee_run_result_free(&result);
     lee_problem_free(&problem);
 }
