@@ -56,7 +56,7 @@ static lee_span around(const lee_run_plan *plan, const lee_span *span,
     const int64_t tail = (int64_t)tail_of(plan);
     event.from = peak - lead > span->from ? peak - lead : span->from;
     event.to = peak + tail < span->to ? peak + tail : span->to;
-    event.starts_steady = false;
+    event.starts_steady = event.from > span->from || span->starts_steady;
     event.judged_from = event.from + (peak - event.from) / 2;
     return event;
 }
