@@ -53,6 +53,7 @@ static bool is_within(int value, int low, int high) {
     return value >= low && value <= high;
 }
 
+/* A civil time has six parts. NOLINTNEXTLINE(readability-function-size) */
 bool lee_time_from_civil(int year, int month, int day, int hour, int minute,
                          int second, int64_t *time) {
     if (!is_within(year, 1, 9999) || !is_within(month, 1, 12) ||
@@ -61,8 +62,8 @@ bool lee_time_from_civil(int year, int month, int day, int hour, int minute,
         !is_within(second, 0, 59)) {
         return false;
     }
-    *time = days_from_civil(year, month, day) * SECONDS_A_DAY +
-            hour * SECONDS_AN_HOUR + minute * 60 + second;
+    const int clock = hour * SECONDS_AN_HOUR + minute * 60 + second;
+    *time = days_from_civil(year, month, day) * SECONDS_A_DAY + clock;
     return true;
 }
 
@@ -108,7 +109,7 @@ static bool take_zone(const char *p, int64_t *offset) {
             return false;
         }
     }
-    const int64_t size = hours * SECONDS_AN_HOUR + minutes * 60;
+    const int size = hours * SECONDS_AN_HOUR + minutes * 60;
     *offset = is_west ? -size : size;
     return minutes < 60 && size <= LAST_OFFSET_HOUR * SECONDS_AN_HOUR;
 }

@@ -28,6 +28,7 @@ static int narrow(gsl_root_fsolver *solver, double tolerance) {
     return GSL_EMAXITER;
 }
 
+/* NOLINTNEXTLINE(readability-function-size): six and the error */
 lee_status lee_root_between(lee_function *f, void *user, double low,
                             double high, double tolerance, double *root,
                             lee_error *error) {

@@ -157,7 +157,7 @@ lee_cell lee_show_duration(double seconds) {
                        (long long)minutes);
         return cell;
     }
-    if (minutes < 48 * 60) {
+    if (minutes < INT64_C(48) * 60) {
         return two_units(minutes, 60, "h", "min");
     }
     return two_units(llround(seconds / 3600.0), 24, "d", "h");
