@@ -67,19 +67,27 @@ bool lee_time_from_civil(int year, int month, int day, int hour, int minute,
     return true;
 }
 
-/* Reads exactly `count` digits and steps over them. */
-static bool take_number(const char **p, int count, int *value) {
-    int read = 0;
-    for (int i = 0; i < count; i++) {
-        const char c = (*p)[i];
-        if (c < '0' || c > '9') {
-            return false;
-        }
-        read = 10 * read + (c - '0');
+/* Reads exactly two digits and steps over them. */
+static bool take_two(const char **p, int *value) {
+    const int tens = (*p)[0] - '0';
+    if (tens < 0 || tens > 9) {
+        return false;
     }
-    *p += count;
-    *value = read;
+    const int ones = (*p)[1] - '0';
+    if (ones < 0 || ones > 9) {
+        return false;
+    }
+    *p += 2;
+    *value = 10 * tens + ones;
     return true;
+}
+
+static bool take_year(const char **p, int *value) {
+    int century = 0;
+    int year = 0;
+    const bool is_taken = take_two(p, &century) && take_two(p, &year);
+    *value = 100 * century + year;
+    return is_taken;
 }
 
 /* Steps over `c` when it comes next. */
@@ -100,12 +108,12 @@ static bool take_zone(const char *p, int64_t *offset) {
     const bool is_west = *p == '-';
     int hours = 0;
     int minutes = 0;
-    if (!(take(&p, '+') || take(&p, '-')) || !take_number(&p, 2, &hours)) {
+    if (!(take(&p, '+') || take(&p, '-')) || !take_two(&p, &hours)) {
         return false;
     }
     if (*p != '\0') {
         (void)take(&p, ':');
-        if (!take_number(&p, 2, &minutes) || *p != '\0') {
+        if (!take_two(&p, &minutes) || *p != '\0') {
             return false;
         }
     }
@@ -137,12 +145,12 @@ static bool take_fraction(const char **p, int *nanoseconds) {
 
 /* Reads what may follow the date: hour, minute, second, fraction, zone. */
 static bool take_clock(const char *p, spelled *s) {
-    if (!take_number(&p, 2, &s->hour) || !take(&p, ':') ||
-        !take_number(&p, 2, &s->minute)) {
+    if (!take_two(&p, &s->hour) || !take(&p, ':') ||
+        !take_two(&p, &s->minute)) {
         return false;
     }
     if (take(&p, ':')) {
-        if (!take_number(&p, 2, &s->second)) {
+        if (!take_two(&p, &s->second)) {
             return false;
         }
         if ((take(&p, '.') || take(&p, ',')) &&
@@ -155,9 +163,9 @@ static bool take_clock(const char *p, spelled *s) {
 }
 
 static bool take_time(const char *p, spelled *s) {
-    if (!take_number(&p, 4, &s->year) || !take(&p, '-') ||
-        !take_number(&p, 2, &s->month) || !take(&p, '-') ||
-        !take_number(&p, 2, &s->day)) {
+    if (!take_year(&p, &s->year) || !take(&p, '-') ||
+        !take_two(&p, &s->month) || !take(&p, '-') ||
+        !take_two(&p, &s->day)) {
         return false;
     }
     return *p == '\0' || ((take(&p, 'T') || take(&p, ' ')) && take_clock(p, s));
