@@ -164,8 +164,7 @@ static bool take_clock(const char *p, spelled *s) {
 
 static bool take_time(const char *p, spelled *s) {
     if (!take_year(&p, &s->year) || !take(&p, '-') ||
-        !take_two(&p, &s->month) || !take(&p, '-') ||
-        !take_two(&p, &s->day)) {
+        !take_two(&p, &s->month) || !take(&p, '-') || !take_two(&p, &s->day)) {
         return false;
     }
     return *p == '\0' || ((take(&p, 'T') || take(&p, ' ')) && take_clock(p, s));

@@ -50,7 +50,7 @@ static lee_status make_room(lee_csv_block *block, lee_error *error) {
         memmove(block->bytes, block->next, used);
     }
     if (used == block->room) {
-        const size_t room = used == 0 ? FIRST_ROOM : 2 * used;
+        const size_t room = used == 0 ? block->wanted : 2 * used;
         char *bytes = realloc(block->bytes, room + LEE_CSV_SPARE);
         if (bytes == NULL) {
             return lee_fail(error, LEE_ERR_MEMORY,
@@ -73,7 +73,7 @@ static void end_last_line(lee_csv_block *block) {
 }
 
 lee_status lee_csv_block_fill(lee_csv_block *block, lee_error *error) {
-    if (block->end - block->next == GREATEST_ROOM) {
+    if (block->end - block->next >= GREATEST_ROOM) {
         const lee_csv_place row = {block->line, block->next};
         return lee_csv_block_refuse(block, row, block->next,
                                     "a row longer than 16 MiB", error);
@@ -122,6 +122,10 @@ static lee_status open_regular(lee_csv_block *block, lee_error *error) {
                         "%s: is a pipe or a device; expected a file",
                         block->path);
     }
+    /* A small file needs a small block: it and a byte, so that the end of the
+     * file is met without growing. */
+    block->wanted =
+        about.st_size < FIRST_ROOM ? (size_t)about.st_size + 1 : FIRST_ROOM;
     return LEE_OK;
 }
 

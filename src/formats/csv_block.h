@@ -11,13 +11,16 @@
 
 #include "leewater/status.h"
 
-enum { LEE_CSV_SPARE = 65 }; /* bytes that may be read behind `end` */
+/* Bytes that may be read behind the last newline, and room for one that the
+ * file lacks. */
+enum { LEE_CSV_SPARE = 64 + 1 };
 
 /* A file being read. {.file = -1} is closed. */
 typedef struct lee_csv_block {
     const char *path; /* the caller's */
     int file;
-    bool at_end; /* of the file: what is left ends with a newline */
+    bool at_end;   /* of the file: what is left ends with a newline */
+    size_t wanted; /* the first room */
     size_t room;
     char *bytes;      /* [room + LEE_CSV_SPARE] */
     char *end;        /* of what was read */

@@ -353,15 +353,14 @@ size_t lee_csv_rows_field_line(const lee_csv_rows *rows, size_t column) {
     return rows->is_walked ? rows->field_line[column] : rows->row_line;
 }
 
-/* The separator that the header holds most of outside quotes. */
-static char most_frequent_separator(const lee_csv_rows *rows) {
+/* Chooses the separator: the one that the header holds most of outside quotes.
+ * Returns how many there are. */
+static size_t choose_separator(lee_csv_rows *rows) {
     static const char candidates[] = {',', ';', '\t'};
     size_t count[sizeof candidates] = {0};
     bool is_quoted = false;
     for (const char *p = rows->block.next; p < rows->block.end; p++) {
-        if (*p == '"') {
-            is_quoted = !is_quoted;
-        }
+        is_quoted = is_quoted != (*p == '"');
         if (*p == '\n' && !is_quoted) {
             break;
         }
@@ -373,36 +372,54 @@ static char most_frequent_separator(const lee_csv_rows *rows) {
     for (size_t i = 1; i < sizeof candidates; i++) {
         most = count[i] > count[most] ? i : most;
     }
-    return candidates[most];
+    rows->separator = candidates[most];
+    return count[most];
+}
+
+/* Makes room for the fields of the header, of which there is one more than
+ * separators. */
+static lee_status make_room(lee_csv_rows *rows, size_t separators,
+                            lee_error *error) {
+    const size_t columns = separators + 1;
+    if (columns > MOST_COLUMNS) {
+        return lee_fail(
+            error, LEE_ERR_FORMAT, "%s:%zu:1: %zu columns; at most %d are read",
+            rows->block.path, rows->block.line, columns, MOST_COLUMNS);
+    }
+    rows->kept = columns;
+    rows->fields = calloc(columns, sizeof *rows->fields);
+    rows->field_line = calloc(columns, sizeof *rows->field_line);
+    if (rows->fields == NULL || rows->field_line == NULL) {
+        return lee_fail(error, LEE_ERR_MEMORY, "%s: no room for %zu columns",
+                        rows->block.path, columns);
+    }
+    return LEE_OK;
 }
 
 /* Reads the first row, which says how many fields every row has. */
 static lee_status read_header(lee_csv_rows *rows, lee_error *error) {
-    rows->fields = calloc(MOST_COLUMNS, sizeof *rows->fields);
-    rows->field_line = calloc(MOST_COLUMNS, sizeof *rows->field_line);
-    if (rows->fields == NULL || rows->field_line == NULL) {
-        return lee_fail(error, LEE_ERR_MEMORY, "%s: no room for its columns",
-                        rows->block.path);
-    }
     const char *newline = NULL;
     lee_status status = find_line(rows, &newline, error);
-    if (status == LEE_OK && newline == NULL) {
+    if (status != LEE_OK) {
+        return status;
+    }
+    if (newline == NULL) {
         const lee_csv_place end = {rows->block.line, rows->block.next};
         return lee_csv_block_refuse(&rows->block, end, end.line_start,
                                     "no row at all; expected a header row",
                                     error);
     }
+    status = make_room(rows, choose_separator(rows), error);
     if (status == LEE_OK) {
-        rows->separator = most_frequent_separator(rows);
-        rows->kept = MOST_COLUMNS;
         status = read_row(rows, newline, error);
     }
-    if (status == LEE_OK && rows->n > MOST_COLUMNS) {
-        return lee_fail(
-            error, LEE_ERR_FORMAT, "%s:%zu:1: %zu columns; at most %d are read",
-            rows->block.path, rows->row_line, rows->n, MOST_COLUMNS);
+    if (status == LEE_OK && rows->n != rows->kept) {
+        /* Its separators were counted in the first block alone. */
+        return lee_fail(error, LEE_ERR_FORMAT,
+                        "%s:%zu:1: a header with line breaks and more than "
+                        "256 KiB",
+                        rows->block.path, rows->row_line);
     }
-    rows->kept = rows->n;
     return status;
 }
 

@@ -104,6 +104,7 @@ foreign_room() {
     locale.h | pthread.h) echo base ;;
     fcntl.h | unistd.h | sys/*.h) echo base formats cli ;;
     signal.h | getopt.h) echo cli ;;
+    emmintrin.h) echo formats ;;
     *) echo nobody ;;
     esac
 }

@@ -124,8 +124,8 @@ static bool by_memchr_and_strtod(const char *path, bool with_time, tally *t) {
     if (bytes == NULL) {
         return false;
     }
-    char *line = memchr(bytes, '\n', size) + 1;
-    char *newline;
+    char *newline = memchr(bytes, '\n', size); /* of the header */
+    char *line = newline == NULL ? bytes + size : newline + 1;
     while ((newline = memchr(line, '\n', (size_t)(bytes + size - line)))) {
         read_line(line, newline, with_time, t);
         t->rows++;
@@ -206,9 +206,9 @@ static void report(double size, double seconds[WAYS][ROUNDS]) {
 }
 
 int main(void) {
-    char path[] = "/tmp/leewater-bench-XXXXXX";
-    const int descriptor = mkstemp(path);
-    FILE *file = descriptor < 0 ? NULL : fdopen(descriptor, "w");
+    char path[64];
+    (void)snprintf(path, sizeof path, "bench-%ld.csv", (long)getpid());
+    FILE *file = fopen(path, "wx");
     if (file == NULL) {
         perror(path);
         return 1;

@@ -161,6 +161,31 @@ static void a_row_of_more_than_16_mib_is_refused(void **state) {
     refused(write_wide(300, 60000, false), ":2:1: a row longer than 16 MiB");
 }
 
+/* 700 names of 500 bytes each, behind one with a line break or without. */
+static const char *write_long_header(const char *first) {
+    lee_text text = {0};
+    lee_text_add(&text, "%s", first);
+    for (int i = 0; i < 700; i++) {
+        lee_text_add(&text, ",c%0499d", i);
+    }
+    assert_false(text.has_failed);
+    const char *path =
+        folder_write_bytes(&folder, "header.csv", text.length, text.bytes);
+    lee_text_free(&text);
+    return path;
+}
+
+static void a_long_header_is_read_when_it_is_one_line(void **state) {
+    (void)state;
+    lee_csv *csv = opened(write_long_header("\"a\""));
+    assert_int_equal(lee_csv_columns(csv), 701);
+    assert_int_equal(strlen(lee_csv_header_at(csv, 700)->name), 500);
+    assert_null(next_row(csv));
+    lee_csv_close(csv);
+    refused(write_long_header("\"a\nb\""),
+            ":1:1: a header with line breaks and more than 256 KiB");
+}
+
 /* A good record with all liberties, to be damaged. */
 static const char record[] =
     "# invented\r\n"
@@ -292,6 +317,7 @@ int main(void) {
         cmocka_unit_test(a_field_of_64_kib_is_read),
         cmocka_unit_test(a_longer_field_is_refused),
         cmocka_unit_test(a_row_of_more_than_16_mib_is_refused),
+        cmocka_unit_test(a_long_header_is_read_when_it_is_one_line),
         cmocka_unit_test(a_damaged_file_is_read_or_refused_with_its_place),
         cmocka_unit_test(the_undamaged_file_is_read_whole),
     };
