@@ -6,8 +6,10 @@
 set -eu
 root=$1
 . "$root/tests/support/tap.sh"
-found=$(mktemp)
-trap 'rm -f "$found"' EXIT
+work=$(mktemp -d)
+trap 'rm -rf "$work"' EXIT
+found=$work/found
+includes=$work/includes
 cd "$root"
 
 stages='base numerics formats wind stress exposure basin setup series case
@@ -59,86 +61,74 @@ is_in() {
     return 1
 }
 
-# Lines "file:line:target" of the includes of one kind: '"' or '<'.
-includes() {
-    grep -nHE "^[[:space:]]*#[[:space:]]*include[[:space:]]*$2" "$1" |
-        sed -E 's/^([^:]*:[0-9]+):[^"<]*["<]([^">]*)[">].*/\1:\2/' || true
-}
+# Every include of the tree: path, line, '"' or '<', target.
+grep -rnE '^[[:space:]]*#[[:space:]]*include' src include --include='*.[ch]' |
+    sed -E 's/^([^:]*):([0-9]+):[^"<]*(["<])([^">]*)[">].*/\1 \2 \3 \4/' |
+    sort >"$includes"
 
 # What stands in quotes must be "stage/file.h", "leewater/file.h" or the
 # version that the build writes.
 misplaced_includes() {
-    stage=$1
-    for file in $(find "src/$stage" -name '*.[ch]'); do
-        includes "$file" '"' | while IFS=: read -r path line target; do
+    private="$1 $(allowed "$1")"
+    public=$(allowed_public "$1")
+    grep "^src/$1/[^ ]* [0-9]* \"" "$includes" |
+        while read -r path line _ target; do
+            place="$path:$line: $1 may not include $target"
+            name=${target#leewater/}
             case $target in
-            leewater/*)
-                name=${target#leewater/}
-                is_in "${name%.h}" "$(allowed_public "$stage")" ||
-                    echo "$path:$line: $stage may not include $target"
-                ;;
-            version.h) [ "$stage" = base ] ||
-                echo "$path:$line: only base knows version.h" ;;
-            */*)
-                is_in "${target%%/*}" "$stage $(allowed "$stage")" ||
-                    echo "$path:$line: $stage may not include $target"
-                ;;
-            *) echo "$path:$line: \"$target\" names no folder" ;;
+            leewater/*) is_in "${name%.h}" "$public" || echo "$place" ;;
+            version.h) [ "$1" = base ] || echo "$place" ;;
+            */*) is_in "${target%%/*}" "$private" || echo "$place" ;;
+            *) echo "$place: it names no folder" ;;
             esac
         done
-    done
 }
 
-# Foreign headers, the folder that may include them. Anything else in angle
-# brackets must belong to C17 or POSIX.
-foreign_room() {
+# Sets `rooms` to the folders that may include a foreign header; what is in
+# angle brackets and not named here must not be used at all.
+find_rooms() {
     case $1 in
-    gsl/*) echo numerics ;;
-    udunits2.h) echo base ;;
-    yaml.h) echo formats ;;
-    jansson.h) echo formats ;;
-    netcdf*.h) echo formats ;;
+    gsl/*) rooms=numerics ;;
+    udunits2.h) rooms=base ;;
+    yaml.h | jansson.h | netcdf*.h) rooms=formats ;;
     assert.h | ctype.h | errno.h | fenv.h | float.h | inttypes.h | limits.h | \
         math.h | stdarg.h | stdbool.h | stddef.h | stdint.h | stdio.h | \
-        stdlib.h | string.h | time.h) echo any ;;
-    locale.h | pthread.h) echo base ;;
-    fcntl.h | unistd.h | sys/*.h) echo base formats cli ;;
-    signal.h | getopt.h) echo cli ;;
-    emmintrin.h) echo formats ;;
-    *) echo nobody ;;
+        stdlib.h | string.h | time.h) rooms=any ;;
+    locale.h | pthread.h) rooms=base ;;
+    fcntl.h | unistd.h | sys/*.h) rooms='base formats cli' ;;
+    signal.h | getopt.h) rooms=cli ;;
+    emmintrin.h) rooms=formats ;;
+    *) rooms=nobody ;;
     esac
 }
 
 strange_headers() {
-    for stage in $stages; do
-        for file in $(find "src/$stage" -name '*.[ch]'); do
-            includes "$file" '<' | while IFS=: read -r path line target; do
-                rooms=$(foreign_room "$target")
-                [ "$rooms" = any ] || is_in "$stage" "$rooms" ||
-                    echo "$path:$line: <$target> belongs to: $rooms"
-            done
+    grep '^src/[^ ]* [0-9]* <' "$includes" |
+        while read -r path line _ target; do
+            find_rooms "$target"
+            stage=${path#src/}
+            [ "$rooms" = any ] || is_in "${stage%%/*}" "$rooms" ||
+                echo "$path:$line: <$target> belongs to: $rooms"
         done
-    done
 }
 
 # A public header knows the C library and other public headers only.
 strange_public_headers() {
-    for file in include/leewater/*.h; do
-        includes "$file" '"' | grep -v ':leewater/' || true
-        includes "$file" '<' | while IFS=: read -r path line target; do
-            [ "$(foreign_room "$target")" = any ] ||
-                echo "$path:$line: <$target> in a public header"
-        done
+    grep '^include/' "$includes" | while read -r path line mark target; do
+        find_rooms "$target"
+        case "$mark$target" in
+        '"leewater/'*) ;;
+        '"'*) echo "$path:$line: \"$target\" in a public header" ;;
+        *) [ "$rooms" = any ] ||
+            echo "$path:$line: <$target> in a public header" ;;
+        esac
     done
 }
 
 # Includes that form a circle among the public headers: tsort names them.
 public_circles() {
-    for file in include/leewater/*.h; do
-        includes "$file" '"' | while IFS=: read -r path _ target; do
-            echo "${path#include/} $target"
-        done
-    done | tsort 2>&1 >/dev/null || true
+    sed -nE 's|^include/([^ ]*) [0-9]* " (.*)|\1 \2|p' "$includes" |
+        tsort 2>&1 >/dev/null || true
 }
 
 unknown_folders() {
@@ -148,12 +138,10 @@ unknown_folders() {
     done
 }
 
-: >"$found"
 unknown_folders >"$found"
 holds 'every folder of src is in the table' "$found"
 for stage in $stages; do
-    : >"$found"
-    [ ! -d "src/$stage" ] || misplaced_includes "$stage" >"$found"
+    misplaced_includes "$stage" >"$found"
     holds "$stage includes only what stands below it" "$found"
 done
 strange_headers >"$found"

@@ -41,38 +41,46 @@ for folder in src/*/; do
 done >"$found"
 holds 'no folder of src holds more than 13 sources' "$found"
 
+# known FILE: is "'FILE'" in the text of a build file?
+known() {
+    case $build_file in *"'$1'"*) return 0 ;; esac
+    return 1
+}
+
+build_file=$(cat src/meson.build)
 for file in src/*/*.c; do
-    grep -q "'${file#src/}'" src/meson.build || echo "$file is not built"
+    known "${file#src/}" || echo "$file is not built"
 done >"$found"
 holds 'every source is in src/meson.build' "$found"
 
-for file in tests/*/test_*.c; do
-    name=$(basename "$file" .c)
-    suite=$(basename "$(dirname "$file")")
-    awk -v suite="'$suite'" -v name="'${name#test_}'" '
-        index($0, suite ": [") { inside = 1 }
-        inside && index($0, name) { found = 1 }
-        inside && /\]/ { inside = 0 }
-        END { exit !found }' tests/meson.build || echo "$file is not run"
+for folder in tests/*/; do
+    suite=${folder#tests/}
+    # The lines of the suite's list, from "'suite': [" to the bracket.
+    build_file=$(sed -n "/'${suite%/}': \[/,/\]/p" tests/meson.build)
+    for file in "$folder"test_*.c; do
+        name=${file#"$folder"test_}
+        [ ! -e "$file" ] || known "${name%.c}" || echo "$file is not run"
+    done
 done >"$found"
 holds 'every test program is in tests/meson.build' "$found"
 
+build_file=$(cat include/leewater/meson.build &&
+    sed "s/\"/'/g" include/leewater/leewater.h)
 for file in include/leewater/*.h; do
-    name=$(basename "$file")
-    grep -q "'$name'" include/leewater/meson.build ||
-        echo "$name is not installed"
-    [ "$name" = leewater.h ] ||
-        grep -q "\"leewater/$name\"" include/leewater/leewater.h ||
+    name=${file##*/}
+    known "$name" || echo "$name is not installed"
+    [ "$name" = leewater.h ] || known "leewater/$name" ||
         echo "$name is not in leewater.h"
 done >"$found"
 holds 'every public header is installed and in leewater.h' "$found"
 
 # "/* name.c - what it holds": the first line of a source. A test's first
 # line is a sentence that says what it proves.
-for file in src/*/*.[ch] include/leewater/*.h tests/support/*.h; do
-    head -n 1 "$file" | grep -q "^/\* $(basename "$file") - [^ ]" ||
-        echo "$file"
-done >"$found"
+awk 'FNR == 1 {
+    name = FILENAME
+    sub(".*/", "", name)
+    if (index($0, "/* " name " - ") != 1) print FILENAME
+}' src/*/*.[ch] include/leewater/*.h tests/support/*.h >"$found"
 holds 'every source begins with its name and its responsibility' "$found"
 
 sources | xargs grep -nE '(TODO|FIXME|XXX)' | grep -v 'issue [0-9]' \
