@@ -4,7 +4,7 @@
 #include <stdlib.h>
 
 /* The only distance that may be more frequent than all others together
- * (Boyer and Moore 1991, from memory): most records have one. */
+ * (Boyer and Moore 1991, from memory) [boyermoore1991]. */
 static int64_t majority_candidate(const lee_wind_record *record) {
     int64_t candidate = 0;
     size_t lead = 0;
