@@ -20,6 +20,15 @@ static lee_status refuse_gap(const lee_wind_record *record, size_t before,
                     (double)apart / 3600.0, (double)allowed / 3600.0);
 }
 
+/* Does a piece end with the sample `before`, the next with wind being `after`
+ * (n: none)? */
+static bool ends_piece(const lee_wind_record *record, const lee_gap_rule *rule,
+                       int64_t step, size_t before, size_t after) {
+    return after == record->n ||
+           lee_wind_is_long_gap(rule, step,
+                                record->time[after] - record->time[before]);
+}
+
 /* Counts the pieces, and lists them when `piece` is there. */
 static size_t find_pieces(const lee_wind_record *record,
                           const lee_gap_rule *rule, int64_t step,
@@ -30,16 +39,12 @@ static size_t find_pieces(const lee_wind_record *record,
     size_t before = first;
     while (before < n) {
         const size_t after = lee_wind_seek(record, before + 1, n);
-        const bool is_last = after == n;
-        if (is_last ||
-            lee_wind_is_long_gap(rule, step,
-                                 record->time[after] - record->time[before])) {
-            if (piece != NULL) {
-                piece[count] = (lee_wind_piece){first, before + 1};
-            }
-            count++;
-            first = after;
+        const bool is_end = ends_piece(record, rule, step, before, after);
+        if (is_end && piece != NULL) {
+            piece[count] = (lee_wind_piece){first, before + 1};
         }
+        count += is_end ? 1 : 0;
+        first = is_end ? after : first;
         before = after;
     }
     return count;
