@@ -243,7 +243,7 @@ static void print_wind(const lee_printer *to, const lee_case *from,
         print_given(to, wind);
     }
     lee_print_row(to, "measured", "at %s over %s%s%s",
-                  lee_show_length(to, exposure->height).text,
+                  lee_show_height(to, exposure->height).text,
                   exposure->is_over_land ? "land" : "water",
                   isnan(exposure->averaging) ? "" : ", means over ",
                   isnan(exposure->averaging)

@@ -39,16 +39,21 @@ static bool is_outside(const lee_formula *formula, double speed) {
     return !(speed >= formula->speed_min && speed <= formula->speed_max);
 }
 
-/* Whether a wind of this length brings the steady level about. */
+/* Whether a wind of this length brings the steady level about. A wind that
+ * sets in at once passes it after a quarter of the first period and swings to
+ * twice of it without friction (docs/theory.md). */
 static const char *duration_verdict(const lee_wind_estimate *wind,
                                     const lee_water_estimate *water) {
     if (wind->wind.duration >= water->first_period) {
-        return "long enough for these levels";
+        return "long enough; a sudden wind swings past these levels first";
     }
     if (wind->wind.duration >= water->develop_time) {
         return "enough to reach these levels, not for the swing to calm";
     }
-    return "too short: the water stays below these levels";
+    if (isnan(water->develop_time)) {
+        return "cannot be judged: this water has no period of its own";
+    }
+    return "shorter than half the first period: see leewater run";
 }
 
 static void print_question(const lee_printer *to, const lee_case *from,
@@ -62,10 +67,10 @@ static void print_question(const lee_printer *to, const lee_case *from,
                   lee_show_distance(to, fetch_of(from)).text);
     lee_print_row(
         to, "depth", "%s",
-        lee_show_length(to, depth_of(from, result->still_water)).text);
+        lee_show_height(to, depth_of(from, result->still_water)).text);
     lee_print_row(to, "wind", "%s, measured at %s over %s",
                   lee_show_speed(to, wind->wind.speed).text,
-                  lee_show_length(to, exposure->height).text,
+                  lee_show_height(to, exposure->height).text,
                   exposure->is_over_land ? "land" : "water");
     lee_print_row(to, "10 m over water", "%s",
                   lee_show_speed(to, wind->speed).text);
@@ -101,13 +106,14 @@ static void print_answer(const lee_printer *to, const lee_wind_estimate *wind) {
 
 static void print_formulas(const lee_printer *to, const lee_case *from,
                            const lee_steady_result *result) {
-    static const char layout[] = "  %-24s  %8s%1s  %-10s  %s\n";
+    static const char layout[] = "  %-18s  %8s%1s  %-9s  %s\n";
     bool has_outside = false;
     bool has_memory = false;
     const lee_formula *formula;
     (void)fputc('\n', to->stream);
-    (void)fprintf(to->stream, layout, "Handbook formulas", lee_length_unit(to),
-                  "", "is called", "equals");
+    (void)fputs("Handbook formulas\n", to->stream);
+    (void)fprintf(to->stream, layout, "", lee_length_unit(to), "", "is called",
+                  "equals");
     for (size_t i = 0; (formula = lee_formula_at(i)) != NULL; i++) {
         const bool outside = is_outside(formula, result->wind[0].speed);
         const double level = formula_level(formula, from, result);
@@ -127,8 +133,8 @@ static void print_formulas(const lee_printer *to, const lee_case *from,
     }
     if (has_memory) {
         lee_print_wrapped(to, 2, "",
-                          "sources, and which of them were not re-read: "
-                          "--json and docs/references.md");
+                          "sources, and which were not re-read: --json and "
+                          "docs/references.md");
     }
 }
 

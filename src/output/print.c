@@ -54,6 +54,14 @@ lee_cell lee_show_length(const lee_printer *to, double metres) {
     return cell;
 }
 
+lee_cell lee_show_height(const lee_printer *to, double metres) {
+    lee_cell cell;
+    const double value = rounded(metres / (is_us(to) ? foot : 1.0), 0.01);
+    (void)snprintf(cell.text, sizeof cell.text, "%.12g %s", value,
+                   lee_length_unit(to));
+    return cell;
+}
+
 static bool has_range(const lee_ranged *ranged) {
     return !isnan(ranged->low) || !isnan(ranged->high);
 }

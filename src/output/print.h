@@ -34,6 +34,10 @@ lee_cell lee_show_range_only(const lee_printer *to, const lee_ranged *ranged);
 lee_cell lee_show_bare_length(const lee_printer *to, double metres);
 const char *lee_length_unit(const lee_printer *to);
 
+/* Heights and depths as they were given, to a hundredth, no zeros at the end:
+ * "10 m", "4.25 m", "13.12 ft". */
+lee_cell lee_show_height(const lee_printer *to, double metres);
+
 /* Chainage, fetch, width: "11.80 km", "7.33 mi"; the bare number; the unit. */
 lee_cell lee_show_distance(const lee_printer *to, double metres);
 lee_cell lee_show_bare_distance(const lee_printer *to, double metres);

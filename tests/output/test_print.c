@@ -54,11 +54,19 @@ static void a_range_that_may_fall_dry_says_so(void **state) {
                         "0.412 m (dry to 0.550)");
 }
 
+/* 4 m is 13.123 ft. */
+static void heights_have_no_zeros_at_the_end(void **state) {
+    (void)state;
+    assert_string_equal(lee_show_height(&si, 10.0).text, "10 m");
+    assert_string_equal(lee_show_height(&si, 4.256).text, "4.26 m");
+    assert_string_equal(lee_show_height(&us, 4.0).text, "13.12 ft");
+}
+
 /* 1 mile is 1609.344 m. */
 static void chainage_is_shown_in_kilometres_or_miles(void **state) {
     (void)state;
     assert_string_equal(lee_show_distance(&si, 11800.0).text, "11.80 km");
-    assert_string_equal(lee_show_distance(&us, 16093.44).text, "10.00 mi");
+    assert_string_equal(lee_show_distance(&us, 1609344.0).text, "1000.00 mi");
 }
 
 /* 1 mph is 0.44704 m/s: 22 m/s is 49.21 mph. */
@@ -184,6 +192,7 @@ int main(void) {
         cmocka_unit_test(a_range_stands_behind_its_value),
         cmocka_unit_test(a_value_without_range_stands_alone),
         cmocka_unit_test(a_range_that_may_fall_dry_says_so),
+        cmocka_unit_test(heights_have_no_zeros_at_the_end),
         cmocka_unit_test(chainage_is_shown_in_kilometres_or_miles),
         cmocka_unit_test(speed_is_shown_in_metres_per_second_or_miles_per_hour),
         cmocka_unit_test(directions_stay_below_a_full_turn),
