@@ -127,8 +127,9 @@ static void predict(lee_transient *engine, double dt, const double middle[]) {
         const double c = step * engine->friction[f] * per_depth;
         const double lost = c * fabs(u);
         const double slope = 1.0 + 2.0 * lost;
-        const double kept = slope / ((1.0 + lost) * (1.0 + lost) + c * fabs(y) +
-                                     step * r * slope); /* 1/(1 + gamma) */
+        /* 1/(1 + gamma); a law has C_f or r, never both */
+        const double kept =
+            slope / ((1.0 + lost) * (1.0 + lost) + c * fabs(y) + step * r);
         engine->predicted[f] = y * kept;
         engine->response[f] = step * pull * o->theta * kept;
     }
