@@ -344,6 +344,33 @@ static void a_film_at_rest_does_not_bolt_in_a_gale(void **state) {
     lee_channel_free(&channel);
 }
 
+/* A quay whose foot is the face at 10 km: the link there lies at 0 m, the
+ * node behind it at 1.75 m, the mean of its first cell. */
+static double quay(const void *numbers, double x) {
+    (void)numbers;
+    return x <= 10e3 ? 0.0 : 2.0;
+}
+
+/* With 5 cm to go the wind outweighs the step of the surface: what keeps the
+ * quay dry is that nothing stands over its edge yet. */
+static void wind_does_not_lift_water_onto_a_quay(void **state) {
+    (void)state;
+    const double high_water = 1.70;
+    const double stress = 2.0;
+    lee_channel channel = cut_reach(0.0, 20e3, 40, quay, NULL);
+    const lee_transient_options options = rough(0.02);
+    lee_transient *engine = start_engine(&channel, &options, flat, &high_water);
+    weather wind = {channel.links, steady_stress, &stress, 0.0};
+    assert_near(channel.bed[20], 1.75, 1e-12);
+    run_steps(engine, 1, 30.0, &wind);
+    assert_near(depth_of(engine, &channel, 20), 0.0, 0.0);
+    assert_true(lee_transient_speed(engine)[18] > 0.0);
+    run_steps(engine, 120, 30.0, &wind);
+    assert_true(depth_of(engine, &channel, 20) > 0.0); /* over the edge now */
+    lee_transient_free(engine);
+    lee_channel_free(&channel);
+}
+
 /* ---- held ends ---- */
 
 /* Open end, uniform depth, 1 Pa, 50 km, 10 m: 0.497317749 m. */
@@ -413,6 +440,7 @@ int main(void) {
         cmocka_unit_test(a_dam_breaks_onto_water_as_stoker_says),
         cmocka_unit_test(wind_does_not_drive_a_film_up_a_beach_for_ever),
         cmocka_unit_test(a_film_at_rest_does_not_bolt_in_a_gale),
+        cmocka_unit_test(wind_does_not_lift_water_onto_a_quay),
         cmocka_unit_test(an_open_canal_ends_in_its_closed_form),
         cmocka_unit_test(a_reach_drains_through_a_falling_end_without_debt),
     };
