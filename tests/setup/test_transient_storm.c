@@ -116,19 +116,19 @@ static double wild_stress(const void *numbers, double t) {
     return w->stress[(size_t)(t / 10800.0) % 16];
 }
 
-static wild draw(uint64_t *seed) {
-    wild w = {.mean = 0.3 + 5.0 * random_share(seed)};
+static wild draw_wild(dice *d) {
+    wild w = {.mean = 0.3 + 5.0 * random_share(d)};
     for (size_t k = 0; k < 6; k++) {
-        w.waves[k] = w.mean * random_share(seed) / (double)(k + 2);
-        w.shift[k] = random_share(seed);
+        w.waves[k] = w.mean * random_share(d) / (double)(k + 2);
+        w.shift[k] = random_share(d);
     }
-    w.island = 1.5 * w.mean * random_share(seed);
-    w.place = random_share(seed);
+    w.island = 1.5 * w.mean * random_share(d);
+    w.place = random_share(d);
     for (size_t k = 0; k < 16; k++) {
         /* up to 45 m s-1: 7.5 Pa; one window in four is calm */
-        const double strength = 7.5 * pow(random_share(seed), 2.0);
-        const double sign = random_share(seed) < 0.5 ? -1.0 : 1.0;
-        w.stress[k] = random_share(seed) < 0.25 ? 0.0 : sign * strength;
+        const double strength = 7.5 * pow(random_share(d), 2.0);
+        const double sign = random_share(d) < 0.5 ? -1.0 : 1.0;
+        w.stress[k] = random_share(d) < 0.25 ? 0.0 : sign * strength;
     }
     return w;
 }
@@ -145,12 +145,12 @@ static void check_state(const lee_transient *engine,
     }
 }
 
-static void run_wild(uint64_t *seed) {
+static void run_wild(dice *d) {
     static const double steps[] = {10.0, 60.0, 300.0, 600.0};
-    const wild w = draw(seed);
+    const wild w = draw_wild(d);
     const double still = 0.0;
-    const size_t cells = 50 + (size_t)(50.0 * random_share(seed));
-    const double dt = steps[(size_t)(4.0 * random_share(seed))];
+    const size_t cells = 50 + (size_t)draw(d, 50);
+    const double dt = steps[(size_t)draw(d, 3)];
     lee_channel channel = cut_reach(0.0, 30e3, cells, wild_bed, &w);
     lee_transient_options options = frictionless();
     options.bed = (lee_bed_law){LEE_BED_MANNING, 0.02};
@@ -169,10 +169,10 @@ static void run_wild(uint64_t *seed) {
 
 static void no_storm_on_no_lake_makes_water_or_loses_it(void **state) {
     (void)state;
-    uint64_t seed = 1996;
+    dice d = {1996};
     const size_t lakes = steps_or_fewer(200, 40);
     for (size_t k = 0; k < lakes; k++) {
-        run_wild(&seed);
+        run_wild(&d);
     }
 }
 

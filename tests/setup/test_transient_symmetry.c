@@ -24,17 +24,17 @@ static double rough_bed(const void *numbers, double x) {
 
 /* A bed of steps between -6 m and +3 m about a still water at 417.3 m: pools,
  * islands and dry nodes. */
-static rough_ground random_ground(uint64_t seed) {
+static rough_ground random_ground(dice d) {
     rough_ground ground;
     for (size_t i = 0; i < 64; i++) {
-        ground.heights[i] = 417.3 - 6.0 + 9.0 * random_share(&seed);
+        ground.heights[i] = 417.3 - 6.0 + 9.0 * random_share(&d);
     }
     return ground;
 }
 
 static void water_at_rest_over_any_bed_stays_at_rest(void **state) {
     (void)state;
-    const rough_ground ground = random_ground(20310110);
+    const rough_ground ground = random_ground((dice){20310110});
     const double level = 417.3;
     lee_channel channel = cut_reach(0.0, length, 40, rough_bed, &ground);
     const lee_transient_options options = rough();

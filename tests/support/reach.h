@@ -3,6 +3,7 @@
 #define LEEWATER_TESTS_REACH_H
 
 #include "support/check.h"
+#include "support/dice.h"
 
 #include <stdlib.h>
 
@@ -99,12 +100,10 @@ static inline void run_steps(lee_transient *engine, size_t steps, double dt,
     }
 }
 
-/* Random numbers in [0, 1): a 64-bit linear congruence (Knuth's MMIX
- * constants, from memory), the upper bits. The seed is the state. */
-static inline double random_share(uint64_t *state) {
-    *state =
-        *state * UINT64_C(6364136223846793005) + UINT64_C(1442695040888963407);
-    return (double)(*state >> 11) * 0x1p-53;
+/* A number in [0, 1] drawn by lot. */
+static inline double random_share(dice *d) {
+    const int last = 1 << 30;
+    return (double)draw(d, last) / (double)last;
 }
 
 /* Fewer steps when the build checks every access. */
