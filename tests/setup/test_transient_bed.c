@@ -53,16 +53,16 @@ static void uniform_flow_runs_as_its_bed_law_says(void **state) {
     (void)state;
     const double root = sqrt(normal_depth * slope);
     const double log_mean = (log(normal_depth / 1e-3) - 1.0) / 0.40;
+    const double manning = pow(normal_depth, 2.0 / 3.0) * sqrt(slope) / 0.025;
     const struct {
         lee_bed_law bed;
         double speed; /* m s-1 */
     } laws[] = {
-        {{LEE_BED_MANNING, 0.025},
-         pow(normal_depth,            2.0 / 3.0) * sqrt(slope) / 0.025},
-        {{LEE_BED_CHEZY, 45.0},                        45.0 * root    },
-        {{LEE_BED_ROUGHNESS, 1e-3},                        sqrt(gravity) * log_mean * root},
-        {{LEE_BED_DRAG, 3e-3},                        sqrt(gravity / 3e-3) * root         },
-        {{LEE_BED_LINEAR, 2e-3},                        gravity * slope / 2e-3},
+        {{LEE_BED_MANNING, 0.025},  manning                        },
+        {{LEE_BED_CHEZY, 45.0},     45.0 * root                    },
+        {{LEE_BED_ROUGHNESS, 1e-3}, sqrt(gravity) * log_mean * root},
+        {{LEE_BED_DRAG, 3e-3},      sqrt(gravity / 3e-3) * root    },
+        {{LEE_BED_LINEAR, 2e-3},    gravity * slope / 2e-3         },
     };
     lee_channel channel = cut_reach(0.0, 4e3, 40, sloping, NULL);
     for (size_t k = 0; k < sizeof laws / sizeof laws[0]; k++) {
