@@ -121,16 +121,20 @@ static inline bool eight_digits(uint64_t digits, int64_t *number) {
     return true;
 }
 
+/* The top bit of each byte of `word` that equals `byte`: x is zero there, when
+ * neither it nor its lower seven bits plus 127 reach the top bit (Warren 2013,
+ * section 6-1, from memory) [warren2013]. */
+static inline uint64_t bytes_equal(uint64_t word, char byte) {
+    const uint64_t x = word ^ (every_byte * (unsigned char)byte);
+    return ~(((x & low_bits) + low_bits) | x | low_bits);
+}
+
 /* Reads one to eight characters that are digits and at most one decimal sign,
  * which is what most fields of a table are; false for all else. */
 static inline bool short_value(size_t length, const char text[], char sign,
                                double *value) {
     const uint64_t word = word_of(length, text);
-    /* The top bit of each byte that is the decimal sign (Warren 2013, Hacker's
-     * Delight, section 6-1, from memory). */
-    const uint64_t other = word ^ (every_byte * (unsigned char)sign);
-    const uint64_t found =
-        ~(((other & low_bits) + low_bits) | other | low_bits);
+    const uint64_t found = bytes_equal(word, sign);
     size_t digits = length;
     uint64_t joined = word;
     size_t behind = 0; /* digits behind the decimal sign */

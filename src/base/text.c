@@ -160,7 +160,8 @@ static size_t least(size_t a, size_t b) {
 }
 
 /* Letters to put in, leave out, change or swap with their neighbour between
- * two words shorter than WORD_ROOM (Damerau 1964, from memory). */
+ * two words shorter than WORD_ROOM (Damerau 1964, from memory)
+ * [damerau1964]. */
 static size_t edit_distance(const char *a, const char *b) {
     size_t rows[3][WORD_ROOM + 1];
     size_t *before = rows[0]; /* distances of the prefix two letters shorter */

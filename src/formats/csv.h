@@ -4,7 +4,8 @@
  * RFC 4180 with the liberties people take: comma, semicolon or tab; LF or
  * CRLF; quotes with "" and line breaks inside; a byte order mark; blank lines
  * and lines that begin with '#' are passed over; decimal comma where the
- * separator is not a comma. */
+ * separator is not a comma [rfc4180]. A field holds up to 64 KiB, a row up to
+ * 16 MiB and 4096 fields, a file any number of rows. */
 #ifndef LEEWATER_FORMATS_CSV_H
 #define LEEWATER_FORMATS_CSV_H
 
@@ -32,8 +33,9 @@ typedef struct lee_csv lee_csv;
 /* Opens a regular file and reads its header row. The separator is the one of
  * tab, semicolon, comma that the header holds most of outside quotes.
  * Errors: LEE_ERR_FILE (missing, a directory, not regular, unreadable);
- * LEE_ERR_FORMAT (empty, binary: a NUL byte; a repeated header name; CR-only
- * line ends; a quote left open: the line it opened on), LEE_ERR_MEMORY.
+ * LEE_ERR_FORMAT (empty, binary: a NUL byte; UTF-16; numbers in the place of
+ * the header; a repeated header name; CR-only line ends; a quote left open:
+ * the line it opened on), LEE_ERR_MEMORY.
  * Messages begin "path:line:column: ". */
 lee_status lee_csv_open(const char *path, lee_csv **csv, lee_error *error);
 void lee_csv_close(lee_csv *csv);
@@ -47,12 +49,13 @@ const lee_csv_header *lee_csv_header_at(const lee_csv *csv, size_t column);
 
 /* Index of the column called `name` (case of ASCII letters ignored) or "#3"
  * for the third. Not found: LEE_ERR_FORMAT naming the nearest and the list of
- * columns. */
+ * columns, behind "path:line: ". */
 lee_status lee_csv_find(const lee_csv *csv, const char *name, size_t *column,
                         lee_error *error);
 
-/* Reads the next row. Rows with more or fewer fields than the header are
- * LEE_ERR_FORMAT.
+/* Reads the next row. Rows with more or fewer fields than the header, quotes
+ * out of place and NUL bytes are LEE_ERR_FORMAT, a read that fails is
+ * LEE_ERR_FILE. After a failure read no further.
  *
  *   fields  out: [columns], NULL at the end of the file */
 lee_status lee_csv_next(lee_csv *csv, const lee_csv_field **fields,
