@@ -22,7 +22,7 @@ double lee_richardson_error(double coarse, double middle, double fine) {
     }
     /* A coarse mesh that could not be coarser says nothing: order 1. */
     const double observed = first < nothing ? 1.0 : log2(first / second);
-    const double order = fmin(fmax(observed, 0.5), 2.0);
+    const double order = fmin(fmax(observed, 1.0), 2.0);
     return second / (1.0 - exp2(-order));
 }
 

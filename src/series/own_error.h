@@ -18,7 +18,7 @@ typedef struct lee_own_error {
 
 /* Runs the strongest events again at half and twice the step and the cells,
  * and extrapolates (Richardson 1911) [richardson1911] with the observed order
- * kept between 0.5 and 2. `progress` counts its work.
+ * kept between 1 and 2. `progress` counts its work.
  * Errors: those of the engine. */
 lee_status lee_own_error_find(const lee_problem *problem,
                               const lee_run_plan *plan, lee_progress *progress,

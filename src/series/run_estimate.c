@@ -306,9 +306,8 @@ static lee_status warn_of_drag(workshop *shop, double fastest,
     if (extrapolated) {
         status = lee_notes_add(warnings, error,
                                "drag extrapolated: the strongest wind, %.1f "
-                               "m/s, is outside the range that %s was fitted "
-                               "on",
-                               in.speed, shop->result->method.drag);
+                               "m/s, is outside the speeds that %s covers",
+                               in.speed, lee_setting_drag_name(problem));
     }
     if (status == LEE_OK && capped) {
         status = lee_notes_add(warnings, error,

@@ -15,7 +15,7 @@ static const double steps_in_period = 100.0;
 static const double shortest_step = 10.0; /* s */
 static const double longest_step = 600.0; /* s */
 
-/* Cells: two in the shortest distance of profile rows, within these. */
+/* Cells: four in the shortest distance of profile rows, within these. */
 enum { FEWEST_CELLS = 100, MOST_CELLS = 400 };
 
 /* Calm that follows a made storm: at least this long, s, and four periods. */
@@ -57,7 +57,7 @@ static void choose_cells_and_step(const lee_problem *problem,
         shortest =
             fmin(shortest, profile->chainage[i] - profile->chainage[i - 1]);
     }
-    const double wanted = ceil(2.0 * length / shortest);
+    const double wanted = ceil(4.0 * length / shortest);
     plan->cells = problem->solver.cells;
     if (plan->cells == 0) {
         plan->cells = (size_t)fmin(fmax(wanted, FEWEST_CELLS), MOST_CELLS);

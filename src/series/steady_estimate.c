@@ -227,18 +227,16 @@ static lee_status warn_of_drag(const lee_problem *problem,
     in.speed = wind->speed;
     bool extrapolated = false;
     bool capped = false;
-    char drag[160];
     wind->coefficient =
         lee_drag_coefficient(&problem->drag, &in, &extrapolated, &capped);
     wind->stress =
         in.air_density * wind->coefficient * wind->speed * wind->speed;
-    (void)lee_drag_describe(&problem->drag, sizeof drag, drag);
     lee_status status = LEE_OK;
     if (extrapolated) {
         status = lee_notes_add(&wind->warnings, error,
                                "drag extrapolated: %.1f m/s is outside the "
-                               "range that %s was fitted on",
-                               wind->speed, drag);
+                               "speeds that %s covers",
+                               wind->speed, lee_setting_drag_name(problem));
     }
     if (status == LEE_OK && capped) {
         status = lee_notes_add(&wind->warnings, error,
