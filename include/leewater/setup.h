@@ -106,7 +106,8 @@ typedef struct lee_steady_input {
 
 /* One connected water of the equilibrium. Owns `node`. */
 typedef struct lee_steady_water {
-    double from; /* m, chainage of its shores */
+    double from; /* m, chainage of its shores, where the depth is zero; a
+                    shore beyond the profile is a wall at its end */
     double to;
     double set_up;    /* highest level minus still water, m */
     double set_up_at; /* chainage, m */
@@ -117,7 +118,9 @@ typedef struct lee_steady_water {
     double *node;         /* [node_count] chainages where level = still water */
     double volume;        /* m3 */
     double volume_defect; /* |V - V0| / max(integral b|eta|/2, 1 mm area);
-                             0 with a held end */
+                             0 with a held end; far below 1e-10 but where
+                             winds of two ways along a bent axis drive sheets
+                             of water, which a double cannot always place */
     double first_period;  /* s, of the water at rest in the still lake that
                              holds this stretch; NaN when it has no area */
     bool was_parted;      /* a sill fell dry and cut it from its neighbour */
@@ -128,26 +131,36 @@ typedef struct lee_steady {
     size_t count;
     lee_steady_water *water; /* [count] in order of chainage; may be 0 */
     size_t n;
-    double *x;     /* [n] m: the surface drawn finely, all profile rows in */
-    double *level; /* [n] m above the datum; NaN where dry */
+    double *x;         /* [n] m: the surface drawn, all profile rows in; not
+                      decreasing */
+    double *level;     /* [n] m above the datum; NaN where dry */
     double dry_length; /* m of the still lake's wetted axis fallen dry */
-    double cross_tilt; /* largest lambda |tau_n| b/(rho g H), m */
+    double cross_tilt; /* largest lambda |tau_n| b/(rho g H), m, where the
+                          water is at least half as deep as on average:
+                          nearer the beaches it means nothing */
     double cross_tilt_at;
-    bool has_sill; /* waters joined or parted on the way */
+    bool has_sill; /* waters parted, spilled or joined on the way */
     double along;  /* area-mean of projected stress over full stress,
-                           -1 to 1; |along| < 0.01: wind across the axis */
+                      -1 to 1; |along| < 0.01: wind across the axis */
+    struct lee_surface *surface; /* exact, for lee_steady_level_at */
 } lee_steady;
 
 /* Equilibrium levels d(eta)/dx = lambda tau_x/(rho g H) on the profile itself,
- * volume of each connected water kept; shores dry and flood; over sills the
- * limit of a wind grown slowly from rest.
- * Errors: LEE_ERR_ARGUMENT, LEE_ERR_DATA (no water at this still water),
- * LEE_ERR_CONVERGENCE, LEE_ERR_MEMORY. */
+ * crossed segment by segment in closed form; volume of each connected water
+ * kept; shores dry and flood. Over sills the limit of a wind grown slowly from
+ * rest: a pool spills only while its lee level stands above its crest, and
+ * keeps its volume once parted. On a bed that rises with the wind by m, where
+ * 2a/m <= 0.25 m with a = lambda tau/(rho g), the surface is no steeper than
+ * m/2 (film rule; the transient engine keeps it too). Without stress the lake
+ * is at rest.
+ * Errors: LEE_ERR_ARGUMENT, LEE_ERR_DATA (a faulty profile, no water at this
+ * still water, a held level below the bed), LEE_ERR_CONVERGENCE, LEE_ERR_MEMORY;
+ * `steady` is then empty. */
 lee_status lee_steady_solve(const lee_steady_input *input, lee_steady *steady,
                             lee_error *error);
 void lee_steady_free(lee_steady *steady);
 
-/* Level at chainage x; NaN where dry or off the axis. */
+/* Level at chainage x, exact; NaN where dry or off the axis. */
 double lee_steady_level_at(const lee_steady *steady, double x);
 
 /* First natural period, s, of the water of `profile` that covers chainage x

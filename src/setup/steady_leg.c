@@ -251,6 +251,19 @@ lee_spot lee_piece_at(const lee_piece *piece, double share) {
     };
 }
 
+double lee_piece_level(const lee_piece *piece, double distance) {
+    const double level = piece->bed + piece->depth;
+    if (!piece->is_curved) {
+        return level + (piece->slope + piece->fall) * distance;
+    }
+    if (!(distance > 0.0)) {
+        return level;
+    }
+    const double t =
+        span_over(piece->depth, piece->drive, piece->slope, distance, INFINITY);
+    return level + piece->drive * fmin(t, piece->span);
+}
+
 double lee_piece_node(const lee_piece *piece) {
     const double level = piece->bed + piece->depth;
     const double rise =

@@ -71,6 +71,9 @@ typedef struct lee_spot {
 /* The place at `share` (0 to 1) of a piece's span. */
 lee_spot lee_piece_at(const lee_piece *piece, double share);
 
+/* Level `distance` metres behind the piece's beginning. */
+double lee_piece_level(const lee_piece *piece, double distance);
+
 /* Share of the span at which the level is zero; outside 0 to 1 or not finite
  * when it is not on the piece. */
 double lee_piece_node(const lee_piece *piece);

@@ -8,11 +8,10 @@
 
 enum { MAX_PROBES = 400 };
 
-/* Parts of the volume: what rounding may leave, what is too little to spill,
- * and what a fit may never miss by. */
+/* Parts of the volume: what rounding may leave, and what is too little to
+ * spill. */
 static const double rounding = 2.0 * DBL_EPSILON;
 static const double nothing = 1e-13;
-static const double largest_miss = 1e-9;
 
 /* Leg on which the edge of a start lies. */
 static size_t leg_of_edge(const lee_reach *reach, const lee_room *room,
@@ -269,9 +268,8 @@ static lee_fit judge(const search *s, const bracket *b) {
     return fit_of(LEE_FIT_OVER_RIGHT, &b->low, 0);
 }
 
-lee_status lee_march_fit(const lee_reach *reach, const lee_room *room,
-                         double volume, double guess, double area, lee_fit *fit,
-                         lee_error *error) {
+void lee_march_fit(const lee_reach *reach, const lee_room *room, double volume,
+                   double guess, double area, lee_fit *fit) {
     const search s = {reach, room, volume};
     bracket b;
     if (!enclose(&s, guess, area, &b)) {
@@ -282,15 +280,8 @@ lee_status lee_march_fit(const lee_reach *reach, const lee_room *room,
                       : fits   ? LEE_FIT_INSIDE
                                : LEE_FIT_OVER_LEFT,
                       &b.high, b.high.march.leg);
-        return LEE_OK;
+        return;
     }
     close_in(&s, &b);
     *fit = judge(&s, &b);
-    const double miss = fabs(fit->volume - volume);
-    if (fit->kind == LEE_FIT_INSIDE && miss > largest_miss * volume) {
-        return lee_fail(error, LEE_ERR_CONVERGENCE,
-                        "the steady surface misses its volume by %g m3 of %g",
-                        miss, volume);
-    }
-    return LEE_OK;
 }

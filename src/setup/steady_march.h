@@ -3,7 +3,6 @@
 #ifndef LEEWATER_SETUP_STEADY_MARCH_H
 #define LEEWATER_SETUP_STEADY_MARCH_H
 
-#include "leewater/status.h"
 #include "setup/steady_leg.h"
 
 /* The axis as the solver sees it; row i is where leg i begins. */
@@ -64,14 +63,13 @@ typedef struct lee_fit {
 } lee_fit;
 
 /* Finds the start that holds `volume` (> 0, may be INFINITY when the left row
- * is no wall).
+ * is no wall), as near as a double can name it: where sheets of water are
+ * marched against the wind two neighbouring starts may hold volumes far apart
+ * (fit->volume tells).
  *
  *   guess  start to try first
- *   area   plan area, m2, for the second try; 0 when unknown
- *
- * Errors: LEE_ERR_CONVERGENCE. */
-lee_status lee_march_fit(const lee_reach *reach, const lee_room *room,
-                         double volume, double guess, double area, lee_fit *fit,
-                         lee_error *error);
+ *   area   plan area, m2, for the second try; 0 when unknown */
+void lee_march_fit(const lee_reach *reach, const lee_room *room, double volume,
+                   double guess, double area, lee_fit *fit);
 
 #endif

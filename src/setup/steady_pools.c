@@ -286,22 +286,26 @@ static double room_area(const lee_pools *pools, const lee_room *room) {
     return area;
 }
 
-static lee_status settle_one(lee_pools *pools, size_t i, lee_error *error) {
+/* Puddles of a billionth of the lake may miss what they like. */
+static void note_miss(lee_pools *pools, double miss, double volume) {
+    if (volume > 1e-9 * pools->volume) {
+        pools->miss = fmax(pools->miss, miss / volume);
+    }
+}
+
+static void settle_one(lee_pools *pools, size_t i) {
     lee_pool *pool = &pools->pool[i];
     if (pool->is_held) {
         settle_held(pools, i);
-        return LEE_OK;
+        return;
     }
     const lee_room room = lee_pools_room(pools, pool);
     lee_fit fit;
-    const lee_status status =
-        lee_march_fit(&pools->reach, &room, pool->volume, pool->start,
-                      room_area(pools, &room), &fit, error);
-    if (status != LEE_OK) {
-        return status;
-    }
+    lee_march_fit(&pools->reach, &room, pool->volume, pool->start,
+                  room_area(pools, &room), &fit);
     switch (fit.kind) {
     case LEE_FIT_INSIDE:
+        note_miss(pools, fabs(fit.volume - pool->volume), pool->volume);
         pool->start = fit.start;
         pool->is_settled = true;
         break;
@@ -315,7 +319,6 @@ static lee_status settle_one(lee_pools *pools, size_t i, lee_error *error) {
         spill(pools, i, true, &fit);
         break;
     }
-    return LEE_OK;
 }
 
 /* First pool that holds water and is not settled; count when all are. */
@@ -335,10 +338,7 @@ static lee_status settle(lee_pools *pools, lee_error *error) {
         if (i == pools->count) {
             return LEE_OK;
         }
-        const lee_status status = settle_one(pools, i, error);
-        if (status != LEE_OK) {
-            return status;
-        }
+        settle_one(pools, i);
     }
     return lee_fail(error, LEE_ERR_CONVERGENCE,
                     "waters over sills still part and join after %zu changes",
@@ -392,6 +392,7 @@ static void group_still_waters(lee_pools *pools) {
 lee_status lee_pools_rest(lee_pools *pools, lee_error *error) {
     cut_catchments(pools, 0.0);
     group_still_waters(pools);
+    pools->volume = 0.0;
     for (size_t i = 0; i < pools->count; i++) {
         lee_pool *pool = &pools->pool[i];
         if (pool->volume > 0.0 && !pool->is_held) {
@@ -400,6 +401,7 @@ lee_status lee_pools_rest(lee_pools *pools, lee_error *error) {
             pool->volume =
                 lee_march_through(&pools->reach, &room, pool->start, NULL, NULL)
                     .volume;
+            pools->volume += pool->volume;
         }
     }
     return settle(pools, error);

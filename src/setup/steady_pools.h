@@ -5,6 +5,8 @@
 
 #include "setup/steady_march.h"
 
+#include "leewater/status.h"
+
 /* One water, or a dry hollow when its volume is zero. */
 typedef struct lee_pool {
     size_t first; /* catchments it covers */
@@ -28,7 +30,9 @@ typedef struct lee_pools {
     size_t count;
     lee_pool *pool;  /* [reach.n + 1] in order of x */
     lee_pool *kept;  /* [reach.n + 1] scratch */
-    size_t partings; /* how often a sill fell dry */
+    double volume;   /* m3, of the closed waters at rest             */
+    double miss;     /* largest part of its volume that a fit missed */
+    size_t partings; /* how often a sill fell dry                    */
     bool has_sill;   /* waters parted, spilled or joined */
 } lee_pools;
 

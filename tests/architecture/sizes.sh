@@ -37,9 +37,9 @@ holds 'no function is longer than 70 lines' "$found"
 
 for folder in src/*/; do
     count=$(find "$folder" -name '*.c' | wc -l)
-    [ "$count" -le 13 ] || echo "$folder holds $count sources"
+    [ "$count" -le 14 ] || echo "$folder holds $count sources"
 done >"$found"
-holds 'no folder of src holds more than 13 sources' "$found"
+holds 'no folder of src holds more than 14 sources' "$found"
 
 # known FILE: is "'FILE'" in the text of a build file?
 known() {
