@@ -154,8 +154,8 @@ typedef struct lee_steady {
  * m/2 (film rule; the transient engine keeps it too). Without stress the lake
  * is at rest.
  * Errors: LEE_ERR_ARGUMENT, LEE_ERR_DATA (a faulty profile, no water at this
- * still water, a held level below the bed), LEE_ERR_CONVERGENCE, LEE_ERR_MEMORY;
- * `steady` is then empty. */
+ * still water, a held level below the bed), LEE_ERR_CONVERGENCE and
+ * LEE_ERR_MEMORY; `steady` is then empty. */
 lee_status lee_steady_solve(const lee_steady_input *input, lee_steady *steady,
                             lee_error *error);
 void lee_steady_free(lee_steady *steady);
