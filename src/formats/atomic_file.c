@@ -1,4 +1,5 @@
 /* atomic_file.c - files that appear whole or not at all. */
+/* NOLINTNEXTLINE(bugprone-reserved-identifier,readability-identifier-naming) */
 #define _XOPEN_SOURCE 700 /* realpath */
 
 #include "formats/atomic_file.h"
@@ -137,15 +138,15 @@ lee_status lee_atomic_open(const char *path, bool force, lee_atomic_file *file,
     return status;
 }
 
-/* Brings all to the disk, or says why not; a write that failed before has
- * left no reason behind. */
+/* Brings all to the disk, or says why not. A write that failed before is told
+ * by the stream alone; flushing what it still holds mostly fails again, and
+ * then there is a reason to tell. */
 static lee_status finish_stream(FILE *stream, bool to_disk, const char *name,
                                 lee_error *error) {
-    if (ferror(stream)) {
-        return lee_fail(error, LEE_ERR_FILE, "%s: cannot be written to the end",
-                        name);
-    }
-    if (fflush(stream) != 0 || (to_disk && fsync(fileno(stream)) != 0)) {
+    const bool has_failed = ferror(stream) != 0;
+    errno = 0;
+    if (fflush(stream) != 0 || has_failed ||
+        (to_disk && fsync(fileno(stream)) != 0)) {
         return cannot(name, "written to the end", errno, error);
     }
     return LEE_OK;

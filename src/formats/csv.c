@@ -118,6 +118,9 @@ static int comma_vote(size_t length, const char bytes[]) {
  * behind the header that are at hand and reads nothing. */
 static char vote_for_decimal(const lee_csv_rows *rows) {
     enum { LOOK_AHEAD = 1 << 16 };
+    if (rows->separator == ',') {
+        return '.';
+    }
     const lee_csv_block *block = &rows->block;
     const char *end = block->end - block->next > LOOK_AHEAD
                           ? block->next + LOOK_AHEAD
@@ -151,8 +154,7 @@ lee_status lee_csv_open(const char *path, lee_csv **csv, lee_error *error) {
         lee_csv_close(opened);
         return status;
     }
-    opened->decimal =
-        opened->rows.separator == ',' ? '.' : vote_for_decimal(&opened->rows);
+    opened->decimal = vote_for_decimal(&opened->rows);
     *csv = opened;
     return LEE_OK;
 }
@@ -206,7 +208,7 @@ static void add_names(const lee_csv *csv, lee_text *text) {
 }
 
 static const char *nearest_name(const lee_csv *csv, const char *name) {
-    const char **names = calloc(csv->n, sizeof *names);
+    const char **names = calloc(csv->n + 1, sizeof *names);
     if (names == NULL) {
         return NULL;
     }

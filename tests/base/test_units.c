@@ -28,6 +28,22 @@ static lee_conversion conversion(const char *from, const char *to) {
     return found;
 }
 
+/* Comes first: the database, once read, is kept. */
+static void a_missing_database_is_an_error_that_can_be_mended(void **state) {
+    (void)state;
+    assert_int_equal(setenv("UDUNITS2_XML_PATH", "no/such.xml", 1), 0);
+    lee_conversion found = {42.0, 43.0};
+    lee_error error = {0};
+    assert_int_equal(lee_unit_conversion("km", "m", &found, &error),
+                     LEE_ERR_FILE);
+    assert_string_equal(error.message,
+                        "the unit database of UDUNITS-2 cannot be read; "
+                        "install libudunits2-0 or set UDUNITS2_XML_PATH");
+    assert_near(found.factor, 42.0, 0.0);
+    assert_int_equal(unsetenv("UDUNITS2_XML_PATH"), 0);
+    assert_near(conversion("km", "m").factor, 1000.0, 0.0);
+}
+
 static const struct {
     const char *from;
     const char *to;
@@ -332,6 +348,7 @@ static int free_udunits(void **state) {
 
 int main(void) {
     const struct CMUnitTest tests[] = {
+        cmocka_unit_test(a_missing_database_is_an_error_that_can_be_mended),
         cmocka_unit_test(what_this_trade_writes_reads_by_its_definition),
         cmocka_unit_test(other_units_convert_as_udunits_says),
         cmocka_unit_test(a_conversion_there_and_back_changes_nothing),

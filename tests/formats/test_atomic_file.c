@@ -249,19 +249,26 @@ static void a_replaced_file_keeps_its_permissions(void **state) {
     assert_int_equal(permissions(path), 0604);
 }
 
-/* Writes more than the process may, as under ulimit -f. */
-static void write_beyond_limit(lee_atomic_file *file) {
+/* Lets no file of this process grow beyond 8 KiB, as ulimit -f does; returns
+ * the limit there was. */
+static struct rlimit limit_files(void) {
     struct rlimit before;
     assert_int_equal(getrlimit(RLIMIT_FSIZE, &before), 0);
     const struct rlimit low = {.rlim_cur = 8192, .rlim_max = before.rlim_max};
     (void)signal(SIGXFSZ, SIG_IGN);
     assert_int_equal(setrlimit(RLIMIT_FSIZE, &low), 0);
+    return before;
+}
+
+static void lift_limit(const struct rlimit *before) {
+    assert_int_equal(setrlimit(RLIMIT_FSIZE, before), 0);
+    (void)signal(SIGXFSZ, SIG_DFL);
+}
+
+static void write_much(lee_atomic_file *file) {
     for (int i = 0; i < 10000; i++) {
         (void)fputs("0123456789\n", file->stream);
     }
-    (void)fflush(file->stream);
-    assert_int_equal(setrlimit(RLIMIT_FSIZE, &before), 0);
-    (void)signal(SIGXFSZ, SIG_DFL);
 }
 
 static void
@@ -269,16 +276,26 @@ a_file_that_cannot_grow_is_an_error_and_leaves_nothing(void **state) {
     (void)state;
     char path[FOLDER_PATH];
     lee_atomic_file file = opened(in_folder("large.csv", path), false);
-    write_beyond_limit(&file);
-    refused_commit(&file, path, ": cannot be written to the end");
+    const struct rlimit before = limit_files();
+    write_much(&file);
+    lee_error error = {0};
+    const lee_status status = lee_atomic_commit(&file, &error);
+    lift_limit(&before);
+    assert_int_equal(status, LEE_ERR_FILE);
+    assert_non_null(strstr(error.message, "large.csv: cannot be written to "
+                                          "the end: File too large"));
     assert_int_equal(files_in_folder(), 0);
 }
 
-static void a_failed_write_keeps_the_file_that_was_there(void **state) {
+/* The limit is gone when the file is committed: only the stream still knows
+ * that something is missing. */
+static void a_failed_write_is_not_forgotten(void **state) {
     (void)state;
     const char *path = folder_write(&folder, "old.csv", "old");
     lee_atomic_file file = opened(path, true);
-    write_beyond_limit(&file);
+    const struct rlimit before = limit_files();
+    write_much(&file);
+    lift_limit(&before);
     refused_commit(&file, path, ": cannot be written to the end");
     assert_holds(path, "old");
     assert_int_equal(files_in_folder(), 1);
@@ -381,7 +398,7 @@ int main(void) {
         TEST(a_new_file_has_the_permissions_of_any_new_file),
         TEST(a_replaced_file_keeps_its_permissions),
         TEST(a_file_that_cannot_grow_is_an_error_and_leaves_nothing),
-        TEST(a_failed_write_keeps_the_file_that_was_there),
+        TEST(a_failed_write_is_not_forgotten),
         TEST(a_folder_in_the_place_of_the_file_is_an_error),
         TEST(a_dash_is_standard_output),
         TEST(a_full_device_at_standard_output_is_an_error),
