@@ -9,35 +9,38 @@
 #include <sys/stat.h>
 #include <unistd.h>
 
-static lee_status refuse(const char *path, const char *why, lee_error *error) {
-    return lee_fail(error, LEE_ERR_FILE, "%s: %s", path, why);
+static lee_status cannot(const char *path, const char *what, lee_error *error) {
+    return lee_fail(error, LEE_ERR_FILE, "%s: cannot be %s: %s", path, what,
+                    strerror(errno));
 }
 
 /* Opens without waiting on a pipe that nobody writes to. */
 static lee_status open_regular(const char *path, FILE **stream, size_t *size,
                                lee_error *error) {
-    const int descriptor = open(path, O_RDONLY | O_NONBLOCK | O_CLOEXEC);
+    const int descriptor =
+        open(path, O_RDONLY | O_NONBLOCK | O_CLOEXEC | O_NOCTTY);
     if (descriptor < 0) {
-        return refuse(path, strerror(errno), error);
+        return cannot(path, "opened", error);
     }
     struct stat about;
-    const char *why = NULL;
+    lee_status status = LEE_OK;
     if (fstat(descriptor, &about) != 0) {
-        why = strerror(errno);
+        status = cannot(path, "opened", error);
     } else if (S_ISDIR(about.st_mode)) {
-        why = "is a directory, not a file";
+        status = lee_fail(error, LEE_ERR_FILE,
+                          "%s: is a directory; expected a file", path);
     } else if (!S_ISREG(about.st_mode)) {
-        why = "is not a regular file";
+        status = lee_fail(error, LEE_ERR_FILE,
+                          "%s: is a pipe or a device; expected a file", path);
     } else {
         *size = (size_t)about.st_size;
         *stream = fdopen(descriptor, "rb");
-        why = *stream == NULL ? strerror(errno) : NULL;
+        status = *stream == NULL ? cannot(path, "opened", error) : LEE_OK;
     }
-    if (why != NULL) {
+    if (status != LEE_OK) {
         (void)close(descriptor);
-        return refuse(path, why, error);
     }
-    return LEE_OK;
+    return status;
 }
 
 lee_status lee_whole_file_read(const char *path, size_t mebibytes, char **bytes,
@@ -63,7 +66,7 @@ lee_status lee_whole_file_read(const char *path, size_t mebibytes, char **bytes,
     }
     *length = fread(content, 1, size, stream);
     if (ferror(stream) != 0) {
-        status = refuse(path, strerror(errno), error);
+        status = cannot(path, "read", error);
         goto done;
     }
     *bytes = content;

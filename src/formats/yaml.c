@@ -74,7 +74,7 @@ static bool attach(builder *b, lee_yaml_node *node) {
     if ((parent->count & (parent->count - 1)) == 0) {
         const size_t room = parent->count == 0 ? 1 : 2 * parent->count;
         lee_yaml_node **grown =
-            realloc(parent->child, room * sizeof(*parent->child));
+            realloc(parent->child, room * sizeof(lee_yaml_node *));
         if (grown == NULL) {
             return false;
         }
@@ -202,14 +202,14 @@ static lee_status check_repeats(const builder *b,
     if (n < 2) {
         return LEE_OK;
     }
-    const lee_yaml_node **sorted = calloc(n, sizeof *sorted);
+    const lee_yaml_node **sorted = calloc(n, sizeof(lee_yaml_node *));
     if (sorted == NULL) {
         return no_room(b);
     }
     for (size_t i = 0; i < n; i++) {
         sorted[i] = mapping->child[i];
     }
-    qsort(sorted, n, sizeof *sorted, compare_keys);
+    qsort(sorted, n, sizeof(lee_yaml_node *), compare_keys);
     const lee_yaml_node *first = NULL;
     const lee_yaml_node *again = NULL;
     for (size_t i = 1; i < n; i++) {

@@ -281,8 +281,9 @@ static void a_missing_file_is_named(void **state) {
     lee_error error = {0};
     assert_int_equal(lee_yaml_read("not-there.yaml", &root, &error),
                      LEE_ERR_FILE);
-    assert_string_equal(error.message,
-                        "not-there.yaml: No such file or directory");
+    assert_string_equal(
+        error.message,
+        "not-there.yaml: cannot be opened: No such file or directory");
 }
 
 static void a_directory_is_refused(void **state) {
@@ -291,7 +292,7 @@ static void a_directory_is_refused(void **state) {
     lee_error error = {0};
     assert_int_equal(lee_yaml_read(folder->path, &root, &error), LEE_ERR_FILE);
     assert_string_equal(error.message + strlen(folder->path),
-                        ": is a directory, not a file");
+                        ": is a directory; expected a file");
 }
 
 static void a_device_is_refused(void **state) {
@@ -299,7 +300,8 @@ static void a_device_is_refused(void **state) {
     lee_yaml_node *root = NULL;
     lee_error error = {0};
     assert_int_equal(lee_yaml_read("/dev/null", &root, &error), LEE_ERR_FILE);
-    assert_string_equal(error.message, "/dev/null: is not a regular file");
+    assert_string_equal(error.message,
+                        "/dev/null: is a pipe or a device; expected a file");
 }
 
 /* Knuth's MMIX congruential generator, so that a failure can be repeated. */

@@ -1,0 +1,207 @@
+/* stress.c - the drag and the return flow of a case. */
+#include <math.h>
+#include <stdlib.h>
+#include <string.h>
+
+#include "base/number.h"
+#include "base/text.h"
+#include "case/draft.h"
+#include "formats/csv.h"
+
+#include "leewater/units.h"
+
+static void refuse_relation(lee_case_reader *reader, const lee_yaml_node *node,
+                            const lee_key *key) {
+    enum { MOST = 64 };
+    const char *names[MOST];
+    size_t count = 0;
+    const lee_drag_relation *relation = lee_drag_at(0);
+    while (relation != NULL && count < MOST) {
+        names[count++] = relation->name;
+        relation = lee_drag_at(count);
+    }
+    char shown[LEE_SHOWN];
+    const char *nearest = lee_text_nearest(node->text, count, names);
+    lee_text_show(strlen(node->text), node->text, shown);
+    if (nearest != NULL) {
+        lee_key_problem(reader, node, key->name,
+                        "is '%s', which is no drag relation; did you mean "
+                        "'%s'?",
+                        shown, nearest);
+    } else {
+        lee_key_problem(reader, node, key->name,
+                        "is '%s'; expected a drag relation (the command drag "
+                        "lists them), a number, or {table: drag.csv}",
+                        shown);
+    }
+}
+
+void lee_key_drag(lee_case_reader *reader, const lee_yaml_node *node,
+                  const lee_key *key, void *into) {
+    lee_case_draft *draft = into;
+    lee_drag *drag = &draft->result.problem.drag;
+    if (node->kind == LEE_YAML_MAPPING) {
+        lee_key_section_of(reader, node, key, into);
+        return;
+    }
+    const char *text = lee_key_scalar(reader, node, key);
+    double value = 0.0;
+    if (text == NULL) {
+        return;
+    }
+    if (lee_number_parse(strlen(text), text, '.', &value)) {
+        if (lee_key_value(reader, node, key, &value)) {
+            drag->relation = NULL;
+            drag->constant = value;
+        }
+        return;
+    }
+    const lee_drag_relation *relation = lee_drag_find(text);
+    if (relation == NULL) {
+        refuse_relation(reader, node, key);
+    } else {
+        drag->relation = relation;
+    }
+}
+
+void lee_key_return_flow(lee_case_reader *reader, const lee_yaml_node *node,
+                         const lee_key *key, void *into) {
+    lee_problem *problem = (void *)((char *)into + key->offset);
+    double value = 0.0;
+    if (lee_key_value(reader, node, key, &value)) {
+        const bool is_computed = strcmp(node->text, key->word) == 0;
+        problem->return_flow =
+            (lee_return_flow){is_computed, is_computed ? 1.0 : value};
+        problem->return_flow_given = true;
+    }
+}
+
+/* Where the columns of a drag table stand and how they convert. */
+typedef struct drag_columns {
+    size_t speed;
+    size_t coefficient;
+    lee_conversion speed_to;
+    lee_conversion coefficient_to;
+} drag_columns;
+
+static lee_status find_columns(const lee_csv *csv, drag_columns *columns,
+                               lee_error *error) {
+    lee_status status = lee_csv_find(csv, "speed", &columns->speed, error);
+    if (status == LEE_OK) {
+        status = lee_csv_find(csv, "coefficient", &columns->coefficient, error);
+    }
+    if (status != LEE_OK) {
+        return status;
+    }
+    const char *speed = lee_csv_header_at(csv, columns->speed)->unit;
+    const char *pure = lee_csv_header_at(csv, columns->coefficient)->unit;
+    status = lee_unit_conversion(speed == NULL ? "" : speed, "m s-1",
+                                 &columns->speed_to, error);
+    if (status != LEE_OK) {
+        lee_context(error, "%s:%zu: column 'speed': ", lee_csv_path(csv),
+                    lee_csv_line(csv));
+        return status;
+    }
+    status = lee_unit_conversion(pure == NULL ? "1" : pure, "1",
+                                 &columns->coefficient_to, error);
+    if (status != LEE_OK) {
+        lee_context(error, "%s:%zu: column 'coefficient': ", lee_csv_path(csv),
+                    lee_csv_line(csv));
+    }
+    return status;
+}
+
+static lee_status add_row(lee_drag *drag, double speed, double coefficient,
+                          lee_error *error) {
+    const size_t n = drag->n + 1;
+    double *grown = realloc(drag->speed, n * sizeof *grown);
+    if (grown != NULL) {
+        drag->speed = grown;
+        grown = realloc(drag->coefficient, n * sizeof *grown);
+    }
+    if (grown == NULL) {
+        return lee_fail(error, LEE_ERR_MEMORY, "no room for a drag table");
+    }
+    drag->coefficient = grown;
+    drag->speed[drag->n] = speed;
+    drag->coefficient[drag->n] = coefficient;
+    drag->n = n;
+    return LEE_OK;
+}
+
+static lee_status take_row(const lee_csv *csv, const lee_csv_field *fields,
+                           const drag_columns *columns, lee_drag *drag,
+                           lee_error *error) {
+    const lee_csv_field *speed_field = &fields[columns->speed];
+    const lee_csv_field *field = &fields[columns->coefficient];
+    double speed = 0.0;
+    double coefficient = 0.0;
+    lee_status status = lee_csv_number(csv, speed_field, &speed, error);
+    if (status == LEE_OK) {
+        status = lee_csv_number(csv, field, &coefficient, error);
+    }
+    if (status != LEE_OK) {
+        return status;
+    }
+    speed = columns->speed_to.factor * speed + columns->speed_to.offset;
+    coefficient = columns->coefficient_to.factor * coefficient +
+                  columns->coefficient_to.offset;
+    const double last = drag->n == 0 ? -1.0 : drag->speed[drag->n - 1];
+    if (!(speed >= 0.0 && speed > last)) {
+        return lee_csv_fail(csv, speed_field, error,
+                            "speed %g m/s does not grow from row to row, "
+                            "from 0 on",
+                            speed);
+    }
+    if (!(coefficient > 0.0 && coefficient <= 0.02)) {
+        return lee_csv_fail(csv, field, error,
+                            "drag coefficient %g; expected more than 0 and "
+                            "up to 0.02",
+                            coefficient);
+    }
+    return add_row(drag, speed, coefficient, error);
+}
+
+static lee_status read_table(const char *path, lee_drag *drag,
+                             lee_error *error) {
+    lee_csv *csv = NULL;
+    drag_columns columns = {0};
+    lee_status status = lee_csv_open(path, &csv, error);
+    if (status == LEE_OK) {
+        status = find_columns(csv, &columns, error);
+    }
+    while (status == LEE_OK) {
+        const lee_csv_field *fields = NULL;
+        status = lee_csv_next(csv, &fields, error);
+        if (status != LEE_OK || fields == NULL) {
+            break;
+        }
+        status = take_row(csv, fields, &columns, drag, error);
+    }
+    lee_csv_close(csv);
+    if (status == LEE_OK && drag->n < 2) {
+        return lee_fail(error, LEE_ERR_DATA,
+                        "%s: a drag table needs two rows, this one has %zu",
+                        path, drag->n);
+    }
+    return status;
+}
+
+void lee_case_finish_drag(lee_case_reader *reader, lee_case_draft *draft) {
+    lee_drag *drag = &draft->result.problem.drag;
+    if (draft->drag_table != NULL) {
+        drag->relation = NULL;
+        lee_error error = {0};
+        char *path = lee_case_beside(reader, draft->drag_table);
+        if (path != NULL && read_table(path, drag, &error) != LEE_OK) {
+            lee_case_pass_on(reader, lee_case_node(draft, "stress/drag/table"),
+                             &error);
+        }
+        free(path);
+    }
+    if (!isnan(draft->drag_cap)) {
+        drag->cap = draft->drag_cap;
+    } else if (drag->relation == NULL) {
+        drag->cap = INFINITY; /* what the user wrote is meant */
+    }
+}
