@@ -36,6 +36,12 @@ compile() {
     "${CC:-cc}" -std=c17 -Wall -Wextra -Werror -o "$work/estimate" \
         "$root/examples/estimate.c" $(flags --cflags --libs)
 }
+# The example uses a part of the library; this takes in all of it.
+whole() {
+    echo 'int main(void) { return 0; }' >"$work/whole.c"
+    "${CC:-cc}" -o "$work/whole" "$work/whole.c" $(flags --libs | sed \
+        's/-lleewater/-Wl,--whole-archive & -Wl,--no-whole-archive/')
+}
 sensible() {
     "$work/estimate" >"$work/out" && cat "$work/out"
     # At 20 m/s over 12 km of 5 m: 0.3 m or so at either end (the zero order
@@ -53,7 +59,8 @@ done >"$found"
 holds 'every public header is installed' "$found"
 verdict 'pkg-config knows the library' flags --modversion
 verdict 'a program builds against the installed library' compile
-verdict 'and prints a set-up and a set-down of the right size' sensible
+verdict 'all of the library links with what pkg-config names' whole
+verdict 'the program prints a set-up and a set-down of the right size' sensible
 verdict 'the installed command says its version' \
     "$work/root$prefix/bin/leewater" --version
 finish
