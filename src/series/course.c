@@ -218,11 +218,12 @@ static void write_levels(leg *l, int64_t time) {
 
 static lee_status go_to(leg *l, int64_t from, int64_t to, lee_error *error) {
     const double distance = (double)(to - from);
-    const double parts = fmax(1.0, ceil(distance / l->course->step - 1e-9));
+    const double wanted = ceil(distance / l->course->step - 1e-9);
+    const int64_t parts = wanted > 1.0 ? (int64_t)wanted : 1;
     const double end = (double)(to - l->span->from);
-    for (double k = 0.0; k < parts; k += 1.0) {
+    for (int64_t k = 0; k < parts; k++) {
         const double now = lee_transient_time(l->engine);
-        const double step = (end - now) / (parts - k);
+        const double step = (end - now) / (double)(parts - k);
         const lee_status status = lee_transient_step(
             l->engine, step, lee_drive_forcing, &l->drive, error);
         if (status != LEE_OK) {
@@ -231,7 +232,7 @@ static lee_status go_to(leg *l, int64_t from, int64_t to, lee_error *error) {
         follow_pool(l);
         look(l);
     }
-    l->course->progress->done += parts * (double)l->channel->nodes;
+    l->course->progress->done += (double)parts * (double)l->channel->nodes;
     return LEE_OK;
 }
 

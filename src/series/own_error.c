@@ -127,7 +127,7 @@ static lee_course course_of(const lee_problem *problem,
 
 double lee_own_error_work(const lee_problem *problem,
                           const lee_run_plan *plan) {
-    lee_span event[LEE_EVENTS];
+    lee_span event[LEE_EVENTS] = {{.from = 0}};
     const size_t count = find_events(plan, event);
     double work = 0.0;
     for (size_t i = 0; i < count; i++) {
@@ -155,17 +155,13 @@ static lee_status watch_places(const lee_problem *problem, lee_watch *watch,
     return lee_watch_init(2, ends, watch, error);
 }
 
-static lee_status run_pass(const lee_problem *problem, const lee_run_plan *plan,
-                           const lee_span *event, const pass *p,
-                           lee_progress *progress, lee_watch *watch,
-                           lee_error *error) {
+static lee_status run_pass(const lee_problem *problem, lee_course *course,
+                           lee_watch *watch, lee_error *error) {
     double defect;
     lee_status status = watch_places(problem, watch, error);
     if (status == LEE_OK) {
-        lee_course course = course_of(problem, plan, event, p);
-        course.watch = watch;
-        course.progress = progress;
-        status = lee_course_run(&course, &defect, error);
+        course->watch = watch;
+        status = lee_course_run(course, &defect, error);
     }
     return status;
 }
@@ -198,8 +194,9 @@ static lee_status judge_event(const lee_problem *problem,
     lee_watch watch[PASSES] = {{0}};
     lee_status status = LEE_OK;
     for (size_t k = 0; k < PASSES && status == LEE_OK; k++) {
-        status = run_pass(problem, plan, event, &passes[k], progress, &watch[k],
-                          error);
+        lee_course course = course_of(problem, plan, event, &passes[k]);
+        course.progress = progress;
+        status = run_pass(problem, &course, &watch[k], error);
     }
     if (status == LEE_OK) {
         compare(watch, own);
@@ -213,7 +210,7 @@ static lee_status judge_event(const lee_problem *problem,
 lee_status lee_own_error_find(const lee_problem *problem,
                               const lee_run_plan *plan, lee_progress *progress,
                               lee_own_error *own, lee_error *error) {
-    lee_span event[LEE_EVENTS];
+    lee_span event[LEE_EVENTS] = {{.from = 0}};
     const size_t count = find_events(plan, event);
     lee_status status = LEE_OK;
     *own = (lee_own_error){0};

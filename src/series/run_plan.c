@@ -1,6 +1,7 @@
 /* run_plan.c - spans, cells, step and output times of a run. */
 #include "series/run_plan.h"
 
+#include <assert.h>
 #include <math.h>
 #include <stdlib.h>
 
@@ -197,6 +198,7 @@ static lee_status find_times(const lee_problem *problem, lee_run_plan *plan,
     for (size_t i = 0; i < plan->span_count; i++) {
         room += (size_t)((plan->span[i].to - plan->span[i].from) / every) + 1;
     }
+    assert(room > 0); /* find_spans leaves one span at least */
     plan->time = calloc(room, sizeof *plan->time);
     plan->is_spin_up = calloc(room, sizeof *plan->is_spin_up);
     if (plan->time == NULL || plan->is_spin_up == NULL) {

@@ -162,6 +162,8 @@ static double square_on(const basin *b, size_t cells, integrals half[],
     return lee_tridiagonal_eigenvalue(n, d, e, still);
 }
 
+/* Plain numbers, so that a caller needs no lake.
+ * NOLINTNEXTLINE(readability-function-size) */
 lee_status lee_first_period(const lee_profile *profile, double level, double x,
                             double gravity, bool start_held, bool end_held,
                             double *period, lee_error *error) {

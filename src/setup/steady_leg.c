@@ -3,6 +3,7 @@
 
 #include <float.h>
 #include <math.h>
+#include <stdint.h>
 
 /* Thickest film that the film rule holds back, m. */
 static const double film_cap = 0.25;
@@ -304,12 +305,13 @@ static double curve_volume(const lee_piece *piece) {
     const double m = piece->slope;
     /* After forty e-foldings the depth is its equilibrium to rounding. */
     const double t_end = m * piece->span > 40.0 ? 40.0 / m : piece->span;
-    const double panels = fmax(1.0, ceil(fabs(m * t_end)));
-    const double t = t_end / panels;
+    const double wanted = ceil(fabs(m * t_end));
+    const int64_t panels = wanted > 1.0 ? (int64_t)wanted : 1;
+    const double t = t_end / (double)panels;
     double distance = 0.0;
     double depth = piece->depth;
     double volume = 0.0;
-    for (double k = 0.0; k < panels; k += 1.0) {
+    for (int64_t k = 0; k < panels; k++) {
         volume += panel_volume(piece, distance, depth, t);
         const advance to = advance_by(depth, a, m, t);
         distance += to.distance;
