@@ -4,14 +4,14 @@
 #include <string.h>
 
 #include "base/text.h"
-#include "basin/columns.h"
+#include "formats/csv_column.h"
 #include "leewater/basin.h"
 #include "leewater/calendar.h"
 
 /* How the table is read. */
 typedef struct layout {
     size_t time;
-    lee_basin_column level;
+    lee_csv_column level;
     bool has_utc_offset;
     int64_t utc_offset;
 } layout;
@@ -63,8 +63,8 @@ static lee_status read_row(const lee_csv *csv, const lee_csv_field fields[],
     const lee_csv_field *field = &fields[found->time];
     lee_status status = read_time(csv, field, found, &series->time[n], error);
     if (status == LEE_OK) {
-        status = lee_basin_number(csv, fields, &found->level, &series->level[n],
-                                  error);
+        status = lee_csv_column_number(csv, fields, &found->level,
+                                       &series->level[n], error);
     }
     if (status != LEE_OK) {
         return status;
@@ -103,7 +103,7 @@ static lee_status read_table(lee_csv *csv, layout *found,
                              lee_level_series *series, lee_error *error) {
     lee_status status = lee_csv_find(csv, "time", &found->time, error);
     if (status == LEE_OK) {
-        status = lee_basin_find_column(csv, "level", "m", &found->level, error);
+        status = lee_csv_find_column(csv, "level", "m", &found->level, error);
     }
     if (status == LEE_OK) {
         status = read_rows(csv, found, series, error);

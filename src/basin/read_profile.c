@@ -3,15 +3,15 @@
 #include <stdlib.h>
 
 #include "base/constants.h"
-#include "basin/columns.h"
+#include "formats/csv_column.h"
 #include "leewater/basin.h"
 
 /* Columns of the table, and what is known beside it. */
 typedef struct layout {
-    lee_basin_column chainage;
-    lee_basin_column bed; /* or depth */
-    lee_basin_column width;
-    lee_basin_column bearing;
+    lee_csv_column chainage;
+    lee_csv_column bed; /* or depth */
+    lee_csv_column width;
+    lee_csv_column bearing;
     bool has_depth;   /* the bed column is a depth below still water */
     bool has_bearing; /* else every row takes axis_bearing           */
     double axis_bearing;
@@ -20,8 +20,8 @@ typedef struct layout {
 
 static lee_status find_bed(const lee_csv *csv, layout *found,
                            lee_error *error) {
-    const bool has_bed = lee_basin_has_column(csv, "bed");
-    found->has_depth = lee_basin_has_column(csv, "depth");
+    const bool has_bed = lee_csv_has_column(csv, "bed");
+    found->has_depth = lee_csv_has_column(csv, "depth");
     if (has_bed && found->has_depth) {
         return lee_fail(error, LEE_ERR_FORMAT,
                         "%s:%zu: columns 'bed' and 'depth' exclude each other",
@@ -33,16 +33,16 @@ static lee_status find_bed(const lee_csv *csv, layout *found,
                         "to count from; give 'bed' instead",
                         lee_csv_path(csv), lee_csv_line(csv));
     }
-    return lee_basin_find_column(csv, found->has_depth ? "depth" : "bed", "m",
-                                 &found->bed, error);
+    return lee_csv_find_column(csv, found->has_depth ? "depth" : "bed", "m",
+                               &found->bed, error);
 }
 
 static lee_status find_bearing(const lee_csv *csv, layout *found,
                                lee_error *error) {
-    found->has_bearing = lee_basin_has_column(csv, "bearing");
+    found->has_bearing = lee_csv_has_column(csv, "bearing");
     if (found->has_bearing) {
-        return lee_basin_find_column(csv, "bearing", "radian", &found->bearing,
-                                     error);
+        return lee_csv_find_column(csv, "bearing", "radian", &found->bearing,
+                                   error);
     }
     if (isnan(found->axis_bearing)) {
         return lee_fail(error, LEE_ERR_FORMAT,
@@ -56,12 +56,12 @@ static lee_status find_bearing(const lee_csv *csv, layout *found,
 static lee_status find_layout(const lee_csv *csv, layout *found,
                               lee_error *error) {
     lee_status status =
-        lee_basin_find_column(csv, "chainage", "m", &found->chainage, error);
+        lee_csv_find_column(csv, "chainage", "m", &found->chainage, error);
     if (status == LEE_OK) {
         status = find_bed(csv, found, error);
     }
     if (status == LEE_OK) {
-        status = lee_basin_find_column(csv, "width", "m", &found->width, error);
+        status = lee_csv_find_column(csv, "width", "m", &found->width, error);
     }
     return status == LEE_OK ? find_bearing(csv, found, error) : status;
 }
@@ -77,19 +77,20 @@ typedef struct row {
 static lee_status read_numbers(const lee_csv *csv, const lee_csv_field fields[],
                                const layout *found, row *read,
                                lee_error *error) {
-    lee_status status =
-        lee_basin_number(csv, fields, &found->chainage, &read->chainage, error);
-    if (status == LEE_OK) {
-        status = lee_basin_number(csv, fields, &found->bed, &read->bed, error);
-    }
+    lee_status status = lee_csv_column_number(csv, fields, &found->chainage,
+                                              &read->chainage, error);
     if (status == LEE_OK) {
         status =
-            lee_basin_number(csv, fields, &found->width, &read->width, error);
+            lee_csv_column_number(csv, fields, &found->bed, &read->bed, error);
+    }
+    if (status == LEE_OK) {
+        status = lee_csv_column_number(csv, fields, &found->width, &read->width,
+                                       error);
     }
     read->bearing = found->axis_bearing;
     if (status == LEE_OK && found->has_bearing) {
-        status = lee_basin_number(csv, fields, &found->bearing, &read->bearing,
-                                  error);
+        status = lee_csv_column_number(csv, fields, &found->bearing,
+                                       &read->bearing, error);
     }
     return status;
 }

@@ -6,7 +6,7 @@
 #include "base/number.h"
 #include "base/text.h"
 #include "case/draft.h"
-#include "formats/csv.h"
+#include "formats/csv_column.h"
 
 #include "leewater/units.h"
 
@@ -76,39 +76,19 @@ void lee_key_return_flow(lee_case_reader *reader, const lee_yaml_node *node,
     }
 }
 
-/* Where the columns of a drag table stand and how they convert. */
+/* The columns of a drag table. */
 typedef struct drag_columns {
-    size_t speed;
-    size_t coefficient;
-    lee_conversion speed_to;
-    lee_conversion coefficient_to;
+    lee_csv_column speed;
+    lee_csv_column coefficient;
 } drag_columns;
 
 static lee_status find_columns(const lee_csv *csv, drag_columns *columns,
                                lee_error *error) {
-    lee_status status = lee_csv_find(csv, "speed", &columns->speed, error);
-    if (status == LEE_OK) {
-        status = lee_csv_find(csv, "coefficient", &columns->coefficient, error);
-    }
-    if (status != LEE_OK) {
-        return status;
-    }
-    const char *speed = lee_csv_header_at(csv, columns->speed)->unit;
-    const char *pure = lee_csv_header_at(csv, columns->coefficient)->unit;
-    status = lee_unit_conversion(speed == NULL ? "" : speed, "m s-1",
-                                 &columns->speed_to, error);
-    if (status != LEE_OK) {
-        lee_context(error, "%s:%zu: column 'speed': ", lee_csv_path(csv),
-                    lee_csv_line(csv));
-        return status;
-    }
-    status = lee_unit_conversion(pure == NULL ? "1" : pure, "1",
-                                 &columns->coefficient_to, error);
-    if (status != LEE_OK) {
-        lee_context(error, "%s:%zu: column 'coefficient': ", lee_csv_path(csv),
-                    lee_csv_line(csv));
-    }
-    return status;
+    const lee_status status =
+        lee_csv_find_column(csv, "speed", "m s-1", &columns->speed, error);
+    return status == LEE_OK ? lee_csv_find_column(csv, "coefficient", "1",
+                                                  &columns->coefficient, error)
+                            : status;
 }
 
 static lee_status add_row(lee_drag *drag, double speed, double coefficient,
@@ -132,29 +112,26 @@ static lee_status add_row(lee_drag *drag, double speed, double coefficient,
 static lee_status take_row(const lee_csv *csv, const lee_csv_field *fields,
                            const drag_columns *columns, lee_drag *drag,
                            lee_error *error) {
-    const lee_csv_field *speed_field = &fields[columns->speed];
-    const lee_csv_field *field = &fields[columns->coefficient];
     double speed = 0.0;
     double coefficient = 0.0;
-    lee_status status = lee_csv_number(csv, speed_field, &speed, error);
+    lee_status status =
+        lee_csv_column_number(csv, fields, &columns->speed, &speed, error);
     if (status == LEE_OK) {
-        status = lee_csv_number(csv, field, &coefficient, error);
+        status = lee_csv_column_number(csv, fields, &columns->coefficient,
+                                       &coefficient, error);
     }
     if (status != LEE_OK) {
         return status;
     }
-    speed = columns->speed_to.factor * speed + columns->speed_to.offset;
-    coefficient = columns->coefficient_to.factor * coefficient +
-                  columns->coefficient_to.offset;
     const double last = drag->n == 0 ? -1.0 : drag->speed[drag->n - 1];
     if (!(speed >= 0.0 && speed > last)) {
-        return lee_csv_fail(csv, speed_field, error,
+        return lee_csv_fail(csv, &fields[columns->speed.index], error,
                             "speed %g m/s does not grow from row to row, "
                             "from 0 on",
                             speed);
     }
     if (!(coefficient > 0.0 && coefficient <= 0.02)) {
-        return lee_csv_fail(csv, field, error,
+        return lee_csv_fail(csv, &fields[columns->coefficient.index], error,
                             "drag coefficient %g; expected more than 0 and "
                             "up to 0.02",
                             coefficient);
