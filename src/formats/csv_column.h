@@ -17,7 +17,8 @@ typedef struct lee_csv_column {
 bool lee_csv_has_column(const lee_csv *csv, const char *name);
 
 /* Finds the column called `name`, whose header must carry a unit that goes
- * over into `unit`; for "1", a pure number, it may lack one. Errors: LEE_ERR_FORMAT with path and line. */
+ * over into `unit`; for "1", a pure number, it may lack one.
+ * Errors: LEE_ERR_FORMAT with path and line. */
 lee_status lee_csv_find_column(const lee_csv *csv, const char *name,
                                const char *unit, lee_csv_column *column,
                                lee_error *error);

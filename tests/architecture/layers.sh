@@ -39,7 +39,7 @@ allowed_public() {
     case $1 in
     base)     echo status calendar units ;;
     numerics) echo status ;;
-    formats)  echo status ;;
+    formats)  echo status units ;;
     wind)     echo status calendar units wind ;;
     stress)   echo status units stress ;;
     exposure) echo status units stress wind exposure ;;
