@@ -163,13 +163,26 @@ void lee_steady_free(lee_steady *steady);
 /* Level at chainage x, exact; NaN where dry or off the axis. */
 double lee_steady_level_at(const lee_steady *steady, double x);
 
-/* First natural period, s, of the water of `profile` that covers chainage x
- * at the given level: smallest omega^2 > 0 of (g A q')' ... in the form
- * -(1/b Q')' g A = omega^2 Q, Q = 0 at walls, Q' = 0 at held ends. 0.1 % on
- * smooth beds. NaN when x is dry there. */
-lee_status lee_first_period(const lee_profile *profile, double level, double x,
-                            double gravity, bool start_held, bool end_held,
-                            double *period, lee_error *error);
+/* The water whose first period is asked for. */
+typedef struct lee_period_input {
+    const lee_profile *profile;
+    double level;    /* m above the datum, at rest */
+    double x;        /* a chainage that it covers, m */
+    double gravity;  /* m s-2 */
+    bool start_held; /* levels held at the axis' ends, when it reaches them */
+    bool end_held;
+} lee_period_input;
+
+/* First natural period, s: smallest omega^2 > 0 of
+ *
+ *     -(Q'/b)' = omega^2 Q/(g A),   Q = 0 at walls, Q' = 0 at held ends
+ *
+ * on two grids by Richardson's rule. Within 0.1 % on smooth beds. NaN when x
+ * is dry or off the axis.
+ * Errors: LEE_ERR_ARGUMENT, LEE_ERR_DATA (a faulty profile), LEE_ERR_MEMORY.
+ * Source: Chrystal (1905) [chrystal1905], derived again. */
+lee_status lee_first_period(const lee_period_input *input, double *period,
+                            lee_error *error);
 
 /* ---- transient engine ---- */
 

@@ -5,7 +5,7 @@
  *
  *     -(Q'/b)' = omega^2 Q/(g A),   Q = 0 at walls, Q' = 0 at held ends
  *
- * (Chrystal 1905 [chrystal], derived again). Q stands at the faces of equal
+ * (Chrystal 1905 [chrystal1905], derived again). Q stands at the faces of equal
  * cells; a cell's plan area and a face's share of the integral of 1/(g A) are
  * the profile's own, and two grids are put together by Richardson's rule. */
 #include "leewater/setup.h"
@@ -162,47 +162,50 @@ static double square_on(const basin *b, size_t cells, integrals half[],
     return lee_tridiagonal_eigenvalue(n, d, e, still);
 }
 
-/* Plain numbers, so that a caller needs no lake.
- * NOLINTNEXTLINE(readability-function-size) */
-lee_status lee_first_period(const lee_profile *profile, double level, double x,
-                            double gravity, bool start_held, bool end_held,
-                            double *period, lee_error *error) {
-    basin b = {
-        .profile = profile,
-        .level = level,
-        .gravity = gravity,
-        .start_held = start_held,
-        .end_held = end_held,
-    };
-    *period = NAN;
-    const lee_status status = lee_profile_check(profile, error);
-    if (status != LEE_OK) {
-        return status;
-    }
-    if (!isfinite(level) || !(gravity > 0.0) || !isfinite(gravity)) {
-        return lee_fail(error, LEE_ERR_ARGUMENT,
-                        "level %g m or gravity %g m s-2 is outside its range",
-                        level, gravity);
-    }
-    if (!find_shores(&b, x)) {
-        return LEE_OK;
-    }
+/* Smallest omega^2 by two grids and Richardson's rule; NaN without memory. */
+static double square_of(const basin *b) {
     const size_t fine = 2 * (size_t)COARSE;
     integrals *half = calloc(2 * fine, sizeof *half);
     double *d = calloc(fine + 1, sizeof *d);
     double *e = calloc(fine + 1, sizeof *e);
-    if (half == NULL || d == NULL || e == NULL) {
-        free(half);
-        free(d);
-        free(e);
-        return lee_fail(error, LEE_ERR_MEMORY, "no room for a grid");
+    double square = NAN;
+    if (half != NULL && d != NULL && e != NULL) {
+        const double on_coarse = square_on(b, COARSE, half, d, e);
+        const double on_fine = square_on(b, fine, half, d, e);
+        square = on_fine + (on_fine - on_coarse) / 3.0;
     }
-    const double coarse_square = square_on(&b, COARSE, half, d, e);
-    const double fine_square = square_on(&b, fine, half, d, e);
-    const double square = fine_square + (fine_square - coarse_square) / 3.0;
-    *period = 2.0 * lee_pi / sqrt(square);
     free(half);
     free(d);
     free(e);
+    return square;
+}
+
+lee_status lee_first_period(const lee_period_input *input, double *period,
+                            lee_error *error) {
+    basin b = {
+        .profile = input->profile,
+        .level = input->level,
+        .gravity = input->gravity,
+        .start_held = input->start_held,
+        .end_held = input->end_held,
+    };
+    *period = NAN;
+    const lee_status status = lee_profile_check(b.profile, error);
+    if (status != LEE_OK) {
+        return status;
+    }
+    if (!isfinite(b.level) || !(b.gravity > 0.0) || !isfinite(b.gravity)) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "level %g m or gravity %g m s-2 is outside its range",
+                        b.level, b.gravity);
+    }
+    if (!find_shores(&b, input->x)) {
+        return LEE_OK;
+    }
+    const double square = square_of(&b);
+    if (isnan(square)) {
+        return lee_fail(error, LEE_ERR_MEMORY, "no room for a grid");
+    }
+    *period = 2.0 * lee_pi / sqrt(square);
     return LEE_OK;
 }

@@ -3,7 +3,6 @@
 
 #include <float.h>
 #include <math.h>
-#include <stdint.h>
 
 /* Thickest film that the film rule holds back, m. */
 static const double film_cap = 0.25;
@@ -305,13 +304,12 @@ static double curve_volume(const lee_piece *piece) {
     const double m = piece->slope;
     /* After forty e-foldings the depth is its equilibrium to rounding. */
     const double t_end = m * piece->span > 40.0 ? 40.0 / m : piece->span;
-    const double wanted = ceil(fabs(m * t_end));
-    const int64_t panels = wanted > 1.0 ? (int64_t)wanted : 1;
+    const size_t panels = (size_t)fmax(1.0, ceil(fabs(m * t_end)));
     const double t = t_end / (double)panels;
     double distance = 0.0;
     double depth = piece->depth;
     double volume = 0.0;
-    for (int64_t k = 0; k < panels; k++) {
+    for (size_t k = 0; k < panels; k++) {
         volume += panel_volume(piece, distance, depth, t);
         const advance to = advance_by(depth, a, m, t);
         distance += to.distance;

@@ -1,6 +1,7 @@
 /* steady_report.c - what a settled lake tells: waters, nodes, surface. */
 #include "setup/steady_report.h"
 
+#include <assert.h>
 #include <math.h>
 #include <stdlib.h>
 
@@ -313,10 +314,15 @@ static lee_status period_of(const gathering *g, still_water *still,
     if (!isnan(still->period)) {
         return LEE_OK;
     }
-    return lee_first_period(in->profile, in->still_water,
-                            chainage_of(g, 0.5 * (still->from + still->to)),
-                            in->gravity, !isnan(in->start_level),
-                            !isnan(in->end_level), &still->period, error);
+    const lee_period_input input = {
+        .profile = in->profile,
+        .level = in->still_water,
+        .x = chainage_of(g, 0.5 * (still->from + still->to)),
+        .gravity = in->gravity,
+        .start_held = !isnan(in->start_level),
+        .end_held = !isnan(in->end_level),
+    };
+    return lee_first_period(&input, &still->period, error);
 }
 
 /* What the waters share with the lake at rest. */
@@ -390,6 +396,11 @@ static lee_status make_room(gathering *g, lee_steady *steady,
 
 static lee_status gather(gathering *g, lee_steady *steady, lee_error *error) {
     lee_status status = make_room(g, steady, error);
+    assert(status != LEE_OK || (g->surface != NULL && g->still != NULL));
+    if (status != LEE_OK) {
+        return status;
+    }
+    find_stills(g);
     steady->cross_tilt_at = NAN;
     steady->has_sill = g->pools->has_sill;
     for (size_t i = 0; i < g->pools->count && status == LEE_OK; i++) {
@@ -401,7 +412,6 @@ static lee_status gather(gathering *g, lee_steady *steady, lee_error *error) {
         status = draw_surface(g, steady, error);
     }
     if (status == LEE_OK) {
-        find_stills(g);
         status = compare_with_rest(g, steady, error);
     }
     if (status == LEE_OK && g->is_mirrored) {

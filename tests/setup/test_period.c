@@ -19,12 +19,23 @@ static lee_profile dig(double from, double to, double (*depth)(double x)) {
     return p;
 }
 
+/* Period of the water at x in a lake filled to level 0. */
+static double period_at(const lee_profile *p, double x, bool start_held,
+                        bool end_held) {
+    const lee_period_input input = {.profile = p,
+                                    .x = x,
+                                    .gravity = g,
+                                    .start_held = start_held,
+                                    .end_held = end_held};
+    double period = 0.0;
+    assert_int_equal(lee_first_period(&input, &period, NULL), LEE_OK);
+    return period;
+}
+
+/* Period of the water in the middle; frees the lake. */
 static double period_of(lee_profile *p, bool start_held, bool end_held) {
     const double middle = 0.5 * (p->chainage[0] + p->chainage[p->n - 1]);
-    double period = NAN;
-    assert_int_equal(lee_first_period(p, 0.0, middle, g, start_held, end_held,
-                                      &period, NULL),
-                     LEE_OK);
+    const double period = period_at(p, middle, start_held, end_held);
     lee_profile_free(p);
     return period;
 }
@@ -215,15 +226,12 @@ static void each_water_of_a_parted_lake_has_its_own_period(void **state) {
         p.bed[i] = z[i];
         p.width[i] = 50.0;
     }
-    double period = 0.0;
-    lee_first_period(&p, 0.0, 100.0, g, false, false, &period, NULL);
-    assert_near_share(period, 8000.0 / sqrt(9.0 * g), 1e-4);
-    lee_first_period(&p, 0.0, 9000.0, g, false, false, &period, NULL);
-    assert_near_share(period, 12000.0 / sqrt(9.0 * g), 1e-4);
-    lee_first_period(&p, 0.0, 4500.0, g, false, false, &period, NULL);
-    assert_true(isnan(period));
-    lee_first_period(&p, 0.0, -1.0, g, false, false, &period, NULL);
-    assert_true(isnan(period));
+    assert_near_share(period_at(&p, 100.0, false, false),
+                      8000.0 / sqrt(9.0 * g), 1e-4);
+    assert_near_share(period_at(&p, 9000.0, false, false),
+                      12000.0 / sqrt(9.0 * g), 1e-4);
+    assert_true(isnan(period_at(&p, 4500.0, false, false)));
+    assert_true(isnan(period_at(&p, -1.0, false, false)));
     lee_profile_free(&p);
 }
 
@@ -232,9 +240,9 @@ static void a_gravity_of_nothing_is_refused(void **state) {
     lee_profile p = canal(1e4, 10.0);
     lee_error error = {0};
     double period = 0.0;
-    assert_int_equal(
-        lee_first_period(&p, 0.0, 5e3, 0.0, false, false, &period, &error),
-        LEE_ERR_ARGUMENT);
+    const lee_period_input input = {.profile = &p, .x = 5e3};
+    assert_int_equal(lee_first_period(&input, &period, &error),
+                     LEE_ERR_ARGUMENT);
     assert_string_equal(error.message, "level 0 m or gravity 0 m s-2 is "
                                        "outside its range");
     lee_profile_free(&p);
