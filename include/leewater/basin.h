@@ -54,8 +54,9 @@ lee_status lee_profile_check(const lee_profile *profile, lee_error *error);
 
 /* Reads "chainage [km]; bed [m]; width [km]; bearing [degree]" in any column
  * order, units in the header. Instead of bed a column "depth" (below still
- * water) may be given when `still_water` is finite. Without a bearing column
- * every row takes `bearing` (radians; NaN: then a missing column is an error).
+ * water, >= 0) may be given when `still_water` is finite. Without a bearing
+ * column every row takes `bearing` (radians; NaN: then a missing column is an
+ * error).
  * Errors: LEE_ERR_FILE, LEE_ERR_FORMAT and LEE_ERR_DATA with line and column,
  * LEE_ERR_MEMORY. */
 lee_status lee_profile_read_csv(const char *path, double bearing,

@@ -112,6 +112,12 @@ static lee_status read_row(const lee_csv *csv, const lee_csv_field fields[],
         return lee_csv_fail(csv, &fields[found->width.index], error,
                             "width %g m is not positive", read->width);
     }
+    if (found->has_depth && !(read->bed >= 0.0)) {
+        return lee_csv_fail(csv, &fields[found->bed.index], error,
+                            "depth %g m is negative; land above the still "
+                            "water is told as 'bed'",
+                            read->bed);
+    }
     if (found->has_depth) {
         read->bed = found->still_water - read->bed;
     }

@@ -64,12 +64,20 @@ static void a_depth_counts_down_from_still_water(void **state) {
     (void)state;
     lee_profile profile;
     assert_int_equal(
-        read_text("chainage [m],depth [m],width [m]\n0,5,10\n9,-1,10\n",
+        read_text("chainage [m],depth [m],width [m]\n0,5,10\n9,0,10\n",
                   &profile, NULL),
         LEE_OK);
     assert_near(profile.bed[0], 95.0, 0.0);
-    assert_near(profile.bed[1], 101.0, 0.0);
+    assert_near(profile.bed[1], 100.0, 0.0);
     lee_profile_free(&profile);
+}
+
+static void a_negative_depth_is_refused_with_its_place(void **state) {
+    (void)state;
+    refuses("chainage [m],depth [m],width [m]\n0,5,10\n9,-1,10\n",
+            LEE_ERR_FORMAT,
+            "axis.csv:3:3: depth -1 m is negative; land above the still water "
+            "is told as 'bed'");
 }
 
 static void a_repeated_chainage_is_refused_with_its_place(void **state) {
@@ -155,6 +163,7 @@ int main(void) {
         cmocka_unit_test(columns_are_found_in_any_order_and_brought_to_si),
         cmocka_unit_test(rows_without_a_bearing_take_the_axis_bearing),
         cmocka_unit_test(a_depth_counts_down_from_still_water),
+        cmocka_unit_test(a_negative_depth_is_refused_with_its_place),
         cmocka_unit_test(a_repeated_chainage_is_refused_with_its_place),
         cmocka_unit_test(a_chainage_that_falls_is_refused_with_its_place),
         cmocka_unit_test(a_width_of_nothing_is_refused),
