@@ -60,7 +60,8 @@ lee_status lee_json_drag(FILE *stream, const lee_drag_table *table,
  * or not at all: to a temporary name beside the target, synced, renamed. "-"
  * is stdout. An existing file needs `force`; anything but a regular or a new
  * file is refused. `with_wind` adds the wind to a series; low and high stand
- * beside a level when they were kept.
+ * beside a level when they were kept; `spin-up` is 1 at the times that still
+ * feel the start at rest, else 0.
  * Errors: LEE_ERR_ARGUMENT for an ending other than .csv; LEE_ERR_FILE. */
 lee_status lee_write_steady(const char *path, bool force, const lee_case *from,
                             const lee_steady_result *result, lee_error *error);

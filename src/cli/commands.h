@@ -8,6 +8,9 @@
 #include "leewater/status.h"
 
 lee_status cmd_estimate(int argc, char *argv[], lee_error *error);
+lee_status cmd_check(int argc, char *argv[], lee_error *error);
 lee_status cmd_drag(int argc, char *argv[], lee_error *error);
+lee_status cmd_steady(int argc, char *argv[], lee_error *error);
+lee_status cmd_run(int argc, char *argv[], lee_error *error);
 
 #endif

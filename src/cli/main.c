@@ -16,8 +16,11 @@ typedef struct command {
 } command;
 
 static const command commands[] = {
-    {"estimate", "", cmd_estimate, "set-up from fetch, depth and wind"},
-    {"drag",     "", cmd_drag,     "compare the drag relations"       },
+    {"estimate", "",     cmd_estimate, "set-up from fetch, depth and wind"  },
+    {"check",    "CASE", cmd_check,    "say what was understood of a case"  },
+    {"drag",     "",     cmd_drag,     "compare the drag relations"         },
+    {"steady",   "CASE", cmd_steady,   "equilibrium levels for given winds" },
+    {"run",      "CASE", cmd_run,      "levels in time from wind or a storm"},
 };
 enum { COMMANDS = sizeof commands / sizeof commands[0] };
 

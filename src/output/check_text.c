@@ -90,8 +90,9 @@ static void print_lake(const lee_printer *to, const lee_case *from,
     }
     lee_print_row(to, "wetted length", "%s",
                   lee_show_distance(to, check->lake.wet_length).text);
-    lee_print_row(to, "area, volume", "%.3f km2, %.5g million m3",
-                  check->lake.area / 1e6, check->lake.volume / 1e6);
+    lee_print_row(to, "area, volume", "%s, %s",
+                  lee_show_area(to, check->lake.area).text,
+                  lee_show_volume(to, check->lake.volume).text);
     lee_print_row(to, "depth", "mean %s, greatest %s",
                   lee_show_length(to, check->lake.mean_depth).text,
                   lee_show_length(to, check->lake.max_depth).text);
@@ -147,19 +148,18 @@ static void print_gaps(const lee_printer *to, const lee_wind_check *record) {
 static void print_doubts(const lee_printer *to, const lee_wind_check *record) {
     const struct {
         const char *label;
-        const char *words;
         size_t count;
+        const char *words;
     } doubts[] = {
-        {"irregular", "steps unlike the usual",          record->irregular    },
-        {"missing",   "samples without wind",            record->missing      },
-        {"repeated",  "equal rows, dropped",             record->duplicates   },
-        {"variable",  "light, taken as calm",            record->variable_calm},
-        {"variable",  "from 3 m/s on, taken as missing",
-         record->variable_missing                                             },
+        {"irregular steps", record->irregular,        ""                     },
+        {"missing",         record->missing,          " without wind"        },
+        {"repeated rows",   record->duplicates,       ", dropped"            },
+        {"variable",        record->variable_calm,    " light, kept as calm" },
+        {"variable",        record->variable_missing, " strong, left missing"},
     };
     for (size_t i = 0; i < sizeof doubts / sizeof doubts[0]; i++) {
         if (doubts[i].count > 0) {
-            lee_print_row(to, doubts[i].label, "%zu %s", doubts[i].count,
+            lee_print_row(to, doubts[i].label, "%zu%s", doubts[i].count,
                           doubts[i].words);
         }
     }
@@ -255,12 +255,14 @@ lee_status lee_print_check(FILE *stream, const lee_case *from,
                            const lee_problem_check *check,
                            lee_unit_system units, lee_error *error) {
     const lee_printer to = {stream, units};
+    lee_method method = check->method;
+    method.record = (lee_notes){0}; /* told in full under "Wind" */
     lee_print_head(&to, from, check->still_water);
     print_lake(&to, from, check);
     print_stations(&to, from, check->still_water);
     print_wind(&to, from, check);
     lee_print_notes(&to, "Warnings", &check->warnings);
-    lee_print_method(&to, &check->method);
+    lee_print_method(&to, &method);
     lee_print_caution(&to);
     return lee_print_end(&to, error);
 }

@@ -145,7 +145,7 @@ lee_status lee_print_estimate(FILE *stream, const lee_case *from,
     print_question(&to, from, result);
     print_answer(&to, &result->wind[0]);
     lee_print_notes(&to, "Warnings", &result->wind[0].warnings);
-    lee_print_notes(&to, "Warnings on the lake", &result->warnings);
+    lee_print_notes(&to, "Warnings on the case", &result->warnings);
     print_formulas(&to, from, result);
     lee_print_method(&to, &result->method);
     lee_print_caution(&to);

@@ -10,10 +10,11 @@
 #include "base/constants.h"
 #include "leewater/calendar.h"
 
-enum { LINE_WIDTH = 80, LABEL_WIDTH = 18 };
+enum { LINE_WIDTH = 80, LABEL_WIDTH = 16 };
 
 static const double foot = 0.3048;       /* m (international foot, 1959)     */
 static const double mile = 1609.344;     /* m (5280 feet)                    */
+static const double acre = 4046.8564224; /* m2 (43560 square feet)           */
 static const double mile_hour = 0.44704; /* m s-1 (mile per 3600 s)          */
 
 static bool is_us(const lee_printer *to) {
@@ -62,6 +63,16 @@ lee_cell lee_show_height(const lee_printer *to, double metres) {
     return cell;
 }
 
+lee_cell lee_show_small(const lee_printer *to, double metres) {
+    lee_cell cell;
+    if (is_us(to)) {
+        (void)snprintf(cell.text, sizeof cell.text, "%.4f ft", metres / foot);
+    } else {
+        (void)snprintf(cell.text, sizeof cell.text, "%.1f mm", 1e3 * metres);
+    }
+    return cell;
+}
+
 static bool has_range(const lee_ranged *ranged) {
     return !isnan(ranged->low) || !isnan(ranged->high);
 }
@@ -101,6 +112,22 @@ lee_cell lee_show_distance(const lee_printer *to, double metres) {
     (void)snprintf(cell.text, sizeof cell.text, "%.40s %s",
                    lee_show_bare_distance(to, metres).text,
                    lee_distance_unit(to));
+    return cell;
+}
+
+lee_cell lee_show_area(const lee_printer *to, double area) {
+    lee_cell cell;
+    (void)snprintf(cell.text, sizeof cell.text, "%.4g %s",
+                   area / (is_us(to) ? mile * mile : 1e6),
+                   is_us(to) ? "mi2" : "km2");
+    return cell;
+}
+
+lee_cell lee_show_volume(const lee_printer *to, double volume) {
+    lee_cell cell;
+    (void)snprintf(cell.text, sizeof cell.text, "%.5g %s",
+                   volume / (is_us(to) ? 1e3 * acre * foot : 1e6),
+                   is_us(to) ? "thousand acre-feet" : "million m3");
     return cell;
 }
 

@@ -38,10 +38,17 @@ const char *lee_length_unit(const lee_printer *to);
  * "10 m", "4.25 m", "13.12 ft". */
 lee_cell lee_show_height(const lee_printer *to, double metres);
 
+/* Errors of computation: "0.5 mm", "0.0017 ft". */
+lee_cell lee_show_small(const lee_printer *to, double metres);
+
 /* Chainage, fetch, width: "11.80 km", "7.33 mi"; the bare number; the unit. */
 lee_cell lee_show_distance(const lee_printer *to, double metres);
 lee_cell lee_show_bare_distance(const lee_printer *to, double metres);
 const char *lee_distance_unit(const lee_printer *to);
+
+/* "25.3 km2", "9.77 mi2"; "113.33 million m3", "91.88 thousand acre-feet". */
+lee_cell lee_show_area(const lee_printer *to, double area);
+lee_cell lee_show_volume(const lee_printer *to, double volume);
 
 /* "22.0 m/s", "49.2 mph"; the bare number; the unit. */
 lee_cell lee_show_speed(const lee_printer *to, double speed);

@@ -6,9 +6,19 @@
 
 #include "base/text.h"
 
-static void print_span(const lee_printer *to, const lee_run_result *result) {
+/* Winds that are given or built have no date unless the case gives one. */
+static bool is_dated(const lee_problem *problem) {
+    return problem->wind.kind == LEE_WIND_RECORD || problem->run.has_from;
+}
+
+static void print_span(const lee_printer *to, const lee_case *from,
+                       const lee_run_result *result) {
     if (result->n == 0) {
         return;
+    }
+    if (!is_dated(&from->problem)) {
+        (void)fprintf(to->stream, "no date is given: times count from %s\n",
+                      lee_show_time(result->time[0]).text);
     }
     (void)fprintf(to->stream, "%s to %s, %zu times\n",
                   lee_show_time(result->time[0]).text,
@@ -62,11 +72,17 @@ static void print_exceedance(const lee_printer *to,
     } else {
         (void)snprintf(end.text, sizeof end.text, "still %s at the end", side);
     }
-    lee_print_row(
-        to, label.text, "first %s, %zu time%s, longest %s, total %s, %s",
-        lee_show_time(seen->first_time).text, seen->times,
-        seen->times == 1 ? "" : "s", lee_show_duration(seen->longest).text,
-        lee_show_duration(seen->total).text, end.text);
+    if (seen->times == 1) {
+        lee_print_row(to, label.text, "once, %s, for %s, %s",
+                      lee_show_time(seen->first_time).text,
+                      lee_show_duration(seen->total).text, end.text);
+        return;
+    }
+    lee_print_row(to, label.text,
+                  "first %s, %zu times, longest %s, total %s, %s",
+                  lee_show_time(seen->first_time).text, seen->times,
+                  lee_show_duration(seen->longest).text,
+                  lee_show_duration(seen->total).text, end.text);
 }
 
 static void print_station(const lee_printer *to, const lee_station *station,
@@ -92,7 +108,7 @@ static void print_station(const lee_printer *to, const lee_station *station,
                       lee_show_duration(series->dry_time).text);
     }
     if (!isnan(series->residual)) {
-        lee_print_row(to, "left swinging", "%s from still water, %s",
+        lee_print_row(to, "residual seiche", "%s from still water, %s",
                       lee_show_length(to, series->residual).text,
                       lee_show_time(series->residual_time).text);
     }
@@ -101,7 +117,8 @@ static void print_station(const lee_printer *to, const lee_station *station,
 static void print_computation(const lee_printer *to,
                               const lee_run_result *result) {
     (void)fputs("\nComputation\n", to->stream);
-    lee_print_row(to, "cells, step", "%zu, %g s", result->cells, result->step);
+    lee_print_row(to, "cells, step", "%zu, %.4g s", result->cells,
+                  result->step);
     lee_print_row(to, "first period", "%s",
                   lee_show_duration(result->first_period).text);
     if (result->pieces > 1) {
@@ -113,10 +130,10 @@ static void print_computation(const lee_printer *to,
         lee_print_row(to, "numerical error", "not computed");
         return;
     }
-    lee_print_row(to, "numerical error", "%s (step %s, cells %s)",
-                  lee_show_length(to, result->numerical_error).text,
-                  lee_show_length(to, result->numerical_error_time).text,
-                  lee_show_length(to, result->numerical_error_space).text);
+    lee_print_row(to, "numerical error", "%s (from the step %s, cells %s)",
+                  lee_show_small(to, result->numerical_error).text,
+                  lee_show_small(to, result->numerical_error_time).text,
+                  lee_show_small(to, result->numerical_error_space).text);
 }
 
 lee_status lee_print_run(FILE *stream, const lee_case *from,
@@ -124,7 +141,7 @@ lee_status lee_print_run(FILE *stream, const lee_case *from,
                          lee_error *error) {
     const lee_printer to = {stream, units};
     lee_print_head(&to, from, result->still_water);
-    print_span(&to, result);
+    print_span(&to, from, result);
     print_strongest(&to, result);
     (void)fprintf(stream, "levels in %s above %s\n", lee_length_unit(&to),
                   lee_datum_of(from));

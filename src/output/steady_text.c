@@ -28,12 +28,16 @@ static void print_wind(const lee_printer *to, const lee_wind_estimate *wind) {
                   lee_show_speed(to, wind->speed).text);
     lee_print_row(to, "drag coefficient", "%.2f / 1000",
                   1e3 * wind->coefficient);
-    lee_print_row(to, "wind stress", "%.3f Pa, %.0f %% of it along the axis",
-                  wind->stress, 100.0 * fabs(wind->along));
-    lee_print_row(to, "return flow", "%.3f", wind->return_flow);
     if (wind->is_across) {
-        lee_print_row(to, "", "across the axis: no end is the lee");
+        lee_print_row(to, "wind stress",
+                      "%.3f Pa, across the axis: no end is the lee",
+                      wind->stress);
+    } else {
+        lee_print_row(to, "wind stress",
+                      "%.3f Pa, %.0f %% of it along the axis", wind->stress,
+                      100.0 * fabs(wind->along));
     }
+    lee_print_row(to, "return flow", "%.3f", wind->return_flow);
 }
 
 static void print_nodes(const lee_printer *to,
@@ -76,9 +80,13 @@ static void print_waters(const lee_printer *to, const lee_wind_estimate *wind) {
         }
         print_ends(to, wind, water);
     }
-    lee_print_row(to, "cross-axis tilt", "%s at %s",
-                  lee_show_length(to, wind->cross_tilt).text,
-                  lee_show_distance(to, wind->cross_tilt_at).text);
+    if (isnan(wind->cross_tilt_at)) {
+        lee_print_row(to, "cross-axis tilt", "none");
+    } else {
+        lee_print_row(to, "cross-axis tilt", "%s at %s",
+                      lee_show_length(to, wind->cross_tilt).text,
+                      lee_show_distance(to, wind->cross_tilt_at).text);
+    }
     if (wind->dry_length > 0.0) {
         lee_print_row(to, "fallen dry", "%s of the axis",
                       lee_show_distance(to, wind->dry_length).text);
@@ -136,7 +144,7 @@ static void print_line(const lee_printer *to, const lee_wind_estimate *wind) {
     (void)fprintf(
         to->stream, "  %6s  %4.0f  %5.0f  %6s  %7s %-18s  %7s %-20s  %6s\n",
         lee_show_bare_speed(to, wind->wind.speed).text,
-        lee_whole_degrees(wind->wind.from), 100.0 * wind->along + 0.0,
+        lee_whole_degrees(wind->wind.from), round(100.0 * wind->along) + 0.0,
         wind->is_across ? "across"
                         : lee_show_bare_distance(to, wind->set_up_at).text,
         lee_show_bare_length(to, wind->set_up.value).text,
@@ -146,10 +154,13 @@ static void print_line(const lee_printer *to, const lee_wind_estimate *wind) {
         lee_show_bare_length(to, wind->tilt.value).text);
 }
 
+/* The first of the highest: levels that differ by rounding are one. */
 static size_t highest(const lee_steady_result *result) {
+    static const double rounding = 1e-6; /* m */
     size_t best = 0;
     for (size_t i = 1; i < result->count; i++) {
-        if (result->wind[i].set_up.value > result->wind[best].set_up.value) {
+        if (result->wind[i].set_up.value >
+            result->wind[best].set_up.value + rounding) {
             best = i;
         }
     }
@@ -171,17 +182,78 @@ static void print_table(const lee_printer *to,
     }
 }
 
-/* Each warning once, with the number of winds it holds for. */
-static void print_warnings(const lee_printer *to,
-                           const lee_steady_result *result, lee_notes *told,
-                           lee_error *error) {
-    for (size_t i = 0; i < result->count; i++) {
-        const lee_notes *notes = &result->wind[i].warnings;
-        for (size_t k = 0; k < notes->n; k++) {
-            (void)lee_notes_add(told, error, "%s", notes->text[k]);
+/* A warning that several winds share but for its numbers. */
+typedef struct shared_warning {
+    const char *text; /* of the first wind that has it */
+    double from;      /* of that wind */
+    size_t count;
+} shared_warning;
+
+enum { MOST_SHARED = 32 };
+
+static bool is_of_a_number(char c) {
+    return (c >= '0' && c <= '9') || c == '.';
+}
+
+/* Equal when every run of digits and dots is left out. */
+static bool is_same_but_numbers(const char *a, const char *b) {
+    while (*a != '\0' || *b != '\0') {
+        if (is_of_a_number(*a) || is_of_a_number(*b)) {
+            while (is_of_a_number(*a)) {
+                a++;
+            }
+            while (is_of_a_number(*b)) {
+                b++;
+            }
+        } else if (*a++ != *b++) {
+            return false;
         }
     }
-    lee_print_notes(to, "Warnings, for one wind or more", told);
+    return true;
+}
+
+/* Counts a warning with its like; returns how many kinds there are then. */
+static size_t count_warning(shared_warning seen[], size_t n, const char *text,
+                            double from) {
+    for (size_t i = 0; i < n; i++) {
+        if (is_same_but_numbers(seen[i].text, text)) {
+            seen[i].count++;
+            return n;
+        }
+    }
+    if (n < MOST_SHARED) {
+        seen[n++] = (shared_warning){text, from, 1};
+    }
+    return n;
+}
+
+static void print_shared(const lee_printer *to, const shared_warning *seen) {
+    lee_text line = {0};
+    lee_text_add(&line, "from %s", lee_show_direction(seen->from).text);
+    if (seen->count > 1) {
+        lee_text_add(&line, ", and %zu more winds alike", seen->count - 1);
+    }
+    lee_text_add(&line, ": %s", seen->text);
+    lee_print_wrapped(to, 4, "- ", line.bytes != NULL ? line.bytes : "");
+    lee_text_free(&line);
+}
+
+static void print_warnings(const lee_printer *to,
+                           const lee_steady_result *result) {
+    shared_warning seen[MOST_SHARED];
+    size_t n = 0;
+    for (size_t i = 0; i < result->count; i++) {
+        const lee_wind_estimate *wind = &result->wind[i];
+        for (size_t k = 0; k < wind->warnings.n; k++) {
+            n = count_warning(seen, n, wind->warnings.text[k], wind->wind.from);
+        }
+    }
+    if (n > 0) {
+        (void)fputs("\nWarnings\n", to->stream);
+    }
+    for (size_t i = 0; i < n; i++) {
+        print_shared(to, &seen[i]);
+    }
 }
 
 lee_status lee_print_steady(FILE *stream, const lee_case *from,
@@ -190,18 +262,16 @@ lee_status lee_print_steady(FILE *stream, const lee_case *from,
     const lee_printer to = {stream, units};
     lee_print_head(&to, from, result->still_water);
     if (result->count > BLOCKS_UP_TO) {
-        lee_notes told = {0};
         print_table(&to, result);
         (void)fputs("\nHighest set-up", stream);
         print_block(&to, from, &result->wind[highest(result)]);
-        print_warnings(&to, result, &told, error);
-        lee_notes_free(&told);
+        print_warnings(&to, result);
     } else {
         for (size_t i = 0; i < result->count; i++) {
             print_block(&to, from, &result->wind[i]);
         }
     }
-    lee_print_notes(&to, "Warnings", &result->warnings);
+    lee_print_notes(&to, "Warnings on the case", &result->warnings);
     lee_print_method(&to, &result->method);
     lee_print_caution(&to);
     return lee_print_end(&to, error);

@@ -206,7 +206,7 @@ lee_status lee_write_steady(const char *path, bool force, const lee_case *from,
 
 static void write_run_header(FILE *out, const lee_case *from,
                              const lee_run_result *result, bool with_wind) {
-    (void)fputs("time", out);
+    (void)fputs("time,spin-up", out);
     if (with_wind) {
         (void)fputs(",wind 10 m over water [m s-1],wind from [degree]", out);
     }
@@ -224,7 +224,8 @@ static void write_run_header(FILE *out, const lee_case *from,
 static void write_run_row(FILE *out, const lee_run_result *result, size_t row,
                           bool with_wind) {
     char text[LEE_TIME_TEXT];
-    (void)fputs(lee_time_format(result->time[row], text), out);
+    (void)fprintf(out, "%s,%d", lee_time_format(result->time[row], text),
+                  result->is_spin_up[row] ? 1 : 0);
     if (with_wind) {
         write_next(out, result->speed[row], 3);
         write_next(out, in_degrees(result->from[row]), 1);

@@ -37,8 +37,8 @@ static void the_question_is_repeated_with_its_units(void **state) {
     captured out;
     make_question(&made);
     const char *text = printed(&out, &made, LEE_UNITS_SI);
-    assert_contains(text, "fetch               10.00 km\n");
-    assert_contains(text, "depth               10 m\n");
+    assert_contains(text, "fetch             10.00 km\n");
+    assert_contains(text, "depth             10 m\n");
     assert_contains(text, "25.0 m/s, measured at 10 m over water\n");
     capture_free(&out);
 }
@@ -75,9 +75,9 @@ static void a_duration_is_judged_by_the_first_period(void **state) {
         double duration;
         const char *verdict;
     } judged[] = {
-        {1800.0, "duration            30 min: shorter than half the first "},
-        {1860.0, "duration            31 min: enough to reach these levels"},
-        {3720.0, "duration            1 h 2 min: long enough;"             },
+        {1800.0, "duration          30 min: shorter than half the first "},
+        {1860.0, "duration          31 min: enough to reach these levels"},
+        {3720.0, "duration          1 h 2 min: long enough;"             },
     };
     for (size_t i = 0; i < sizeof judged / sizeof judged[0]; i++) {
         hand_made made;

@@ -62,11 +62,31 @@ static void heights_have_no_zeros_at_the_end(void **state) {
     assert_string_equal(lee_show_height(&us, 4.0).text, "13.12 ft");
 }
 
+/* 0.51 mm is 0.00167 ft. */
+static void
+errors_are_shown_in_millimetres_or_small_parts_of_feet(void **state) {
+    (void)state;
+    assert_string_equal(lee_show_small(&si, 5.1e-4).text, "0.5 mm");
+    assert_string_equal(lee_show_small(&us, 5.1e-4).text, "0.0017 ft");
+}
+
 /* 1 mile is 1609.344 m. */
 static void chainage_is_shown_in_kilometres_or_miles(void **state) {
     (void)state;
     assert_string_equal(lee_show_distance(&si, 11800.0).text, "11.80 km");
     assert_string_equal(lee_show_distance(&us, 1609344.0).text, "1000.00 mi");
+}
+
+/* 1 square mile is 2.589988 km2, an acre-foot 43560 cubic feet or 1233.482
+ * m3: 25 km2 are 9.6526 mi2, 113.33e6 m3 are 91878 acre-feet. */
+static void areas_and_volumes_take_the_units_of_the_trade(void **state) {
+    (void)state;
+    assert_string_equal(lee_show_area(&si, 25e6).text, "25 km2");
+    assert_string_equal(lee_show_area(&us, 25e6).text, "9.653 mi2");
+    assert_string_equal(lee_show_volume(&si, 113.33e6).text,
+                        "113.33 million m3");
+    assert_string_equal(lee_show_volume(&us, 113.33e6).text,
+                        "91.878 thousand acre-feet");
 }
 
 /* 1 mph is 0.44704 m/s: 22 m/s is 49.21 mph. */
@@ -125,7 +145,7 @@ static void control_bytes_of_a_file_do_not_reach_the_terminal(void **state) {
     lee_print_wrapped(&to, 0, "", "red \x1B[31m quay");
     lee_print_row(&to, "na\x07me", "%s", "a\nb");
     assert_string_equal(capture_end(&out),
-                        "red ?[31m quay\n  na?me               a?b\n");
+                        "red ?[31m quay\n  na?me             a?b\n");
     capture_free(&out);
 }
 
@@ -193,7 +213,10 @@ int main(void) {
         cmocka_unit_test(a_value_without_range_stands_alone),
         cmocka_unit_test(a_range_that_may_fall_dry_says_so),
         cmocka_unit_test(heights_have_no_zeros_at_the_end),
+        cmocka_unit_test(
+            errors_are_shown_in_millimetres_or_small_parts_of_feet),
         cmocka_unit_test(chainage_is_shown_in_kilometres_or_miles),
+        cmocka_unit_test(areas_and_volumes_take_the_units_of_the_trade),
         cmocka_unit_test(speed_is_shown_in_metres_per_second_or_miles_per_hour),
         cmocka_unit_test(directions_stay_below_a_full_turn),
         cmocka_unit_test(durations_take_the_two_units_that_tell),

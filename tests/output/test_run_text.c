@@ -24,6 +24,20 @@ static void the_span_and_the_strongest_wind_are_told(void **state) {
     capture_free(&out);
 }
 
+static void a_storm_without_a_date_says_so(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    made.from.problem.wind.kind = LEE_WIND_STORM;
+    assert_contains(printed(&out, &made, LEE_UNITS_SI),
+                    "no date is given: times count from 2031-01-14 00:00");
+    capture_free(&out);
+    made.from.problem.run.has_from = true;
+    assert_lacks(printed(&out, &made, LEE_UNITS_SI), "no date");
+    capture_free(&out);
+}
+
 static void each_station_has_highest_and_lowest_with_their_times(void **state) {
     (void)state;
     hand_made made;
@@ -32,9 +46,9 @@ static void each_station_has_highest_and_lowest_with_their_times(void **state) {
     const char *text = printed(&out, &made, LEE_UNITS_SI);
     assert_contains(text, "levels in m above Marrow gauge zero\n");
     assert_contains(text, "North quay, chainage 0.40 km\n");
-    assert_contains(text, "highest             101.200 m (101.150 to 101.250), "
+    assert_contains(text, "highest           101.200 m (101.150 to 101.250), "
                           "2031-01-14 00:20 UTC\n");
-    assert_contains(text, "lowest              101.000 m (100.950 to 101.050), "
+    assert_contains(text, "lowest            101.000 m (100.950 to 101.050), "
                           "2031-01-14 00:00 UTC\n");
     capture_free(&out);
 }
@@ -46,7 +60,7 @@ static void a_station_with_a_bed_has_its_least_depth(void **state) {
     captured out;
     make(&made);
     const char *text = printed(&out, &made, LEE_UNITS_SI);
-    assert_contains(text, "least depth         1.900 m over its bed\n");
+    assert_contains(text, "least depth       1.900 m over its bed\n");
     capture_free(&out);
 }
 
@@ -56,10 +70,23 @@ static void a_threshold_tells_first_time_durations_and_return(void **state) {
     captured out;
     make(&made);
     const char *text = printed(&out, &made, LEE_UNITS_SI);
-    assert_contains(text, "above 101.800 m     first 2031-01-14 00:05 UTC, 2 "
+    assert_contains(text, "above 101.800 m   first 2031-01-14 00:05 UTC, 2 "
                           "times, longest 2 h 10");
     assert_contains(text, "total 2 h 30 min, back below since 2031-01-14 02:15 "
                           "UTC\n");
+    capture_free(&out);
+}
+
+static void a_threshold_crossed_once_has_one_duration(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    made.exceedance[0].times = 1;
+    made.exceedance[0].total = 7800.0;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "above 101.800 m   once, 2031-01-14 00:05 UTC, for 2 "
+                          "h 10 min, back below");
     capture_free(&out);
 }
 
@@ -80,7 +107,7 @@ static void a_threshold_that_is_never_reached_says_so(void **state) {
     captured out;
     make(&made);
     const char *text = printed(&out, &made, LEE_UNITS_SI);
-    assert_contains(text, "below 100.900 m     not reached\n");
+    assert_contains(text, "below 100.900 m   not reached\n");
     capture_free(&out);
 }
 
@@ -90,20 +117,20 @@ static void a_station_that_falls_dry_tells_how_long(void **state) {
     captured out;
     make(&made);
     const char *text = printed(&out, &made, LEE_UNITS_SI);
-    assert_contains(text, "dry for             10 min\n");
+    assert_contains(text, "dry for           10 min\n");
     capture_free(&out);
 }
 
-static void the_swing_left_by_the_wind_is_told_once_it_is_known(void **state) {
+static void a_residual_seiche_is_told_where_it_is_known(void **state) {
     (void)state;
     hand_made made;
     captured out;
     make(&made);
     const char *text = printed(&out, &made, LEE_UNITS_SI);
-    const char *first = strstr(text, "left swinging");
+    const char *first = strstr(text, "residual seiche");
     assert_non_null(first);
     assert_contains(first, "0.120 m from still water, 2031-01-14 00:15 UTC\n");
-    assert_null(strstr(first + 1, "left swinging"));
+    assert_null(strstr(first + 1, "residual seiche"));
     capture_free(&out);
 }
 
@@ -115,7 +142,7 @@ static void a_station_dry_throughout_has_no_level(void **state) {
     made.series[0].max.value = (double)NAN;
     made.series[0].min.value = (double)NAN;
     const char *text = printed(&out, &made, LEE_UNITS_SI);
-    assert_contains(text, "highest             dry throughout\n");
+    assert_contains(text, "highest           dry throughout\n");
     assert_lacks(text, "least depth");
     capture_free(&out);
 }
@@ -126,7 +153,7 @@ static void the_own_error_is_told_with_its_parts(void **state) {
     captured out;
     make(&made);
     const char *text = printed(&out, &made, LEE_UNITS_SI);
-    assert_contains(text, "0.003 m (step 0.002 m, cells 0.001 m)\n");
+    assert_contains(text, "3.0 mm (from the step 2.0 mm, cells 1.0 mm)\n");
     capture_free(&out);
 }
 
@@ -137,7 +164,7 @@ static void an_own_error_that_was_left_out_is_not_claimed(void **state) {
     make(&made);
     made.run.numerical_error = (double)NAN;
     const char *text = printed(&out, &made, LEE_UNITS_SI);
-    assert_contains(text, "numerical error     not computed\n");
+    assert_contains(text, "numerical error   not computed\n");
     capture_free(&out);
 }
 
@@ -148,7 +175,7 @@ static void a_parted_record_tells_its_pieces(void **state) {
     make(&made);
     made.run.pieces = 3;
     const char *text = printed(&out, &made, LEE_UNITS_SI);
-    assert_contains(text, "pieces              3, parted by gaps of the "
+    assert_contains(text, "pieces            3, parted by gaps of the "
                           "record\n");
     capture_free(&out);
 }
@@ -156,13 +183,15 @@ static void a_parted_record_tells_its_pieces(void **state) {
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(the_span_and_the_strongest_wind_are_told),
+        cmocka_unit_test(a_storm_without_a_date_says_so),
         cmocka_unit_test(each_station_has_highest_and_lowest_with_their_times),
         cmocka_unit_test(a_station_with_a_bed_has_its_least_depth),
         cmocka_unit_test(a_threshold_tells_first_time_durations_and_return),
+        cmocka_unit_test(a_threshold_crossed_once_has_one_duration),
         cmocka_unit_test(a_threshold_that_is_never_left_says_so),
         cmocka_unit_test(a_threshold_that_is_never_reached_says_so),
         cmocka_unit_test(a_station_that_falls_dry_tells_how_long),
-        cmocka_unit_test(the_swing_left_by_the_wind_is_told_once_it_is_known),
+        cmocka_unit_test(a_residual_seiche_is_told_where_it_is_known),
         cmocka_unit_test(a_station_dry_throughout_has_no_level),
         cmocka_unit_test(the_own_error_is_told_with_its_parts),
         cmocka_unit_test(an_own_error_that_was_left_out_is_not_claimed),

@@ -31,7 +31,7 @@ static void both_ends_are_named_with_their_range_and_place(void **state) {
     assert_contains(text, "0.412 m (0.310 to 0.550), lee shore, 12.00 km\n");
     assert_contains(text,
                     "-0.430 m (-0.600 to -0.320), windward shore, 0.00 km\n");
-    assert_contains(text, "node                at 5.90 km\n");
+    assert_contains(text, "node              at 5.90 km\n");
     capture_free(&out);
 }
 
@@ -163,25 +163,58 @@ static void a_scan_is_a_table_and_its_worst_wind(void **state) {
     capture_free(&out);
 }
 
+/* Three of four winds share a warning but for its number. */
 static void a_warning_of_many_winds_is_told_once(void **state) {
     (void)state;
     hand_made made;
     captured out;
     make(&made);
     lee_wind_estimate winds[4];
-    lee_notes notes = {0};
-    assert_int_equal(lee_notes_add(&notes, NULL, "shore falls dry"), LEE_OK);
+    lee_notes notes[4] = {{0}};
     for (size_t i = 0; i < 4; i++) {
         winds[i] = made.wind[0];
-        winds[i].warnings = i == 0 ? (lee_notes){0} : notes;
+        winds[i].wind.from = degrees(90.0 * (double)i);
+        if (i > 0) {
+            assert_int_equal(
+                lee_notes_add(&notes[i], NULL, "%d m fall dry", 10 * (int)i),
+                LEE_OK);
+        }
+        winds[i].warnings = notes[i];
     }
     made.steady.count = 4;
     made.steady.wind = winds;
     const char *text = printed(&out, &made, LEE_UNITS_SI);
-    const char *first = strstr(text, "shore falls dry");
-    assert_non_null(first);
-    assert_null(strstr(first + 1, "shore falls dry"));
-    lee_notes_free(&notes);
+    assert_contains(text, "\nWarnings\n  - from 90 degrees, and 2 more winds "
+                          "alike: 10 m fall dry\n");
+    assert_lacks(text, "20 m fall dry");
+    for (size_t i = 0; i < 4; i++) {
+        lee_notes_free(&notes[i]);
+    }
+    capture_free(&out);
+}
+
+static void warnings_that_differ_in_words_are_told_apart(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    lee_wind_estimate winds[4];
+    lee_notes notes[4] = {{0}};
+    for (size_t i = 0; i < 4; i++) {
+        winds[i] = made.wind[0];
+        assert_int_equal(lee_notes_add(&notes[i], NULL, "%s",
+                                       i < 3 ? "shore dry" : "shore drying"),
+                         LEE_OK);
+        winds[i].warnings = notes[i];
+    }
+    made.steady.count = 4;
+    made.steady.wind = winds;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "and 2 more winds alike: shore dry\n");
+    assert_contains(text, "degrees: shore drying\n");
+    for (size_t i = 0; i < 4; i++) {
+        lee_notes_free(&notes[i]);
+    }
     capture_free(&out);
 }
 
@@ -198,6 +231,7 @@ int main(void) {
         cmocka_unit_test(two_waters_are_told_apart),
         cmocka_unit_test(a_scan_is_a_table_and_its_worst_wind),
         cmocka_unit_test(a_warning_of_many_winds_is_told_once),
+        cmocka_unit_test(warnings_that_differ_in_words_are_told_apart),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

@@ -76,6 +76,7 @@ static inline void make_case(hand_made *made) {
     problem->lake.still_water = (lee_level_series){1, NULL, made->still_water};
     problem->lake.profile =
         (lee_profile){3, made->chainage, made->bed, made->width, made->bearing};
+    problem->wind.kind = LEE_WIND_RECORD;
     problem->exposure.height = 10.0;
     problem->exposure.averaging = unknown;
     problem->station_count = 2;
@@ -168,6 +169,7 @@ static inline void make_series(hand_made *made) {
         made->high[i] = made->quay[i] + 0.05;
     }
     made->landing[2] = unknown;
+    made->spin_up[0] = true;
     made->exceedance[0] = (lee_exceedance){
         .threshold = {101.8, false},
         .is_reached = true,

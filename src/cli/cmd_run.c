@@ -1,0 +1,116 @@
+/* cmd_run.c - "run": levels in time from a wind record or a storm. */
+#include <stdio.h>
+
+#include "cli/commands.h"
+#include "cli/options.h"
+#include "cli/progress.h"
+#include "cli/target.h"
+#include "leewater/case.h"
+#include "leewater/output.h"
+#include "leewater/series.h"
+
+/* What to leave out or to add. */
+typedef struct run_choice {
+    output_choice output;
+    bool has_no_range;
+    bool has_no_error;
+    bool with_range; /* columns of low and high */
+    bool with_wind;
+} run_choice;
+
+static lee_status deliver(const request *asked, const run_choice *choice,
+                          const lee_case *from, const lee_run_result *result,
+                          lee_error *error) {
+    const output_choice *output = &choice->output;
+    lee_status status = LEE_OK;
+    if (output->path != NULL) {
+        status = lee_write_run(output->path, output->force, choice->with_wind,
+                               from, result, error);
+    }
+    if (status != LEE_OK || is_stdout(output->path)) {
+        return status;
+    }
+    return asked->is_json
+               ? lee_json_run(stdout, from, result, error)
+               : lee_print_run(stdout, from, result, asked->units, error);
+}
+
+static lee_status run_case(const request *asked, const run_choice *choice,
+                           const lee_case *from, lee_error *error) {
+    progress at;
+    lee_run_result result = {0};
+    lee_run_options options = lee_run_options_default();
+    options.has_range = !choice->has_no_range;
+    options.keep_range = choice->with_range;
+    options.has_own_error = !choice->has_no_error;
+    options.keep_going = progress_goes_on;
+    options.user = &at;
+    progress_begin(&at, asked->command, asked->is_quiet);
+    lee_status status =
+        lee_estimate_run(&from->problem, &options, &result, error);
+    progress_clear(&at);
+    if (status == LEE_ERR_INTERRUPTED) {
+        return lee_fail(error, status, "interrupted; nothing was written");
+    }
+    if (is_stdout(choice->output.path)) {
+        progress_end(&at); /* a pipe may block: let Ctrl-C end it */
+    }
+    if (status == LEE_OK) {
+        status = deliver(asked, choice, from, &result, error);
+    }
+    lee_run_result_free(&result);
+    progress_end(&at);
+    return status;
+}
+
+static lee_status check_run_choice(const request *asked,
+                                   const run_choice *choice, lee_error *error) {
+    const bool has_file = choice->output.path != NULL;
+    if (choice->with_range && choice->has_no_range) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "--range and --no-range exclude each other");
+    }
+    if ((choice->with_range || choice->with_wind) && !has_file) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "--%s adds columns to a file: name it with -o",
+                        choice->with_range ? "range" : "with-wind");
+    }
+    return check_choice(asked, &choice->output, error);
+}
+
+lee_status cmd_run(int argc, char *argv[], lee_error *error) {
+    run_choice choice = {0};
+    const option options[] = {
+        text_option("o,output", "FILE", "also write the levels: a .csv, or -",
+                    &choice.output.path),
+        flag_option("force", "replace FILE", &choice.output.force),
+        flag_option("range", "in FILE: low and high beside each level",
+                    &choice.with_range),
+        flag_option("with-wind", "in FILE: the wind at 10 m over water",
+                    &choice.with_wind),
+        flag_option("no-range", "faster: without the range",
+                    &choice.has_no_range),
+        flag_option("no-error", "faster: without the own numerical error",
+                    &choice.has_no_error),
+        end_of_options(),
+    };
+    request asked = {.command = "run",
+                     .summary = "levels in time from wind or a storm",
+                     .has_case = true,
+                     .has_levels = true,
+                     .options = options};
+    lee_status status = options_parse(&asked, argc, argv, error);
+    if (status != LEE_OK || asked.is_done) {
+        return status;
+    }
+    lee_case from = {0};
+    status = check_run_choice(&asked, &choice, error);
+    if (status == LEE_OK) {
+        status = lee_case_read(asked.case_path, &from, error);
+    }
+    if (status == LEE_OK) {
+        status = run_case(&asked, &choice, &from, error);
+    }
+    lee_case_free(&from);
+    return status;
+}

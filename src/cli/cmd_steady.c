@@ -1,0 +1,130 @@
+/* cmd_steady.c - "steady": equilibrium levels for given winds. */
+#include <math.h>
+#include <stdio.h>
+#include <stdlib.h>
+#include <string.h>
+
+#include "cli/commands.h"
+#include "cli/options.h"
+#include "cli/shared.h"
+#include "cli/target.h"
+#include "leewater/case.h"
+#include "leewater/output.h"
+#include "leewater/series.h"
+
+/* A wind given on the command line instead of the case's. */
+typedef struct other_wind {
+    double speed; /* NaN when not given */
+    double from;
+    double duration;
+    size_t directions; /* 0 when not given */
+} other_wind;
+
+static bool is_any(const other_wind *other) {
+    return !isnan(other->speed) || !isnan(other->from) ||
+           !isnan(other->duration) || other->directions > 0;
+}
+
+/* The case's own given wind is the base that options change. */
+static lee_status replace_wind(const other_wind *other, lee_wind_source *wind,
+                               lee_error *error) {
+    const bool has_base = wind->given_count == 1;
+    lee_given_wind next = {NAN, NAN, NAN};
+    if (has_base) {
+        next = wind->given[0];
+    }
+    next.speed = isnan(other->speed) ? next.speed : other->speed;
+    next.from = isnan(other->from) ? next.from : turn_of(other->from);
+    next.duration = isnan(other->duration) ? next.duration : other->duration;
+    const bool is_scan = other->directions > 0 ||
+                         (wind->kind == LEE_WIND_SCAN && isnan(other->from));
+    if (isnan(next.speed)) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "the case gives no single wind speed: add --wind");
+    }
+    if (!is_scan && isnan(next.from)) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "from where does the wind blow? Add --from or --scan");
+    }
+    lee_given_wind *given = realloc(wind->given, sizeof *given);
+    if (given == NULL) {
+        return lee_fail(error, LEE_ERR_MEMORY, "no room for a wind");
+    }
+    given[0] = next;
+    wind->given = given;
+    wind->given_count = 1;
+    wind->directions =
+        other->directions > 0 ? other->directions : wind->directions;
+    wind->kind = is_scan ? LEE_WIND_SCAN : LEE_WIND_GIVEN;
+    return LEE_OK;
+}
+
+static lee_status deliver(const request *asked, const output_choice *output,
+                          const lee_case *from, const lee_steady_result *result,
+                          lee_error *error) {
+    lee_status status = LEE_OK;
+    if (output->path != NULL) {
+        status =
+            lee_write_steady(output->path, output->force, from, result, error);
+    }
+    if (status != LEE_OK || is_stdout(output->path)) {
+        return status;
+    }
+    return asked->is_json
+               ? lee_json_steady(stdout, from, result, error)
+               : lee_print_steady(stdout, from, result, asked->units, error);
+}
+
+static lee_status estimate(const request *asked, const other_wind *other,
+                           const output_choice *output, lee_error *error) {
+    lee_case from = {0};
+    lee_steady_result result = {0};
+    lee_status status = lee_case_read(asked->case_path, &from, error);
+    if (status == LEE_OK && is_any(other)) {
+        status = replace_wind(other, &from.problem.wind, error);
+    }
+    if (status == LEE_OK) {
+        status = lee_estimate_steady(&from.problem, &result, error);
+    }
+    if (status == LEE_OK) {
+        status = deliver(asked, output, &from, &result, error);
+    }
+    lee_steady_result_free(&result);
+    lee_case_free(&from);
+    return status;
+}
+
+lee_status cmd_steady(int argc, char *argv[], lee_error *error) {
+    other_wind other = {.speed = NAN, .from = NAN, .duration = NAN};
+    output_choice output = {0};
+    const option options[] = {
+        positive_option("wind", &quantity_speed,
+                        "instead of the case's wind, as \"22 m/s\"",
+                        &other.speed),
+        quantity_option("from", &quantity_direction,
+                        "where it blows from, as \"240 degree\"", &other.from),
+        positive_option("duration", &quantity_duration,
+                        "how long it blows, as \"6 h\"", &other.duration),
+        count_option("scan", "from N directions, evenly round", 3600.0,
+                     &other.directions),
+        text_option("o,output", "FILE", "also write a table: a .csv, or -",
+                    &output.path),
+        flag_option("force", "replace FILE", &output.force),
+        end_of_options(),
+    };
+    request asked = {.command = "steady",
+                     .summary = "equilibrium levels for given winds",
+                     .has_case = true,
+                     .has_levels = true,
+                     .options = options};
+    lee_status status = options_parse(&asked, argc, argv, error);
+    if (status != LEE_OK || asked.is_done) {
+        return status;
+    }
+    status = check_choice(&asked, &output, error);
+    if (status == LEE_OK && other.directions > 0 && !isnan(other.from)) {
+        status = lee_fail(error, LEE_ERR_ARGUMENT,
+                          "--from and --scan exclude each other");
+    }
+    return status == LEE_OK ? estimate(&asked, &other, &output, error) : status;
+}
