@@ -170,20 +170,22 @@ static void join(lee_pools *pools, size_t i) {
     pools->has_sill = true;
 }
 
-/* Parts pool i behind catchment `last`, leaving it `volume`. */
+/* Parts pool i behind catchment `last`, leaving it `volume`; of a boundless
+ * water both parts are boundless. */
 static void part(lee_pools *pools, size_t i, size_t last, double volume) {
     memmove(&pools->pool[i + 1], &pools->pool[i],
             (pools->count - i) * sizeof *pools->pool);
     pools->count++;
     lee_pool *left = &pools->pool[i];
     lee_pool *right = &pools->pool[i + 1];
+    const bool is_boundless = isinf(left->volume);
     right->is_held = false;
-    right->volume = left->is_held ? INFINITY : left->volume - volume;
+    right->volume = is_boundless ? INFINITY : left->volume - volume;
     right->first = last + 1;
     right->start = 0.0;
     right->is_full_left = false;
     right->is_settled = false;
-    left->volume = left->is_held ? INFINITY : volume;
+    left->volume = is_boundless ? INFINITY : volume;
     left->last = last;
     left->is_full_right = false;
     left->is_settled = false;

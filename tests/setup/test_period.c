@@ -230,6 +230,9 @@ static void each_water_of_a_parted_lake_has_its_own_period(void **state) {
                       8000.0 / sqrt(9.0 * g), 1e-4);
     assert_near_share(period_at(&p, 9000.0, false, false),
                       12000.0 / sqrt(9.0 * g), 1e-4);
+    /* an end held elsewhere is none of its business */
+    assert_near_share(period_at(&p, 9000.0, true, false),
+                      12000.0 / sqrt(9.0 * g), 1e-4);
     assert_true(isnan(period_at(&p, 4500.0, false, false)));
     assert_true(isnan(period_at(&p, -1.0, false, false)));
     lee_profile_free(&p);

@@ -264,6 +264,23 @@ static void a_wind_straight_across_leaves_the_axis_level(void **state) {
     lee_profile_free(&p);
 }
 
+/* Wind straight across a wedge of 0 to 6 m: the tilt across grows towards the
+ * beach and is told where the water is half its mean depth, 1.5 m; the place
+ * is one of the drawn points, 6 m/256 apart. */
+static void the_tilt_across_is_not_told_from_the_beach(void **state) {
+    (void)state;
+    const double x[] = {0.0, 12e3};
+    const double z[] = {0.0, -6.0};
+    lee_profile p = axis_dig(2, x, z);
+    lee_steady_input in = axis_wind(&p, 0.0);
+    in.stress[0] = 0.5;
+    lee_steady s = axis_solve(&in);
+    assert_near_share(s.cross_tilt, 0.5 / rho_g * 1000.0 / 1.5, 0.02);
+    assert_near(s.cross_tilt_at, 3e3, 0.02 * 3e3);
+    lee_steady_free(&s);
+    lee_profile_free(&p);
+}
+
 static void the_return_flow_factor_multiplies_the_stress(void **state) {
     (void)state;
     lee_profile p = axis_canal(20e3, 5.0);
@@ -396,6 +413,7 @@ int main(void) {
         cmocka_unit_test(a_wind_forty_degrees_off_counts_by_its_cosine_once),
         cmocka_unit_test(a_bearing_turns_the_axis_clockwise_from_north),
         cmocka_unit_test(a_wind_straight_across_leaves_the_axis_level),
+        cmocka_unit_test(the_tilt_across_is_not_told_from_the_beach),
         cmocka_unit_test(the_return_flow_factor_multiplies_the_stress),
         cmocka_unit_test(an_l_shaped_lake_tilts_along_one_leg_only),
         cmocka_unit_test(a_wind_into_a_hairpin_heaps_water_at_the_bend),

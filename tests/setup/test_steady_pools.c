@@ -8,7 +8,7 @@
 #include "support/axis.h"
 
 static const double rho_g = 1000.0 * 9.81;
-static const double side = 1e-4; /* m, what the steep sides may change */
+static const double side = 2e-4; /* m, what some steep sides change */
 
 /* Two pools of depth 3 m, 5 and 6.5 km long, and a crest between them. */
 static lee_profile dig(double crest) {
@@ -167,6 +167,29 @@ static void a_pool_parted_from_a_held_end_keeps_its_crest_level(void **state) {
     lee_profile_free(&p);
 }
 
+/* Two pools beyond, over two sills: the wind drains both towards the held end
+ * and leaves each full to its own crest. */
+static void pools_in_a_row_from_a_held_end_keep_their_crests(void **state) {
+    (void)state;
+    const double x[] = {0.0,    2000.0,  2000.05, 2000.1,
+                        6000.1, 6000.15, 6000.2,  12000.2};
+    const double z[] = {-3.0, -3.0, -0.1, -3.0, -3.0, -0.2, -3.0, -3.0};
+    lee_profile p = axis_dig(8, x, z);
+    const double a = 2.0 / rho_g;
+    lee_steady_input in = axis_wind(&p, -2.0);
+    in.start_level = 0.0;
+    lee_steady s = axis_solve(&in);
+    assert_int_equal(s.count, 3);
+    assert_near(s.water[1].set_up, -0.1, 1e-9);
+    assert_near(s.water[1].set_down, sqrt(2.9 * 2.9 - 2.0 * a * 4000.1) - 3.0,
+                side);
+    assert_near(s.water[2].set_up, -0.2, 1e-9);
+    assert_near(s.water[2].set_down, sqrt(2.8 * 2.8 - 2.0 * a * 6000.1) - 3.0,
+                side);
+    lee_steady_free(&s);
+    lee_profile_free(&p);
+}
+
 /* At rest already: the held level stands 0.5 m below still water and below
  * the crest; the far pool runs down to the crest and stays. */
 static void a_low_held_end_drains_a_pool_to_its_crest(void **state) {
@@ -224,6 +247,68 @@ static void an_uneven_bend_keeps_the_shares_of_its_parting(void **state) {
     lee_profile_free(&p);
 }
 
+/* Depth at x = length below a dry edge on a bed that falls with the wind, and
+ * the area under the surface: x = -h/m - (a/m^2) ln(1 - m h/a) and
+ * (a x - h^2/2)/m, integrals of dH/dx = a/H - m. */
+static double area_on_slope(double a, double m, double length) {
+    double low = 0.0;
+    double high = 100.0;
+    for (int k = 0; k < 200; k++) {
+        const double h = 0.5 * (low + high);
+        const double x = -h / m - a / (m * m) * log1p(-m * h / a);
+        *(x < length ? &low : &high) = h;
+    }
+    return (a * length - 0.5 * low * low) / m;
+}
+
+/* Legs of 20 km, one level, one falling away from the bend: their shares
+ * change with the wind, so it matters when they part: at the a* at which both
+ * begin dry at the bend and hold all the water. */
+static void a_bend_parts_at_the_wind_that_draws_it_dry(void **state) {
+    (void)state;
+    const double m = -1e-4;
+    const double x[] = {0.0, 2e4, 4e4};
+    const double z[] = {-1.5, -1.5, -3.5};
+    lee_profile p = axis_dig(3, x, z);
+    p.bearing[1] = 3.14159265358979323846;
+    const lee_steady_input in = axis_wind(&p, -5.0);
+    lee_steady s = axis_solve(&in);
+    double low = 1e-6;
+    double high = 5.0 / rho_g;
+    double first = 0.0;
+    for (int k = 0; k < 200; k++) {
+        const double a = 0.5 * (low + high);
+        first = pow(2.0 * a * 2e4, 1.5) / (3.0 * a);
+        const double all = first + area_on_slope(a, m, 2e4);
+        *(all < 1.5 * 2e4 + 2.5 * 2e4 ? &low : &high) = a;
+    }
+    assert_int_equal(s.count, 2);
+    /* the parting is known to a thousandth of the wind */
+    assert_near_share(s.water[0].volume / 1000.0, first, 1e-3);
+    lee_steady_free(&s);
+    lee_profile_free(&p);
+}
+
+/* The bend lies in a hollow so shallow that the wind drives thin water out of
+ * it both ways; deep water stays one, alike on both sides. */
+static void a_hollow_at_a_bend_keeps_water_on_both_sides(void **state) {
+    (void)state;
+    const double x[] = {0.0, 1e4, 2e4};
+    const double z[] = {-2.9, -3.0, -2.9};
+    lee_profile p = axis_dig(3, x, z);
+    p.bearing[1] = 3.14159265358979323846;
+    const lee_steady_input in = axis_wind(&p, -1.0);
+    lee_steady s = axis_solve(&in);
+    assert_int_equal(s.count, 1);
+    assert_near(lee_steady_level_at(&s, 0.0), lee_steady_level_at(&s, 2e4),
+                1e-12);
+    assert_near_share(s.water[0].volume, 2.95 * 2e4 * 1000.0, 1e-13);
+    assert_near(s.water[0].set_down_at, 1e4, 1e-9);
+    assert_false(s.has_sill);
+    lee_steady_free(&s);
+    lee_profile_free(&p);
+}
+
 /* A dry hollow behind a dike 0.3 m above still water: what goes over stays. */
 static void water_over_a_dike_fills_the_hollow_behind(void **state) {
     (void)state;
@@ -268,9 +353,12 @@ int main(void) {
         cmocka_unit_test(a_covered_sill_leaves_one_water),
         cmocka_unit_test(pools_join_where_both_stand_above_the_crest),
         cmocka_unit_test(a_pool_parted_from_a_held_end_keeps_its_crest_level),
+        cmocka_unit_test(pools_in_a_row_from_a_held_end_keep_their_crests),
         cmocka_unit_test(a_low_held_end_drains_a_pool_to_its_crest),
         cmocka_unit_test(a_bend_drawn_dry_parts_the_lake_evenly),
         cmocka_unit_test(an_uneven_bend_keeps_the_shares_of_its_parting),
+        cmocka_unit_test(a_bend_parts_at_the_wind_that_draws_it_dry),
+        cmocka_unit_test(a_hollow_at_a_bend_keeps_water_on_both_sides),
         cmocka_unit_test(water_over_a_dike_fills_the_hollow_behind),
         cmocka_unit_test(a_puddle_thinner_than_the_dry_depth_is_no_water),
     };
