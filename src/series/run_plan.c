@@ -175,10 +175,12 @@ static lee_status find_spans(const lee_problem *problem, lee_run_plan *plan,
                                plan->spin_up / 3600.0);
     }
     if (status == LEE_OK && is_parted) {
-        status = lee_notes_add(warnings, error,
-                               "gaps part the record: %zu stretches, each run "
-                               "from rest",
-                               plan->span_count);
+        status = lee_notes_add(
+            warnings, error,
+            "gaps part the record: %zu stretches, %s from "
+            "rest",
+            plan->span_count,
+            plan->span[0].starts_steady ? "all but the first run" : "each run");
     }
     return status;
 }
