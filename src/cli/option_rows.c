@@ -71,5 +71,6 @@ const char *option_name(const option *each) {
 }
 
 char option_letter(const option *each) {
-    return each->name[1] == ',' ? each->name[0] : '\0';
+    static const char none = 0;
+    return each->name[1] == ',' ? each->name[0] : none;
 }

@@ -277,7 +277,7 @@ lee_status options_parse(request *asked, int argc, char *argv[],
                     &units),
         flag_option("json", "a summary for machines instead of text",
                     &asked->is_json),
-        flag_option("q,quiet", "no progress and no remarks", &asked->is_quiet),
+        flag_option("q,quiet", "no progress is told", &asked->is_quiet),
         flag_option("h,help", "this help", &is_help),
         end_of_options(),
     };

@@ -25,6 +25,13 @@ static double formula_level(const lee_formula *formula, const lee_case *from,
                            result->method.gravity);
 }
 
+/* The one water of an even lake. Without any, nothing about it is known. */
+static const lee_water_estimate *water_of(const lee_wind_estimate *wind) {
+    static const lee_water_estimate none = {.first_period = NAN,
+                                            .develop_time = NAN};
+    return wind->water_count > 0 ? &wind->water[0] : &none;
+}
+
 static const char *result_name(lee_formula_result what) {
     switch (what) {
     case LEE_RESULT_TILT:
@@ -77,7 +84,7 @@ static void print_question(const lee_printer *to, const lee_case *from,
 }
 
 static void print_answer(const lee_printer *to, const lee_wind_estimate *wind) {
-    const lee_water_estimate *water = &wind->water[0];
+    const lee_water_estimate *water = water_of(wind);
     (void)fputc('\n', to->stream);
     lee_print_row(to, "set-up", "%s at the lee shore",
                   lee_show_ranged(to, &wind->set_up).text);
@@ -193,7 +200,7 @@ lee_status lee_json_estimate(FILE *stream, const lee_case *from,
     lee_json_put_winds(&json, from, result);
     if (!isnan(wind->wind.duration)) {
         lee_json_put_text(&json, "duration",
-                          duration_verdict(wind, &wind->water[0]));
+                          duration_verdict(wind, water_of(wind)));
     }
     put_formulas(&json, from, result);
     lee_json_put_notes(&json, "warnings", &result->warnings);

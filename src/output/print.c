@@ -57,7 +57,8 @@ lee_cell lee_show_length(const lee_printer *to, double metres) {
 
 lee_cell lee_show_height(const lee_printer *to, double metres) {
     lee_cell cell;
-    const double value = rounded(metres / (is_us(to) ? foot : 1.0), 0.01);
+    const double value =
+        is_us(to) ? rounded(metres / foot, 0.01) : rounded(metres, 0.001);
     (void)snprintf(cell.text, sizeof cell.text, "%.12g %s", value,
                    lee_length_unit(to));
     return cell;

@@ -34,8 +34,8 @@ lee_cell lee_show_range_only(const lee_printer *to, const lee_ranged *ranged);
 lee_cell lee_show_bare_length(const lee_printer *to, double metres);
 const char *lee_length_unit(const lee_printer *to);
 
-/* Heights and depths as they were given, to a hundredth, no zeros at the end:
- * "10 m", "4.25 m", "13.12 ft". */
+/* Heights and depths as they were given, as fine as levels, no zeros at the
+ * end: "10 m", "4.25 m", "13.12 ft". */
 lee_cell lee_show_height(const lee_printer *to, double metres);
 
 /* Errors of computation: "0.5 mm", "0.0017 ft". */

@@ -98,6 +98,21 @@ static void without_a_duration_none_is_judged(void **state) {
     capture_free(&out);
 }
 
+static void without_water_no_duration_can_be_judged(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make_question(&made);
+    const double none = (double)NAN;
+    made.wind[0].wind.duration = 3600.0;
+    made.wind[0].water_count = 0;
+    made.wind[0].set_up = (lee_ranged){none, none, none};
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "set-up            dry at the lee shore\n");
+    assert_contains(text, "duration          1 h: cannot be judged");
+    capture_free(&out);
+}
+
 static void json_carries_the_question_and_the_formulas(void **state) {
     (void)state;
     hand_made made;
@@ -131,6 +146,7 @@ int main(void) {
         cmocka_unit_test(the_zuiderzee_formula_stands_beside_the_answer),
         cmocka_unit_test(a_duration_is_judged_by_the_first_period),
         cmocka_unit_test(without_a_duration_none_is_judged),
+        cmocka_unit_test(without_water_no_duration_can_be_judged),
         cmocka_unit_test(json_carries_the_question_and_the_formulas),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);

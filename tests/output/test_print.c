@@ -58,7 +58,7 @@ static void a_range_that_may_fall_dry_says_so(void **state) {
 static void heights_have_no_zeros_at_the_end(void **state) {
     (void)state;
     assert_string_equal(lee_show_height(&si, 10.0).text, "10 m");
-    assert_string_equal(lee_show_height(&si, 4.256).text, "4.26 m");
+    assert_string_equal(lee_show_height(&si, 4.2564).text, "4.256 m");
     assert_string_equal(lee_show_height(&us, 4.0).text, "13.12 ft");
 }
 
