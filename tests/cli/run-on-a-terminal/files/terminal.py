@@ -25,6 +25,9 @@ while True:
         program.send_signal(signal.SIGINT)
     seen += part
 text = re.sub(r" +\d+ %", " N %", seen.decode())
+last = None
 for line in re.sub(r" {2,}", " (blanks) ", text).splitlines():
-    print(line)
+    if line != last:  # a slow machine tells the same once more
+        print(line)
+    last = line
 sys.exit(program.wait())
