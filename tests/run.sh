@@ -89,10 +89,25 @@ tidy() {
 
 statement 'the sources are laid out by clang-format' formatted
 
+# The promise of the README, kept on a copy that holds sources alone.
+quickstart() {
+    rm -rf "$work/fresh"
+    mkdir -p "$work/fresh"
+    tar -cf - --exclude='./build*' --exclude=./out --exclude=./.git . |
+        tar -xf - -C "$work/fresh"
+    sh "$work/fresh/examples/quickstart.sh" &&
+        sh "$work/fresh/examples/quickstart.sh" &&
+        [ -s "$work/fresh/out/harbour.json" ] &&
+        [ "$(grep -vc '^#' "$work/fresh/out/harbour-levels.csv")" -gt 1000 ]
+}
+
 export CC=gcc
 statement 'gcc builds it without a warning' \
     build gcc -Db_sanitize=none -Db_lundef=true
 suites gcc
+statement 'gcc builds a release without a warning' \
+    build release --buildtype=release -Dtests=false
+statement 'the quickstart runs, and runs again' quickstart
 statement 'clang-tidy has nothing to say' tidy
 if [ -n "${LEE_ALL:-}" ]; then
     suites gcc --no-suite architecture --no-suite outside -t 20 \
