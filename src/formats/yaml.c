@@ -146,7 +146,7 @@ static lee_status take_scalar(builder *b, const yaml_event_t *event) {
     lee_yaml_node *node = NULL;
     const lee_status status =
         add_node(b, LEE_YAML_SCALAR, event->start_mark, &node);
-    if (node == NULL) {
+    if (status != LEE_OK) {
         return status;
     }
     node->is_plain = event->data.scalar.style == YAML_PLAIN_SCALAR_STYLE;
