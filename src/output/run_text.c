@@ -6,19 +6,9 @@
 
 #include "base/text.h"
 
-/* Winds that are given or built have no date unless the case gives one. */
-static bool is_dated(const lee_problem *problem) {
-    return problem->wind.kind == LEE_WIND_RECORD || problem->run.has_from;
-}
-
-static void print_span(const lee_printer *to, const lee_case *from,
-                       const lee_run_result *result) {
+static void print_span(const lee_printer *to, const lee_run_result *result) {
     if (result->n == 0) {
         return;
-    }
-    if (!is_dated(&from->problem)) {
-        (void)fprintf(to->stream, "no date is given: times count from %s\n",
-                      lee_show_time(result->time[0]).text);
     }
     (void)fprintf(to->stream, "%s to %s, %zu times\n",
                   lee_show_time(result->time[0]).text,
@@ -141,7 +131,7 @@ lee_status lee_print_run(FILE *stream, const lee_case *from,
                          lee_error *error) {
     const lee_printer to = {stream, units};
     lee_print_head(&to, from, result->still_water);
-    print_span(&to, from, result);
+    print_span(&to, result);
     print_strongest(&to, result);
     (void)fprintf(stream, "levels in %s above %s\n", lee_length_unit(&to),
                   lee_datum_of(from));

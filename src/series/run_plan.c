@@ -299,7 +299,7 @@ static lee_status make_plan(const lee_problem *problem, lee_run_plan *plan,
     if (status == LEE_OK && problem->wind.kind != LEE_WIND_RECORD &&
         !problem->run.has_from) {
         status = lee_notes_add(warnings, error,
-                               "no run.from is given: times count from "
+                               "no date is given: times count from "
                                "1970-01-01T00:00:00Z");
     }
     if (status == LEE_OK) {

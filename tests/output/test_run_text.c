@@ -24,20 +24,6 @@ static void the_span_and_the_strongest_wind_are_told(void **state) {
     capture_free(&out);
 }
 
-static void a_storm_without_a_date_says_so(void **state) {
-    (void)state;
-    hand_made made;
-    captured out;
-    make(&made);
-    made.from.problem.wind.kind = LEE_WIND_STORM;
-    assert_contains(printed(&out, &made, LEE_UNITS_SI),
-                    "no date is given: times count from 2031-01-14 00:00");
-    capture_free(&out);
-    made.from.problem.run.has_from = true;
-    assert_lacks(printed(&out, &made, LEE_UNITS_SI), "no date");
-    capture_free(&out);
-}
-
 static void each_station_has_highest_and_lowest_with_their_times(void **state) {
     (void)state;
     hand_made made;
@@ -183,7 +169,6 @@ static void a_parted_record_tells_its_pieces(void **state) {
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(the_span_and_the_strongest_wind_are_told),
-        cmocka_unit_test(a_storm_without_a_date_says_so),
         cmocka_unit_test(each_station_has_highest_and_lowest_with_their_times),
         cmocka_unit_test(a_station_with_a_bed_has_its_least_depth),
         cmocka_unit_test(a_threshold_tells_first_time_durations_and_return),

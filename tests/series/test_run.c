@@ -327,6 +327,28 @@ static void a_still_water_series_is_followed_without_wind(void **state) {
     lee_problem_free(&problem);
 }
 
+static bool says_there_is_no_date(bool has_from) {
+    lee_problem problem = even_lake(length, depth);
+    problem.run.has_from = has_from;
+    problem.run.from = 86400;
+    blow(&problem, 10.0, from_west, 3600.0);
+    lee_run_result result = run(&problem, &plain);
+    bool says_so = false;
+    for (size_t i = 0; i < result.warnings.n; i++) {
+        says_so = says_so || strstr(result.warnings.text[i], "no date is");
+    }
+    assert_int_equal(result.time[0], has_from ? 86400 : 0);
+    lee_run_result_free(&result);
+    lee_problem_free(&problem);
+    return says_so;
+}
+
+static void a_wind_without_a_date_says_so(void **state) {
+    (void)state;
+    assert_true(says_there_is_no_date(false));
+    assert_false(says_there_is_no_date(true));
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(a_sudden_wind_overshoots_to_twice_the_steady_rise),
@@ -345,6 +367,7 @@ int main(void) {
         cmocka_unit_test(a_run_stops_when_its_caller_says_so),
         cmocka_unit_test(a_held_end_without_wind_lifts_the_lake_to_its_level),
         cmocka_unit_test(a_still_water_series_is_followed_without_wind),
+        cmocka_unit_test(a_wind_without_a_date_says_so),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }
