@@ -46,13 +46,21 @@ static const double inverse[] = {
     1.0 / 12.0, 1.0 / 11.0, 1.0 / 10.0, 1.0 / 9.0,  1.0 / 8.0,  1.0 / 7.0,
     1.0 / 6.0,  1.0 / 5.0,  1.0 / 4.0,  1.0 / 3.0,  1.0 / 2.0};
 
+enum { TERMS = sizeof inverse / sizeof inverse[0] };
+
+/* phi2 is the sum of (-z)^k/(k + 2)!, by Horner: to rounding with all terms up
+ * to |z| = 1 (1/19!), with those from 1/10 on up to 1/8 ((1/8)^9/11!). */
+static size_t first_term(double z) {
+    return fabs(z) < 0.125 ? 8 : 0;
+}
+
 static phis phi(double z) {
     if (fabs(z) > 1.0) {
         const double one = -expm1(-z) / z;
         return (phis){one, (1.0 - one) / z};
     }
-    double two = 0.0; /* sum of (-z)^k/(k + 2)!, Horner; 1/19! is rounding */
-    for (size_t i = 0; i < sizeof inverse / sizeof inverse[0]; i++) {
+    double two = 0.0;
+    for (size_t i = first_term(z); i < TERMS; i++) {
         two = inverse[i] * (1.0 - z * two);
     }
     return (phis){1.0 - z * two, two};
@@ -285,16 +293,24 @@ static const double weight[8] = {
     0.11119051722668723527, 0.05061426814518812958,
 };
 
-/* Integral over a panel of t short enough (|m t| <= 1) for eight points. */
+/* Integral over a panel of t short enough (|m t| <= 1) for eight points. The
+ * points go through the series of phi side by side. */
 static double panel_volume(const lee_piece *piece, double distance,
                            double depth, double t) {
+    const double m = piece->slope;
+    const double c = piece->drive - m * depth;
+    double two[8] = {0.0};
+    for (size_t k = first_term(m * t); k < TERMS; k++) {
+        for (size_t i = 0; i < 8; i++) {
+            two[i] = inverse[k] * (1.0 - m * t * node[i] * two[i]);
+        }
+    }
     double sum = 0.0;
     for (size_t i = 0; i < 8; i++) {
-        const advance to =
-            advance_by(depth, piece->drive, piece->slope, node[i] * t);
-        const double width =
-            piece->width + piece->widening * (distance + to.distance);
-        sum += weight[i] * width * to.depth * to.depth;
+        const double s = node[i] * t;
+        const double h = depth + c * s * (1.0 - m * s * two[i]);
+        const double x = distance + s * (depth + c * s * two[i]);
+        sum += weight[i] * (piece->width + piece->widening * x) * h * h;
     }
     return sum * t;
 }
