@@ -280,8 +280,7 @@ double lee_piece_node(const lee_piece *piece) {
 }
 
 /* Gauss and Legendre's nodes and weights on 0 to 1, eight points (the values
- * of Abramowitz & Stegun 1964, table 25.4, from memory; the tests integrate
- * monomials with them). */
+ * of Abramowitz & Stegun 1964 [abramowitz1964], table 25.4, from memory). */
 static const double node[8] = {
     0.01985507175123188416, 0.10166676129318663020, 0.23723379504183550709,
     0.40828267875217509753, 0.59171732124782490247, 0.76276620495816449291,

@@ -201,7 +201,8 @@ static bool is_done(const bracket *b, double volume) {
 }
 
 /* Share of the bracket to try next, from three probes, where an inverse
- * parabola is safe; else the middle (Chandrupatla 1997, from memory). */
+ * parabola is safe; else the middle (Chandrupatla 1997 [chandrupatla1997], from
+ * memory). */
 static double next_share(const probe *a, const probe *b, const probe *c) {
     const double xi = (a->start - b->start) / (c->start - b->start);
     const double f = (a->miss - b->miss) / (c->miss - b->miss);

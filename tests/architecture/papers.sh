@@ -52,6 +52,16 @@ while read -r name; do
 done <"$work/relations" >>"$found"
 holds 'every drag relation is named by the entry of its paper' "$found"
 
+sed -n 's/^ *{"\([a-z0-9-]*\)", *"\([a-z0-9]*\)", *RISE_TILT.*/\1 \2/p' \
+    src/setup/formulas.c >"$work/formulas"
+: >"$found"
+[ -s "$work/formulas" ] || echo "no formula was found" >"$found"
+while read -r name key; do
+    grep "^- \*\*$key\*\*" docs/references.md | grep -qF "\`$name\`" ||
+        echo "$name: [$key]"
+done <"$work/formulas" >>"$found"
+holds 'every handbook formula is named by the entry of its source' "$found"
+
 # Relative links of every document, without their anchors.
 for file in *.md $(find docs -name '*.md'); do
     grep -oE '\]\([^)#][^)]*\)' "$file" | sed -E 's/^\]\(([^)#]*).*\)$/\1/' |

@@ -149,9 +149,9 @@ static void a_held_level_need_not_be_still_water(void **state) {
 }
 
 /* Textbook examples are linear: tau L/(rho g H) from the open end, as printed
- * and as worked: Stewart, section 17.3 (2.7 Pa, 100 km, 20 m, 1.3 m) and a
- * study note after Pugh (rho_air 1.2, C_d 2.5e-3, 30 m/s, 200 km, sea water
- * of 1025, 30 m and 1000 m: 1.79 and 0.054 m). */
+ * and as worked: Stewart [stewart2008], section 17.3 (2.7 Pa, 100 km, 20 m,
+ * 1.3 m), and a study note after Pugh [pugh1987] (rho_air 1.2, C_d 2.5e-3,
+ * 30 m/s, 200 km, sea water of 1025, 30 m and 1000 m: 1.79 and 0.054 m). */
 static void the_textbook_examples_are_met_as_printed(void **state) {
     (void)state;
     static const double rows[][6] = {

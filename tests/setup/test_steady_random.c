@@ -6,7 +6,8 @@
 
 enum { LAKES = 150, ROWS = 24 };
 
-/* Marsaglia's 64-bit xorshift (2003, from memory): the same lakes each run. */
+/* Marsaglia's 64-bit xorshift (2003 [marsaglia2003], from memory): the same
+ * lakes each run. */
 static double draw(uint64_t *state, double low, double high) {
     *state ^= *state << 13;
     *state ^= *state >> 7;
