@@ -195,6 +195,11 @@ typedef struct lee_transient_options {
     double theta;       /* 0.52 by default */
     double dry_depth;   /* m, 0.01 by default */
     bool has_advection; /* on by default */
+    double film_drag;   /* C_f added in water thinner than 0.1 m, growing
+                           evenly from 0 there to this where there is none; 0
+                           by default. Without it wind drives a film at tens
+                           of m s-1 under a linear law or none, which let go
+                           of thin water */
     bool is_linear;     /* levels move, depths stay those of the start; no
                             advection, no film rule, linear friction only:
                             for checks and screening */

@@ -8,6 +8,14 @@
  * "Levels in time"). */
 static const double least_eta = 1e-3;
 
+/* Times a step is cut in four before a run is given up: the engine halves it
+ * five times by itself. */
+enum { MOST_SHORTENED = 4 };
+
+/* C_f of thin water under a linear law or none, [1]: the usual quadratic
+ * coefficient of a bed (common practice, 1e-3 to 5e-3). */
+static const double film_drag = 2.5e-3;
+
 /* One span being run. */
 typedef struct leg {
     const lee_course *course;
@@ -24,6 +32,7 @@ typedef struct leg {
     double start_volume;
     double largest_loss;   /* |V - V0 - inflow|, m3 */
     double largest_set_up; /* integral of b |eta| / 2, m3 */
+    double fastest;        /* current, m s-1 */
     double area;
 } leg;
 
@@ -186,6 +195,10 @@ static void audit(leg *l) {
         const double still = fmax(l->channel->bed[i], l->pool);
         moved += 0.5 * l->channel->area[i] * fabs(level[i] - still);
     }
+    const double *speed = lee_transient_speed(l->engine);
+    for (size_t i = 0; i < l->channel->links; i++) {
+        l->fastest = fmax(l->fastest, fabs(speed[i]));
+    }
     l->largest_loss = fmax(l->largest_loss, fabs(loss));
     l->largest_set_up = fmax(l->largest_set_up, moved);
 }
@@ -216,6 +229,24 @@ static void write_levels(leg *l, int64_t time) {
     l->next_output++;
 }
 
+/* Steps to `end`; where the engine's own halvings do not suffice, in four
+ * shorter steps from where it stands. */
+static lee_status step_to(leg *l, double end, int shortened, lee_error *error) {
+    const double from = lee_transient_time(l->engine);
+    lee_status status = lee_transient_step(l->engine, end - from,
+                                           lee_drive_forcing, &l->drive, error);
+    if (status != LEE_ERR_CONVERGENCE || shortened == MOST_SHORTENED) {
+        return status;
+    }
+    const double reached = lee_transient_time(l->engine);
+    status = LEE_OK;
+    for (int k = 1; k <= 4 && status == LEE_OK; k++) {
+        const double next = k == 4 ? end : reached + 0.25 * k * (end - reached);
+        status = step_to(l, next, shortened + 1, error);
+    }
+    return status;
+}
+
 static lee_status go_to(leg *l, int64_t from, int64_t to, lee_error *error) {
     const double distance = (double)(to - from);
     const double wanted = ceil(distance / l->course->step - 1e-9);
@@ -224,8 +255,7 @@ static lee_status go_to(leg *l, int64_t from, int64_t to, lee_error *error) {
     for (int64_t k = 0; k < parts; k++) {
         const double now = lee_transient_time(l->engine);
         const double step = (end - now) / (double)(parts - k);
-        const lee_status status = lee_transient_step(
-            l->engine, step, lee_drive_forcing, &l->drive, error);
+        const lee_status status = step_to(l, now + step, 0, error);
         if (status != LEE_OK) {
             return status;
         }
@@ -276,6 +306,7 @@ static lee_transient_options engine_options(const lee_course *course) {
     options.water_density = course->setting->fluids.water_density;
     options.return_flow = 1.0; /* lambda is in the pull */
     options.bed = lee_member_bed(&problem->bed, course->member.bed_share);
+    options.film_drag = film_drag;
     options.dry_depth = problem->solver.dry_depth;
     options.has_advection = problem->solver.has_advection;
     options.start_held = problem->lake.start.is_held;
@@ -313,15 +344,17 @@ static lee_status prepare_leg(leg *l, const lee_profile *profile,
 
 static lee_status run_span(const lee_course *course, const lee_span *span,
                            const lee_profile *profile,
-                           const lee_channel *channel, double *defect,
-                           lee_error *error) {
+                           const lee_channel *channel,
+                           lee_course_report *report, lee_error *error) {
     leg l = {.course = course, .span = span, .channel = channel};
     lee_status status = prepare_leg(&l, profile, error);
     if (status == LEE_OK) {
         status = run_leg(&l, error);
     }
-    *defect = fmax(*defect,
-                   l.largest_loss / fmax(l.largest_set_up, least_eta * l.area));
+    report->volume_defect =
+        fmax(report->volume_defect,
+             l.largest_loss / fmax(l.largest_set_up, least_eta * l.area));
+    report->fastest = fmax(report->fastest, l.fastest);
     lee_transient_free(l.engine);
     lee_drive_free(&l.drive);
     free(l.breaks);
@@ -330,11 +363,11 @@ static lee_status run_span(const lee_course *course, const lee_span *span,
     return status;
 }
 
-lee_status lee_course_run(const lee_course *course, double *volume_defect,
+lee_status lee_course_run(const lee_course *course, lee_course_report *report,
                           lee_error *error) {
     lee_profile profile = {0};
     lee_channel channel = {0};
-    *volume_defect = 0.0;
+    *report = (lee_course_report){0};
     lee_status status =
         lee_member_profile(&course->problem->lake.profile,
                            course->member.bed_shift, &profile, error);
@@ -343,8 +376,8 @@ lee_status lee_course_run(const lee_course *course, double *volume_defect,
             lee_channel_from_profile(&profile, course->cells, &channel, error);
     }
     for (size_t i = 0; i < course->span_count && status == LEE_OK; i++) {
-        status = run_span(course, &course->span[i], &profile, &channel,
-                          volume_defect, error);
+        status = run_span(course, &course->span[i], &profile, &channel, report,
+                          error);
     }
     lee_watch_break(course->watch);
     lee_channel_free(&channel);

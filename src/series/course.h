@@ -42,9 +42,14 @@ typedef struct lee_course {
     lee_progress *progress;
 } lee_course;
 
-/* Runs a course. The volume defect is the largest of all spans.
- * Errors: those of the engine; LEE_ERR_INTERRUPTED. */
-lee_status lee_course_run(const lee_course *course, double *volume_defect,
+/* How a course went, over all its spans. */
+typedef struct lee_course_report {
+    double volume_defect;
+    double fastest; /* current at output times, m s-1 */
+} lee_course_report;
+
+/* Runs a course. Errors: those of the engine; LEE_ERR_INTERRUPTED. */
+lee_status lee_course_run(const lee_course *course, lee_course_report *report,
                           lee_error *error);
 
 /* Work of a course, cell-steps. */

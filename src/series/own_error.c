@@ -157,11 +157,11 @@ static lee_status watch_places(const lee_problem *problem, lee_watch *watch,
 
 static lee_status run_pass(const lee_problem *problem, lee_course *course,
                            lee_watch *watch, lee_error *error) {
-    double defect;
+    lee_course_report report;
     lee_status status = watch_places(problem, watch, error);
     if (status == LEE_OK) {
         course->watch = watch;
-        status = lee_course_run(course, &defect, error);
+        status = lee_course_run(course, &report, error);
     }
     return status;
 }

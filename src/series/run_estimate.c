@@ -17,6 +17,9 @@ static const double residual_periods = 2.0;
 static const double error_share = 0.01;
 static const double error_least = 2e-3; /* m */
 
+/* Currents above this are no lake's (design choice), m s-1. */
+static const double doubtful_current = 5.0;
+
 lee_run_options lee_run_options_default(void) {
     return (lee_run_options){
         .has_range = true, .keep_range = false, .has_own_error = true};
@@ -168,7 +171,15 @@ static lee_status run_main(workshop *shop, lee_watch *watch, double **level,
     watch->still_water = shop->plan.setting.still_water;
     watch->residual_from = shop->residual_from;
     watch->residual_to = shop->residual_to;
-    lee_status status = lee_course_run(&course, &result->volume_defect, error);
+    lee_course_report report;
+    lee_status status = lee_course_run(&course, &report, error);
+    result->volume_defect = report.volume_defect;
+    if (status == LEE_OK && report.fastest > doubtful_current) {
+        status = lee_notes_add(&result->warnings, error,
+                               "currents of up to %.1f m/s over shoals or "
+                               "sills: levels beside them are doubtful",
+                               report.fastest);
+    }
     for (size_t i = 0; i < watch->count && status == LEE_OK; i++) {
         status = lee_watch_tell(&watch->station[i], &result->station[i], error);
     }
@@ -184,11 +195,11 @@ static lee_status run_main(workshop *shop, lee_watch *watch, double **level,
 static lee_status run_bound(workshop *shop, const lee_member *member,
                             lee_watch *watch, double **level,
                             lee_error *error) {
-    double defect;
+    lee_course_report report;
     lee_course course = course_of(shop, member);
     course.watch = watch;
     course.level = shop->options->keep_range ? level : NULL;
-    const lee_status status = lee_course_run(&course, &defect, error);
+    const lee_status status = lee_course_run(&course, &report, error);
     if (status == LEE_OK) {
         note_seen(shop->result, watch);
         widen_range(shop->result, level);

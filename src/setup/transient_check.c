@@ -52,6 +52,10 @@ static lee_status check_options(const lee_transient_options *o,
     if (!is_positive(o->dry_depth)) {
         return refuse(error, "dry depth", o->dry_depth, positive);
     }
+    if (!(o->film_drag >= 0.0) || !isfinite(o->film_drag)) {
+        return refuse(error, "film drag", o->film_drag,
+                      "at least 0 and finite");
+    }
     return check_bed(o, error);
 }
 

@@ -34,6 +34,18 @@ static void measure_depths(lee_transient *engine, const double middle[]) {
     }
 }
 
+/* Depth below which the film drag sets in, m (design choice). */
+static const double film_depth = 0.1;
+
+/* C_f under a law that has none: the film drag, in thin water only. */
+static void fill_film(lee_transient *engine) {
+    const double most = engine->options.film_drag;
+    for (size_t f = 0; f < engine->links; f++) {
+        const double share = 1.0 - engine->depth[f] / film_depth;
+        engine->friction[f] = most * smaller(1.0, larger(0.0, share));
+    }
+}
+
 /* C_f of every link; constant laws were filled once. */
 static void fill_friction(lee_transient *engine) {
     const lee_transient_options *o = &engine->options;
@@ -51,6 +63,10 @@ static void fill_friction(lee_transient *engine) {
             const double depth = larger(engine->depth[f], o->dry_depth);
             friction[f] = lee_bed_coefficient(bed, depth, o->gravity);
         }
+    }
+    if (o->film_drag > 0.0 &&
+        (bed->kind == LEE_BED_NONE || bed->kind == LEE_BED_LINEAR)) {
+        fill_film(engine);
     }
 }
 

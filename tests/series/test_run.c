@@ -349,6 +349,43 @@ static void a_wind_without_a_date_says_so(void **state) {
     assert_false(says_there_is_no_date(true));
 }
 
+/* A pool behind a sill that stands 0.157 m over still water: a linear law lets
+ * go of thin water, and what the wind drives over the sill must not be thrown
+ * up the beach behind it. */
+static void a_linear_law_holds_thin_water_over_a_sill(void **state) {
+    (void)state;
+    static const double rows[][3] = {
+        {0.0,     0.968,  1400.0},
+        {1059.0,  -1.721, 1150.0},
+        {2047.0,  0.157,  1150.0},
+        {7511.0,  -2.033, 1220.0},
+        {8502.0,  -4.018, 2620.0},
+        {10917.0, -2.137, 1340.0},
+        {15615.0, -0.744, 1120.0},
+    };
+    enum { ROWS = sizeof rows / sizeof rows[0] };
+    lee_problem problem = even_lake(15615.0, 1.0);
+    lee_profile *profile = &problem.lake.profile;
+    lee_profile_free(profile);
+    assert_int_equal(lee_profile_init(profile, ROWS, NULL), LEE_OK);
+    for (size_t i = 0; i < ROWS; i++) {
+        profile->chainage[i] = rows[i][0];
+        profile->bed[i] = rows[i][1];
+        profile->width[i] = rows[i][2];
+        profile->bearing[i] = lake_east;
+    }
+    problem.bed = (lee_bed_law){LEE_BED_LINEAR, 5e-4};
+    problem.solver.cells = 200;
+    blow(&problem, 14.16, from_east, 48.0 * 3600.0);
+    lee_run_result result = run(&problem, &plain);
+    for (size_t i = 0; i < LAKE_STATIONS; i++) {
+        /* twice the steady rise of the windward pool alone, 0.45 m */
+        assert_false(result.station[i].max.value > 0.9);
+    }
+    lee_run_result_free(&result);
+    lee_problem_free(&problem);
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(a_sudden_wind_overshoots_to_twice_the_steady_rise),
@@ -368,6 +405,7 @@ int main(void) {
         cmocka_unit_test(a_held_end_without_wind_lifts_the_lake_to_its_level),
         cmocka_unit_test(a_still_water_series_is_followed_without_wind),
         cmocka_unit_test(a_wind_without_a_date_says_so),
+        cmocka_unit_test(a_linear_law_holds_thin_water_over_a_sill),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

@@ -328,6 +328,30 @@ static void wind_does_not_drive_a_film_up_a_beach_for_ever(void **state) {
     lee_channel_free(&channel);
 }
 
+/* 5 cm of water take half of the film drag: C_f u^2 = tau/rho in the end, far
+ * from both walls (a wave crosses 0.4 km meanwhile). */
+static void film_drag_holds_thin_water_where_the_law_lets_go(void **state) {
+    (void)state;
+    const double ground = 0.0;
+    const double film = 0.05;
+    const double wind = 0.5;
+    lee_channel channel = cut_reach(0.0, 20e3, 100, flat, &ground);
+    lee_transient_options options = frictionless();
+    options.film_drag = 2.5e-3;
+    lee_transient *engine = start_engine(&channel, &options, flat, &film);
+    weather blowing = {channel.links, steady_stress, &wind, 0.0};
+    for (int k = 0; k < 120; k++) {
+        assert_int_equal(lee_transient_step(engine, 5.0, blow, &blowing, NULL),
+                         LEE_OK);
+    }
+    /* 0.5 %: the approach to the end, tanh(600 s / 63 s), is done; the depth
+     * of the middle has moved by less */
+    assert_near_share(lee_transient_speed(engine)[49],
+                      sqrt(0.5 / 1000.0 / 1.25e-3), 5e-3);
+    lee_transient_free(engine);
+    lee_channel_free(&channel);
+}
+
 static void a_film_at_rest_does_not_bolt_in_a_gale(void **state) {
     (void)state;
     const double ground = 0.0;
@@ -439,6 +463,7 @@ int main(void) {
         cmocka_unit_test(a_dam_breaks_onto_dry_ground_as_ritter_says),
         cmocka_unit_test(a_dam_breaks_onto_water_as_stoker_says),
         cmocka_unit_test(wind_does_not_drive_a_film_up_a_beach_for_ever),
+        cmocka_unit_test(film_drag_holds_thin_water_where_the_law_lets_go),
         cmocka_unit_test(a_film_at_rest_does_not_bolt_in_a_gale),
         cmocka_unit_test(wind_does_not_lift_water_onto_a_quay),
         cmocka_unit_test(an_open_canal_ends_in_its_closed_form),
