@@ -71,6 +71,8 @@ const char *option_name(const option *each) {
 }
 
 char option_letter(const option *each) {
-    static const char none = 0;
-    return each->name[1] == ',' ? each->name[0] : none;
+    if (each->name[1] != ',') {
+        return '\0';
+    }
+    return each->name[0];
 }
