@@ -154,9 +154,11 @@ static void print_line(const lee_printer *to, const lee_wind_estimate *wind) {
         lee_show_bare_length(to, wind->tilt.value).text);
 }
 
-/* The first of the highest: levels that differ by rounding are one. */
+/* Levels that differ by less are one, m. */
+static const double rounding = 1e-6;
+
+/* The first of the highest set-ups. */
 static size_t highest(const lee_steady_result *result) {
-    static const double rounding = 1e-6; /* m */
     size_t best = 0;
     for (size_t i = 1; i < result->count; i++) {
         if (result->wind[i].set_up.value >
@@ -165,6 +167,80 @@ static size_t highest(const lee_steady_result *result) {
         }
     }
     return best;
+}
+
+/* The first of the lowest set-downs. */
+static size_t lowest(const lee_steady_result *result) {
+    size_t best = 0;
+    for (size_t i = 1; i < result->count; i++) {
+        if (result->wind[i].set_down.value <
+            result->wind[best].set_down.value - rounding) {
+            best = i;
+        }
+    }
+    return best;
+}
+
+/* The wind that raises most and, when it is another, the one that lowers
+ * most. */
+static void print_worst(const lee_printer *to, const lee_case *from,
+                        const lee_steady_result *result) {
+    const size_t up = highest(result);
+    const size_t down = lowest(result);
+    (void)fputs(up == down ? "\nHighest set-up and lowest set-down"
+                           : "\nHighest set-up",
+                to->stream);
+    print_block(to, from, &result->wind[up]);
+    if (down != up) {
+        (void)fputs("\nLowest set-down", to->stream);
+        print_block(to, from, &result->wind[down]);
+    }
+}
+
+/* The wind under which a station stands highest (sign 1) or lowest (-1); a
+ * station fallen dry stands lowest. */
+static const lee_wind_estimate *worst_at(const lee_steady_result *result,
+                                         size_t station, double sign) {
+    const lee_wind_estimate *worst = NULL;
+    double most = -INFINITY;
+    for (size_t i = 0; i < result->count; i++) {
+        const double level = result->wind[i].station[station].level.value;
+        const double height = isnan(level) ? -INFINITY : level;
+        if (worst == NULL || sign * height > most + rounding) {
+            worst = &result->wind[i];
+            most = sign * height;
+        }
+    }
+    return worst;
+}
+
+static void print_extreme(const lee_printer *to, const char *what,
+                          const lee_wind_estimate *wind, size_t station) {
+    const lee_ranged *level = &wind->station[station].level;
+    (void)fprintf(to->stream,
+                  "    %-8s %8s  %-20s  wind %s from %.0f degrees\n", what,
+                  lee_show_bare_length(to, level->value).text,
+                  lee_show_range_only(to, level).text,
+                  lee_show_speed(to, wind->wind.speed).text,
+                  lee_whole_degrees(wind->wind.from));
+}
+
+/* Highest and lowest level of each station over all winds. */
+static void print_station_extremes(const lee_printer *to, const lee_case *from,
+                                   const lee_steady_result *result) {
+    const lee_problem *problem = &from->problem;
+    if (problem->station_count == 0) {
+        return;
+    }
+    (void)fprintf(to->stream, "\nStations over all winds, %s above %s\n",
+                  lee_length_unit(to), lee_datum_of(from));
+    for (size_t i = 0; i < problem->station_count; i++) {
+        (void)fprintf(to->stream, "  %s, chainage %s\n",
+                      problem->station[i].name,
+                      lee_show_distance(to, problem->station[i].at).text);
+        print_extreme(to, "highest", worst_at(result, i, 1.0), i);
+        print_extreme(to, "lowest", worst_at(result, i, -1.0), i);
+    }
 }
 
 static void print_table(const lee_printer *to,
@@ -263,8 +339,8 @@ lee_status lee_print_steady(FILE *stream, const lee_case *from,
     lee_print_head(&to, from, result->still_water);
     if (result->count > BLOCKS_UP_TO) {
         print_table(&to, result);
-        (void)fputs("\nHighest set-up", stream);
-        print_block(&to, from, &result->wind[highest(result)]);
+        print_station_extremes(&to, from, result);
+        print_worst(&to, from, result);
         print_warnings(&to, result);
     } else {
         for (size_t i = 0; i < result->count; i++) {

@@ -163,6 +163,60 @@ static void a_scan_is_a_table_and_its_worst_wind(void **state) {
     capture_free(&out);
 }
 
+static void a_scan_names_the_lowest_set_down_too(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    lee_wind_estimate winds[4];
+    for (size_t i = 0; i < 4; i++) {
+        winds[i] = made.wind[0];
+        winds[i].wind.from = degrees(90.0 * (double)i);
+        winds[i].set_up.value = i == 2 ? 0.9 : 0.1;
+        winds[i].set_down.value = i == 3 ? -0.9 : -0.1;
+    }
+    made.steady.count = 4;
+    made.steady.wind = winds;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    const char *block = strstr(text, "\nLowest set-down\n");
+    assert_non_null(block);
+    assert_contains(block, "Wind 22.0 m/s from 270 degrees\n");
+    capture_free(&out);
+    winds[2].set_down.value = -1.0;
+    text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "\nHighest set-up and lowest set-down\n");
+    assert_lacks(text, "\nLowest set-down\n");
+    capture_free(&out);
+}
+
+static void a_scan_tells_the_extremes_of_each_station(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    lee_wind_estimate winds[4];
+    lee_station_level levels[4][8];
+    assert_true(made.from.problem.station_count <= 8);
+    for (size_t i = 0; i < 4; i++) {
+        winds[i] = made.wind[0];
+        winds[i].wind.from = degrees(90.0 * (double)i);
+        for (size_t k = 0; k < made.from.problem.station_count; k++) {
+            levels[i][k] = made.wind[0].station[k];
+        }
+        levels[i][0].level =
+            (lee_ranged){100.0 + (double)i, 99.0 + (double)i, 104.0};
+        winds[i].station = levels[i];
+    }
+    levels[1][0].level.value = NAN;
+    made.steady.count = 4;
+    made.steady.wind = winds;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "highest   103.000  (102.000 to 104.000)  wind 22.0 "
+                          "m/s from 270 degrees\n");
+    assert_contains(text, "lowest        dry");
+    capture_free(&out);
+}
+
 /* Three of four winds share a warning but for its number. */
 static void a_warning_of_many_winds_is_told_once(void **state) {
     (void)state;
@@ -230,6 +284,8 @@ int main(void) {
         cmocka_unit_test(warnings_stand_out_from_the_numbers),
         cmocka_unit_test(two_waters_are_told_apart),
         cmocka_unit_test(a_scan_is_a_table_and_its_worst_wind),
+        cmocka_unit_test(a_scan_names_the_lowest_set_down_too),
+        cmocka_unit_test(a_scan_tells_the_extremes_of_each_station),
         cmocka_unit_test(a_warning_of_many_winds_is_told_once),
         cmocka_unit_test(warnings_that_differ_in_words_are_told_apart),
     };
