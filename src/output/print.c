@@ -235,19 +235,31 @@ void lee_print_padded(const lee_printer *to, const char *text, size_t width) {
                   "");
 }
 
-/* Bytes of `text` that fit a line of `room` characters, ending at a blank; a
- * single word that is too long stays whole. */
+static bool is_digit(char c) {
+    return c >= '0' && c <= '9';
+}
+
+/* Bytes of `text` that fit a line of `room` characters, ending at a blank. A
+ * number stays with its unit unless that leaves no blank to end at; a single
+ * word that is too long stays whole. */
 static size_t line_length(const char *text, size_t room) {
-    size_t best = 0;
+    size_t best = 0; /* the last blank that follows no number */
+    size_t any = 0;  /* the last blank                        */
+    size_t word = 0; /* where the last word begins            */
     size_t width = 0;
     size_t i = 0;
-    for (; text[i] != '\0' && (width <= room || best == 0); i++) {
+    for (; text[i] != '\0' && (width <= room || any == 0); i++) {
         if (text[i] == ' ') {
-            best = i;
+            any = i;
+            best = is_digit(text[word]) ? best : i;
+            word = i + 1;
         }
         width += ((unsigned char)text[i] & 0xC0) != 0x80;
     }
-    return width <= room || best == 0 ? i : best;
+    if (width <= room || any == 0) {
+        return i;
+    }
+    return best > 0 ? best : any;
 }
 
 /* Prints from the column `indent` on, and continues there on further lines. */

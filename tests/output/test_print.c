@@ -164,6 +164,35 @@ static void long_text_is_broken_at_blanks_before_column_80(void **state) {
     capture_free(&out);
 }
 
+static void a_number_stays_with_its_unit(void **state) {
+    (void)state;
+    captured out;
+    capture_begin(&out);
+    const lee_printer to = {out.stream, LEE_UNITS_SI};
+    lee_print_wrapped(&to, 4, "- ",
+                      "one two three four five six seven eight nine ten "
+                      "eleven twelve thirteen 14 metres");
+    /* "14" would end the first line at column 80. */
+    assert_string_equal(capture_end(&out),
+                        "  - one two three four five six seven eight nine ten "
+                        "eleven twelve thirteen\n    14 metres\n");
+    capture_free(&out);
+}
+
+static void numbers_alone_are_broken_at_any_blank(void **state) {
+    (void)state;
+    captured out;
+    capture_begin(&out);
+    const lee_printer to = {out.stream, LEE_UNITS_SI};
+    lee_print_wrapped(&to, 0, "",
+                      "1234567890123456789012345678901234567890 "
+                      "1234567890123456789012345678901234567890");
+    assert_string_equal(capture_end(&out),
+                        "1234567890123456789012345678901234567890\n"
+                        "1234567890123456789012345678901234567890\n");
+    capture_free(&out);
+}
+
 static void a_word_longer_than_the_line_stays_whole(void **state) {
     (void)state;
     char word[121];
@@ -225,6 +254,8 @@ int main(void) {
         cmocka_unit_test(padding_fills_up_to_the_width),
         cmocka_unit_test(control_bytes_of_a_file_do_not_reach_the_terminal),
         cmocka_unit_test(long_text_is_broken_at_blanks_before_column_80),
+        cmocka_unit_test(a_number_stays_with_its_unit),
+        cmocka_unit_test(numbers_alone_are_broken_at_any_blank),
         cmocka_unit_test(a_word_longer_than_the_line_stays_whole),
         cmocka_unit_test(an_empty_list_of_notes_has_no_heading),
         cmocka_unit_test(text_that_cannot_be_written_is_a_file_error),
