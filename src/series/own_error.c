@@ -51,12 +51,15 @@ static bool is_near_event(const lee_span event[], size_t count, int64_t from,
 /* The stretch around a sample, inside its span. */
 static lee_span around(const lee_run_plan *plan, const lee_span *span,
                        int64_t peak) {
+    const bool may_start_steady =
+        isnan(plan->setting.start_level) || isnan(plan->setting.end_level);
     lee_span event = *span;
     const int64_t lead = (int64_t)lead_of(plan);
     const int64_t tail = (int64_t)tail_of(plan);
     event.from = peak - lead > span->from ? peak - lead : span->from;
     event.to = peak + tail < span->to ? peak + tail : span->to;
-    event.starts_steady = event.from > span->from || span->starts_steady;
+    event.starts_steady =
+        may_start_steady && (event.from > span->from || span->starts_steady);
     event.judged_from = event.from + (peak - event.from) / 2;
     return event;
 }

@@ -23,28 +23,33 @@ enum { FEWEST_CELLS = 100, MOST_CELLS = 400 };
 static const double shortest_calm = 6.0 * 3600.0;
 static const double calm_periods = 4.0;
 
-/* Longest first period of the waters at rest. */
+/* Longest first period of the waters at rest: each is asked for at its first
+ * wet row. */
 static lee_status find_period(const lee_problem *problem, lee_run_plan *plan,
                               lee_error *error) {
-    const lee_setting *setting = &plan->setting;
-    const lee_steady_input input = {
-        .profile = &problem->lake.profile,
-        .still_water = setting->still_water,
-        .return_flow = 1.0,
-        .water_density = setting->fluids.water_density,
-        .gravity = setting->gravity,
-        .dry_depth = problem->solver.dry_depth,
-        .start_level = setting->start_level,
-        .end_level = setting->end_level,
-    };
-    lee_steady still = {0};
-    const lee_status status = lee_steady_solve(&input, &still, error);
+    const lee_profile *profile = &problem->lake.profile;
+    const double still = plan->setting.still_water;
+    lee_status status = LEE_OK;
     plan->first_period = NAN;
-    for (size_t i = 0; i < still.count && status == LEE_OK; i++) {
-        plan->first_period =
-            fmax(plan->first_period, still.water[i].first_period);
+    for (size_t i = 0; i < profile->n && status == LEE_OK; i++) {
+        const bool goes_on = i > 0 && profile->bed[i - 1] < still;
+        if (goes_on || !(profile->bed[i] < still)) {
+            continue;
+        }
+        const lee_period_input input = {
+            .profile = profile,
+            .level = still,
+            .x = profile->chainage[i],
+            .gravity = plan->setting.gravity,
+            .start_held = problem->lake.start.is_held,
+            .end_held = problem->lake.end.is_held,
+        };
+        double period;
+        status = lee_first_period(&input, &period, error);
+        if (status == LEE_OK) {
+            plan->first_period = fmax(plan->first_period, period);
+        }
     }
-    lee_steady_free(&still);
     return status;
 }
 
@@ -142,6 +147,13 @@ static bool judge_all_if_short(lee_run_plan *plan) {
 
 static lee_status find_spans(const lee_problem *problem, lee_run_plan *plan,
                              lee_notes *warnings, lee_error *error) {
+    const lee_lake *lake = &problem->lake;
+    if (problem->run.start == LEE_START_STEADY && lake->start.is_held &&
+        lake->end.is_held) {
+        return lee_fail(error, LEE_ERR_DATA,
+                        "run.start: steady needs an end that is closed; both "
+                        "are held");
+    }
     plan->span = calloc(plan->wind.count, sizeof *plan->span);
     if (plan->span == NULL) {
         return lee_fail(error, LEE_ERR_MEMORY, "no room for %zu spans",
@@ -155,8 +167,8 @@ static lee_status find_spans(const lee_problem *problem, lee_run_plan *plan,
     }
     if (plan->span_count == 0) {
         return lee_fail(error, LEE_ERR_DATA,
-                        "the wind record has no unbroken stretch between "
-                        "run.from and run.to");
+                        "the wind record covers no stretch of time to run: "
+                        "two samples at least have to follow each other");
     }
     const bool is_parted = plan->span_count > 1;
     const bool is_flagged =

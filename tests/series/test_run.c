@@ -386,6 +386,43 @@ static void a_linear_law_holds_thin_water_over_a_sill(void **state) {
     lee_problem_free(&problem);
 }
 
+static lee_problem through_lake(void) {
+    lee_problem problem = even_lake(length, depth);
+    problem.bed = (lee_bed_law){LEE_BED_LINEAR, 1e-3};
+    problem.lake.start.is_held = true;
+    problem.lake.end.is_held = true;
+    assert_int_equal(lee_level_constant(0.0, &problem.lake.start.level, NULL),
+                     LEE_OK);
+    assert_int_equal(lee_level_constant(0.1, &problem.lake.end.level, NULL),
+                     LEE_OK);
+    blow(&problem, 0.0, from_west, 48.0 * 3600.0);
+    return problem;
+}
+
+/* In the end water flows evenly: the level is a straight line but for the
+ * depth's 0.1 m in 5 m (1 % of the fall in the middle). */
+static void two_held_ends_let_water_through(void **state) {
+    (void)state;
+    lee_problem problem = through_lake();
+    const lee_run_options judged = {.has_own_error = true};
+    lee_run_result result = run(&problem, &judged);
+    assert_near(result.station[1].level[result.n - 1], 0.05, 0.01 * 0.1);
+    lee_run_result_free(&result);
+    lee_problem_free(&problem);
+}
+
+static void a_steady_start_between_two_held_ends_is_refused(void **state) {
+    (void)state;
+    lee_problem problem = through_lake();
+    problem.run.start = LEE_START_STEADY;
+    lee_run_result result;
+    lee_error error = {0};
+    assert_int_equal(lee_estimate_run(&problem, &plain, &result, &error),
+                     LEE_ERR_DATA);
+    assert_non_null(strstr(error.message, "both are held"));
+    lee_problem_free(&problem);
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(a_sudden_wind_overshoots_to_twice_the_steady_rise),
@@ -406,6 +443,8 @@ int main(void) {
         cmocka_unit_test(a_still_water_series_is_followed_without_wind),
         cmocka_unit_test(a_wind_without_a_date_says_so),
         cmocka_unit_test(a_linear_law_holds_thin_water_over_a_sill),
+        cmocka_unit_test(two_held_ends_let_water_through),
+        cmocka_unit_test(a_steady_start_between_two_held_ends_is_refused),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }
