@@ -3,6 +3,7 @@
 #include <math.h>
 #include <stdbool.h>
 
+#include "output/formulas.h"
 #include "output/json_parts.h"
 #include "output/print.h"
 
@@ -18,32 +19,11 @@ static double depth_of(const lee_case *from, double still_water) {
     return still_water - from->problem.lake.profile.bed[0];
 }
 
-static double formula_level(const lee_formula *formula, const lee_case *from,
-                            const lee_steady_result *result) {
-    return formula->set_up(result->wind[0].speed, fetch_of(from),
-                           depth_of(from, result->still_water),
-                           result->method.gravity);
-}
-
 /* The one water of an even lake. Without any, nothing about it is known. */
 static const lee_water_estimate *water_of(const lee_wind_estimate *wind) {
     static const lee_water_estimate none = {.first_period = NAN,
                                             .develop_time = NAN};
     return wind->water_count > 0 ? &wind->water[0] : &none;
-}
-
-static const char *result_name(lee_formula_result what) {
-    switch (what) {
-    case LEE_RESULT_TILT:
-        return "tilt";
-    case LEE_RESULT_RISE:
-        return "rise";
-    }
-    return "";
-}
-
-static bool is_outside(const lee_formula *formula, double speed) {
-    return !(speed >= formula->speed_min && speed <= formula->speed_max);
 }
 
 /* Whether a wind of this length brings the steady level about. A wind that
@@ -111,40 +91,6 @@ static void print_answer(const lee_printer *to, const lee_wind_estimate *wind) {
     }
 }
 
-static void print_formulas(const lee_printer *to, const lee_case *from,
-                           const lee_steady_result *result) {
-    static const char layout[] = "  %-18s  %8s%1s  %-9s  %s\n";
-    bool has_outside = false;
-    bool has_memory = false;
-    const lee_formula *formula;
-    (void)fputc('\n', to->stream);
-    (void)fputs("Handbook formulas\n", to->stream);
-    (void)fprintf(to->stream, layout, "", lee_length_unit(to), "", "is called",
-                  "equals");
-    for (size_t i = 0; (formula = lee_formula_at(i)) != NULL; i++) {
-        const bool outside = is_outside(formula, result->wind[0].speed);
-        const double level = formula_level(formula, from, result);
-        (void)fprintf(to->stream, layout, formula->name,
-                      lee_show_bare_length(to, level).text, outside ? "*" : "",
-                      result_name(formula->says),
-                      result_name(formula->matches));
-        has_outside = has_outside || outside;
-        has_memory = has_memory || formula->is_from_memory;
-    }
-    lee_print_wrapped(to, 2, "",
-                      "rise: above still water at the lee shore; tilt: lee "
-                      "minus windward shore");
-    if (has_outside) {
-        lee_print_wrapped(to, 4, "* ",
-                          "outside the wind speeds it was made for");
-    }
-    if (has_memory) {
-        lee_print_wrapped(to, 2, "",
-                          "sources, and which were not re-read: --json and "
-                          "docs/references.md");
-    }
-}
-
 lee_status lee_print_estimate(FILE *stream, const lee_case *from,
                               const lee_steady_result *result,
                               lee_unit_system units, lee_error *error) {
@@ -153,30 +99,12 @@ lee_status lee_print_estimate(FILE *stream, const lee_case *from,
     print_answer(&to, &result->wind[0]);
     lee_print_notes(&to, "Warnings", &result->wind[0].warnings);
     lee_print_notes(&to, "Warnings on the case", &result->warnings);
-    print_formulas(&to, from, result);
+    const lee_formula_question asked =
+        lee_ask_formulas(from, result, &result->wind[0]);
+    lee_print_formulas(&to, &asked);
     lee_print_method(&to, &result->method);
     lee_print_caution(&to);
     return lee_print_end(&to, error);
-}
-
-static void put_formulas(lee_json *json, const lee_case *from,
-                         const lee_steady_result *result) {
-    const lee_formula *formula;
-    lee_json_open_list(json, "formulas");
-    for (size_t i = 0; (formula = lee_formula_at(i)) != NULL; i++) {
-        lee_json_open_object(json, NULL);
-        lee_json_put_text(json, "name", formula->name);
-        lee_json_put_text(json, "source", formula->source);
-        lee_json_put_flag(json, "is_from_memory", formula->is_from_memory);
-        lee_json_put_number(json, "result_m",
-                            formula_level(formula, from, result));
-        lee_json_put_text(json, "is_called", result_name(formula->says));
-        lee_json_put_text(json, "equals", result_name(formula->matches));
-        lee_json_put_flag(json, "is_extrapolated",
-                          is_outside(formula, result->wind[0].speed));
-        lee_json_close(json);
-    }
-    lee_json_close(json);
 }
 
 static void put_question(lee_json *json, const lee_case *from,
@@ -202,7 +130,6 @@ lee_status lee_json_estimate(FILE *stream, const lee_case *from,
         lee_json_put_text(&json, "duration",
                           duration_verdict(wind, water_of(wind)));
     }
-    put_formulas(&json, from, result);
     lee_json_put_notes(&json, "warnings", &result->warnings);
     lee_json_put_method(&json, &result->method);
     lee_json_put_caution(&json);

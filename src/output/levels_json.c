@@ -1,6 +1,7 @@
 /* levels_json.c - steady levels and level series as JSON summaries. */
 #include <math.h>
 
+#include "output/formulas.h"
 #include "output/json_parts.h"
 
 #include "leewater/output.h"
@@ -55,8 +56,10 @@ static void put_wind_levels(lee_json *json, const lee_wind_estimate *wind) {
 }
 
 static void put_wind(lee_json *json, const lee_case *from,
+                     const lee_steady_result *result,
                      const lee_wind_estimate *wind) {
     const lee_problem *problem = &from->problem;
+    const lee_formula_question asked = lee_ask_formulas(from, result, wind);
     lee_json_open_object(json, NULL);
     lee_json_put_number(json, "speed_m_s", wind->wind.speed);
     lee_json_put_degrees(json, "from_degree", wind->wind.from);
@@ -80,6 +83,7 @@ static void put_wind(lee_json *json, const lee_case *from,
         put_station_level(json, &problem->station[i], &wind->station[i]);
     }
     lee_json_close(json);
+    lee_json_put_formulas(json, &asked);
     lee_json_put_notes(json, "warnings", &wind->warnings);
     lee_json_close(json);
 }
@@ -88,7 +92,7 @@ void lee_json_put_winds(lee_json *json, const lee_case *from,
                         const lee_steady_result *result) {
     lee_json_open_list(json, "winds");
     for (size_t i = 0; i < result->count; i++) {
-        put_wind(json, from, &result->wind[i]);
+        put_wind(json, from, result, &result->wind[i]);
     }
     lee_json_close(json);
 }

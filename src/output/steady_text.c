@@ -1,5 +1,6 @@
 /* steady_text.c - equilibrium levels as text: a block for a few winds, a
  * table for many. */
+#include "output/formulas.h"
 #include "output/print.h"
 
 #include <math.h>
@@ -332,6 +333,19 @@ static void print_warnings(const lee_printer *to,
     }
 }
 
+/* The formulas for the wind that raises most. */
+static void print_beside(const lee_printer *to, const lee_case *from,
+                         const lee_steady_result *result) {
+    const lee_wind_estimate *wind = &result->wind[highest(result)];
+    if (result->count > 1) {
+        (void)fprintf(to->stream, "\nBeside it, for %s from %.0f degrees:",
+                      lee_show_speed(to, wind->wind.speed).text,
+                      lee_whole_degrees(wind->wind.from));
+    }
+    const lee_formula_question asked = lee_ask_formulas(from, result, wind);
+    lee_print_formulas(to, &asked);
+}
+
 lee_status lee_print_steady(FILE *stream, const lee_case *from,
                             const lee_steady_result *result,
                             lee_unit_system units, lee_error *error) {
@@ -348,6 +362,7 @@ lee_status lee_print_steady(FILE *stream, const lee_case *from,
         }
     }
     lee_print_notes(&to, "Warnings on the case", &result->warnings);
+    print_beside(&to, from, result);
     lee_print_method(&to, &result->method);
     lee_print_caution(&to);
     return lee_print_end(&to, error);

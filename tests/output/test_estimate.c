@@ -18,6 +18,7 @@ static void make_question(hand_made *made) {
     made->from.problem.exposure.height = 10.0;
     made->wind[0].wind = (lee_given_wind){25.0, degrees(270.0), (double)NAN};
     made->wind[0].speed = 25.0;
+    made->wind[0].along = 1.0;
     made->steady.still_water = 0.0;
     made->steady.station_count = 0;
 }
@@ -113,6 +114,36 @@ static void without_water_no_duration_can_be_judged(void **state) {
     capture_free(&out);
 }
 
+/* Hand-made: lambda tau/(rho g) over 10 km and 10 m, closed forms of the
+ * library itself; that they stand in their rows is what is said here. */
+static void closed_forms_stand_below_the_formulas(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make_question(&made);
+    made.wind[0].return_flow = 1.0;
+    made.wind[0].stress = 1.0;
+    made.steady.method.water_density_value = 1000.0;
+    made.steady.method.gravity = 9.81;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    /* a = 1/9810 m: open, 10 m (sqrt(1 + 2 a 1e4/100) - 1) = 0.101421 m */
+    assert_contains(text, "  open-even-depth        0.101   rise       rise\n");
+    assert_contains(text, "  closed-even-depth      0.051   rise       rise\n");
+    capture_free(&out);
+}
+
+static void a_wind_aslant_has_its_cosine_once(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make_question(&made);
+    made.wind[0].along = -0.5;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    /* half of 0.128956 m */
+    assert_contains(text, "  zuiderzee              0.064   rise       tilt\n");
+    capture_free(&out);
+}
+
 static void json_carries_the_question_and_the_formulas(void **state) {
     (void)state;
     hand_made made;
@@ -127,8 +158,9 @@ static void json_carries_the_question_and_the_formulas(void **state) {
     assert_near(json_number_value(json_object_get(root, "fetch_m")), 1e4, 0.0);
     assert_near(json_number_value(json_object_get(root, "depth_m")), 10.0, 0.0);
     assert_int_equal(json_array_size(json_object_get(root, "winds")), 1);
+    const json_t *wind = json_array_get(json_object_get(root, "winds"), 0);
     const json_t *formula =
-        json_array_get(json_object_get(root, "formulas"), 0);
+        json_array_get(json_object_get(wind, "formulas"), 0);
     assert_string_equal(json_string_value(json_object_get(formula, "name")),
                         "zuiderzee");
     /* Half a unit of the last digit of 0.128956. */
@@ -147,6 +179,8 @@ int main(void) {
         cmocka_unit_test(a_duration_is_judged_by_the_first_period),
         cmocka_unit_test(without_a_duration_none_is_judged),
         cmocka_unit_test(without_water_no_duration_can_be_judged),
+        cmocka_unit_test(closed_forms_stand_below_the_formulas),
+        cmocka_unit_test(a_wind_aslant_has_its_cosine_once),
         cmocka_unit_test(json_carries_the_question_and_the_formulas),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
