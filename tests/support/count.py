@@ -1,11 +1,12 @@
 """Counts the statements of test logs: count.py BUILD...
 
-Reads meson-logs/testlog.json of each build directory and prints
-"passed failed skipped". A statement is a line of the Test Anything Protocol;
+Reads meson-logs/testlog*.json of each build directory (meson adds the name
+of a wrapper) and prints "passed failed skipped". A statement is a line of the Test Anything Protocol;
 a program that ended without all of its verdicts adds one that failed. What
 failed or was skipped is named on standard error.
 """
 import json
+import pathlib
 import re
 import sys
 
@@ -46,8 +47,8 @@ def count(test, totals):
 def main():
     totals = {"passed": 0, "failed": 0, "skipped": 0}
     for build in sys.argv[1:]:
-        with open(f"{build}/meson-logs/testlog.json", encoding="utf-8") as log:
-            for line in log:
+        for log in pathlib.Path(build, "meson-logs").glob("testlog*.json"):
+            for line in log.read_text(encoding="utf-8").splitlines():
                 count(json.loads(line), totals)
     print(totals["passed"], totals["failed"], totals["skipped"])
 
