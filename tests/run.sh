@@ -114,8 +114,9 @@ if [ -n "$all" ]; then
     # UDUNITS keeps its database to the end: "possibly lost" is no error.
     # Scripts are left out: the shell's own leaks are no concern of ours.
     suites gcc --no-suite architecture --no-suite outside --no-suite cli \
-        --no-suite demo -t 20 --wrapper 'valgrind -q --error-exitcode=9 --leak-check=full
-        --show-leak-kinds=definite --errors-for-leak-kinds=definite'
+        --no-suite demo -t 20 --wrapper 'valgrind -q --error-exitcode=9
+        --leak-check=full --show-leak-kinds=definite
+        --errors-for-leak-kinds=definite'
     statement 'the benchmarks run' meson test -C "$work/gcc" --benchmark -v
     cat "$work/statement.log"
 fi
