@@ -228,6 +228,38 @@ void lee_wind_piece_span(const lee_wind_record *record,
                          const lee_wind_piece *piece, int64_t step,
                          int64_t *from, int64_t *to);
 
+/* What a record knows of air, water and ice. NaN: not known. */
+typedef struct lee_wind_conditions {
+    double pressure;          /* station pressure, Pa      */
+    double air_temperature;   /* K                         */
+    double water_temperature; /* K                         */
+    double humidity;          /* relative humidity, 0 to 1 */
+    double ice;               /* ice cover, 0 to 1         */
+} lee_wind_conditions;
+
+/* The optional columns of a record at time t. Each column goes by its own
+ * samples, whatever else they lack: instants are linear between samples that
+ * have the value, means are held over their step and bridged between steps,
+ * like the wind. Two samples with the value are bridged when the gap rule
+ * would bridge a wind between them (`split` says nothing here); where it would
+ * not, before the first and after the last the value is NaN: nothing is filled
+ * in.
+ *
+ *   rule  how far apart samples with a value may be
+ *   step  the record's usual step, s (lee_wind_check)
+ *   t     s since 1970; NaN gives nothing known
+ *   hint  in/out: index to start the search from; start with 0 */
+lee_wind_conditions lee_wind_conditions_at(const lee_wind_record *record,
+                                           const lee_gap_rule *rule,
+                                           int64_t step, double t,
+                                           size_t *hint);
+
+/* The same for a sample: its own value where it has one, else what
+ * lee_wind_conditions_at says for the middle of its step. */
+lee_wind_conditions lee_wind_conditions_of(const lee_wind_record *record,
+                                           const lee_gap_rule *rule,
+                                           int64_t step, size_t index);
+
 /* A storm built for design: speed rises from `before` to the peak along half
  * a cosine, holds, falls to `after` along half a cosine. The direction turns
  * by `turn` at an even rate over rise, hold and fall and is `from` in the

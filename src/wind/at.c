@@ -10,64 +10,13 @@
  * below what a direction is known to. */
 static const double opposite_tolerance = 1e-9; /* radians */
 
-/* How long before its time the step of a sample begins. */
-static int64_t step_lead(lee_stamp stamp, int64_t step) {
-    switch (stamp) {
-    case LEE_STAMP_MIDDLE:
-        return step / 2;
-    case LEE_STAMP_END:
-        return step;
-    case LEE_STAMP_INSTANT:
-    case LEE_STAMP_START:
-        break;
-    }
-    return 0;
-}
-
-static int64_t step_tail(lee_stamp stamp, int64_t step) {
-    return stamp == LEE_STAMP_INSTANT ? 0 : step - step_lead(stamp, step);
-}
-
 void lee_wind_piece_span(const lee_wind_record *record,
                          const lee_wind_piece *piece, int64_t step,
                          int64_t *from, int64_t *to) {
-    *from = record->time[piece->first] - step_lead(record->stamp, step);
-    *to = record->time[piece->end - 1] + step_tail(record->stamp, step);
-}
-
-static bool holds(const lee_wind_record *record, const lee_wind_piece *piece,
-                  size_t index, double t) {
-    return index >= piece->first && index < piece->end &&
-           (double)record->time[index] <= t &&
-           (index + 1 == piece->end || t < (double)record->time[index + 1]);
-}
-
-static size_t bisect(const lee_wind_record *record, const lee_wind_piece *piece,
-                     double t) {
-    size_t low = piece->first;
-    size_t high = piece->end;
-    while (high - low > 1) {
-        const size_t middle = low + (high - low) / 2;
-        if ((double)record->time[middle] <= t) {
-            low = middle;
-        } else {
-            high = middle;
-        }
-    }
-    return low;
-}
-
-/* Last sample of the piece at or before t; its first sample when t is before
- * them all (a mean that began before its stamp). */
-static size_t locate(const lee_wind_record *record, const lee_wind_piece *piece,
-                     double t, size_t hint) {
-    if (holds(record, piece, hint, t)) {
-        return hint;
-    }
-    if (holds(record, piece, hint + 1, t)) {
-        return hint + 1;
-    }
-    return bisect(record, piece, t);
+    *from =
+        record->time[piece->first] - lee_wind_step_lead(record->stamp, step);
+    *to =
+        record->time[piece->end - 1] + lee_wind_step_tail(record->stamp, step);
 }
 
 static void take(const lee_wind_record *record, size_t index, double at[2]) {
@@ -108,24 +57,16 @@ static void blend(const double a[2], const double b[2], double share,
  * the second from the begin of its own, and the time between is bridged. */
 static void between(const lee_wind_record *record, int64_t step, double t,
                     const size_t pair[2], double at[2]) {
-    const double left = (double)record->time[pair[0]];
-    const double right = (double)record->time[pair[1]];
-    const double lead = (double)step_lead(record->stamp, step);
-    double end = left + (double)step_tail(record->stamp, step);
-    double begin = right - lead;
-    if (end > begin) { /* steps overlap: they part it by their stamp */
-        end = right - (right - left) * lead / (double)step;
-        begin = end;
-    }
-    if (t >= begin) {
+    const lee_wind_bridge bridge = lee_wind_bridge_of(record, step, pair);
+    if (t >= bridge.begin) {
         take(record, pair[1], at);
         return;
     }
     take(record, pair[0], at);
-    if (t > end) {
+    if (t > bridge.end) {
         const double a[2] = {at[0], at[1]};
         const double b[2] = {record->east[pair[1]], record->north[pair[1]]};
-        blend(a, b, (t - end) / (begin - end), at);
+        blend(a, b, (t - bridge.end) / (bridge.begin - bridge.end), at);
     }
 }
 
@@ -139,7 +80,7 @@ void lee_wind_at(const lee_wind_record *record, const lee_wind_piece *piece,
     if (!(t >= (double)from && t <= (double)to)) {
         return;
     }
-    size_t left = locate(record, piece, t, *hint);
+    size_t left = lee_wind_locate(record, piece, t, *hint);
     *hint = left;
     while (left > piece->first && !lee_wind_is_there(record, left)) {
         left--;

@@ -1,4 +1,4 @@
-/* spacing.c - the usual step of a record. */
+/* spacing.c - the usual step of a record, and the times its samples hold. */
 #include "wind/spacing.h"
 
 #include <stdlib.h>
@@ -69,4 +69,71 @@ lee_status lee_wind_usual_step(const lee_wind_record *record, int64_t *step,
     *step = most_frequent(n, distance);
     free(distance);
     return LEE_OK;
+}
+
+int64_t lee_wind_step_lead(lee_stamp stamp, int64_t step) {
+    switch (stamp) {
+    case LEE_STAMP_MIDDLE:
+        return step / 2;
+    case LEE_STAMP_END:
+        return step;
+    case LEE_STAMP_INSTANT:
+    case LEE_STAMP_START:
+        break;
+    }
+    return 0;
+}
+
+int64_t lee_wind_step_tail(lee_stamp stamp, int64_t step) {
+    return stamp == LEE_STAMP_INSTANT ? 0
+                                      : step - lee_wind_step_lead(stamp, step);
+}
+
+lee_wind_bridge lee_wind_bridge_of(const lee_wind_record *record, int64_t step,
+                                   const size_t pair[2]) {
+    const double left = (double)record->time[pair[0]];
+    const double right = (double)record->time[pair[1]];
+    const double lead = (double)lee_wind_step_lead(record->stamp, step);
+    lee_wind_bridge bridge = {
+        .end = left + (double)lee_wind_step_tail(record->stamp, step),
+        .begin = right - lead,
+    };
+    if (bridge.end > bridge.begin) { /* steps overlap: parted by their stamp */
+        bridge.end = right - (right - left) * lead / (double)step;
+        bridge.begin = bridge.end;
+    }
+    return bridge;
+}
+
+static bool holds(const lee_wind_record *record, const lee_wind_piece *piece,
+                  size_t index, double t) {
+    return index >= piece->first && index < piece->end &&
+           (double)record->time[index] <= t &&
+           (index + 1 == piece->end || t < (double)record->time[index + 1]);
+}
+
+static size_t bisect(const lee_wind_record *record, const lee_wind_piece *piece,
+                     double t) {
+    size_t low = piece->first;
+    size_t high = piece->end;
+    while (high - low > 1) {
+        const size_t middle = low + (high - low) / 2;
+        if ((double)record->time[middle] <= t) {
+            low = middle;
+        } else {
+            high = middle;
+        }
+    }
+    return low;
+}
+
+size_t lee_wind_locate(const lee_wind_record *record,
+                       const lee_wind_piece *piece, double t, size_t hint) {
+    if (holds(record, piece, hint, t)) {
+        return hint;
+    }
+    if (holds(record, piece, hint + 1, t)) {
+        return hint + 1;
+    }
+    return bisect(record, piece, t);
 }

@@ -1,4 +1,5 @@
-/* spacing.h - how far apart the samples of a record stand. */
+/* spacing.h - how far apart the samples of a record stand, how long they
+ * hold. */
 #ifndef LEEWATER_WIND_SPACING_H
 #define LEEWATER_WIND_SPACING_H
 
@@ -36,5 +37,24 @@ static inline bool lee_wind_is_long_gap(const lee_gap_rule *rule, int64_t step,
  * only one sample. Errors: LEE_ERR_MEMORY. */
 lee_status lee_wind_usual_step(const lee_wind_record *record, int64_t *step,
                                lee_error *error);
+
+/* How long before its time the step of a sample begins, and how long after it
+ * it ends, s. */
+int64_t lee_wind_step_lead(lee_stamp stamp, int64_t step);
+int64_t lee_wind_step_tail(lee_stamp stamp, int64_t step);
+
+/* Between two samples: the first is held up to `end`, the second from `begin`
+ * on, s since 1970; the time between them is bridged. */
+typedef struct lee_wind_bridge {
+    double end;
+    double begin;
+} lee_wind_bridge;
+lee_wind_bridge lee_wind_bridge_of(const lee_wind_record *record, int64_t step,
+                                   const size_t pair[2]);
+
+/* Last sample of the piece at or before t; its first sample when t is before
+ * them all (a mean that began before its stamp). Looks at `hint` first. */
+size_t lee_wind_locate(const lee_wind_record *record,
+                       const lee_wind_piece *piece, double t, size_t hint);
 
 #endif
