@@ -12,7 +12,9 @@ typedef struct lee_case {
     char *institution;
     char *creator;
     char *license;
-    lee_notes notes; /* remarks on what was read, for every output */
+    lee_notes notes;  /* remarks on what was read, for every output */
+    lee_notes inputs; /* paths of the files it was read from, its own first:
+                         no output replaces one of them */
     lee_problem problem;
 } lee_case;
 

@@ -59,7 +59,8 @@ lee_status lee_json_drag(FILE *stream, const lee_drag_table *table,
 /* Writes results as CSV with a commented head (method, datum, caution), whole
  * or not at all: to a temporary name beside the target, synced, renamed. "-"
  * is stdout. An existing file needs `force`; anything but a regular or a new
- * file is refused. `with_wind` adds the wind to a series; low and high stand
+ * file is refused, and so is each file that the case was read from, under
+ * whatever name. `with_wind` adds the wind to a series; low and high stand
  * beside a level when they were kept; `spin-up` is 1 at the times that still
  * feel the start at rest, else 0.
  * Errors: LEE_ERR_ARGUMENT for an ending other than .csv; LEE_ERR_FILE. */
@@ -71,6 +72,7 @@ lee_status lee_write_run(const char *path, bool force, bool with_wind,
 
 /* Whether the two functions above could write to `path`, without leaving
  * anything: ask before a long run. Errors: theirs. */
-lee_status lee_check_target(const char *path, bool force, lee_error *error);
+lee_status lee_check_target(const char *path, bool force, const lee_case *from,
+                            lee_error *error);
 
 #endif

@@ -27,6 +27,12 @@ const lee_yaml_node *lee_case_node(const lee_case_draft *draft,
     return node;
 }
 
+static void note_input(lee_case_reader *reader, const char *path) {
+    if (lee_notes_add(&reader->inputs, NULL, "%s", path) != LEE_OK) {
+        reader->has_no_room = true;
+    }
+}
+
 char *lee_case_beside(lee_case_reader *reader, const char *file) {
     const char *slash = strrchr(reader->path, '/');
     const size_t folder = slash == NULL || file[0] == '/'
@@ -40,6 +46,7 @@ char *lee_case_beside(lee_case_reader *reader, const char *file) {
     }
     memcpy(path, reader->path, folder);
     memcpy(path + folder, file, length);
+    note_input(reader, path);
     return path;
 }
 
@@ -107,7 +114,9 @@ static lee_status read_tree(const char *path, const lee_yaml_node *root,
     draft.root = root;
     draft.result.path = lee_text_copy(path);
     reader.has_no_room = draft.result.path == NULL;
+    note_input(&reader, path);
     read_draft(&reader, &draft);
+    draft.result.inputs = reader.inputs;
     free(draft.wind.missing);
     const lee_status status =
         reader.has_no_room
@@ -139,6 +148,7 @@ void lee_case_free(lee_case *problem_case) {
     free(problem_case->creator);
     free(problem_case->license);
     lee_notes_free(&problem_case->notes);
+    lee_notes_free(&problem_case->inputs);
     lee_problem_free(&problem_case->problem);
     *problem_case = (lee_case){0};
 }

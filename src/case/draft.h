@@ -103,8 +103,8 @@ void lee_case_check_wind(lee_case_reader *reader, lee_case_draft *draft);
 const lee_yaml_node *lee_case_node(const lee_case_draft *draft,
                                    const char *path);
 
-/* Path of a file that the case names: relative to the case file. NULL without
- * memory (told to the reader). free() it. */
+/* Path of a file that the case names: relative to the case file. Kept among
+ * the case's inputs. NULL without memory (told to the reader). free() it. */
 char *lee_case_beside(lee_case_reader *reader, const char *file);
 
 /* Passes a failure of reading a named file on to the problems. */

@@ -18,6 +18,7 @@ typedef struct lee_case_reader {
     const lee_yaml_node *mapping; /* the mapping that `where` names */
     bool has_no_room;
     lee_case_problems problems;
+    lee_notes inputs; /* paths of the files that were named, owned */
 } lee_case_reader;
 
 typedef struct lee_key lee_key;

@@ -83,7 +83,8 @@ lee_status cmd_run(int argc, char *argv[], lee_error *error) {
     const option options[] = {
         text_option("o,output", "FILE", "also write the levels: a .csv, or -",
                     &choice.output.path),
-        flag_option("force", "replace FILE", &choice.output.force),
+        flag_option("force", "replace FILE, unless the case reads it",
+                    &choice.output.force),
         flag_option("range", "in FILE: low and high beside each level",
                     &choice.with_range),
         flag_option("with-wind", "in FILE: the wind at 10 m over water",
@@ -107,6 +108,9 @@ lee_status cmd_run(int argc, char *argv[], lee_error *error) {
     status = check_run_choice(&asked, &choice, error);
     if (status == LEE_OK) {
         status = lee_case_read(asked.case_path, &from, error);
+    }
+    if (status == LEE_OK) {
+        status = check_target(&choice.output, &from, error);
     }
     if (status == LEE_OK) {
         status = run_case(&asked, &choice, &from, error);

@@ -80,6 +80,9 @@ static lee_status estimate(const request *asked, const other_wind *other,
     lee_case from = {0};
     lee_steady_result result = {0};
     lee_status status = lee_case_read(asked->case_path, &from, error);
+    if (status == LEE_OK) {
+        status = check_target(output, &from, error);
+    }
     if (status == LEE_OK && is_any(other)) {
         status = replace_wind(other, &from.problem.wind, error);
     }
@@ -109,7 +112,8 @@ lee_status cmd_steady(int argc, char *argv[], lee_error *error) {
                      &other.directions),
         text_option("o,output", "FILE", "also write a table: a .csv, or -",
                     &output.path),
-        flag_option("force", "replace FILE", &output.force),
+        flag_option("force", "replace FILE, unless the case reads it",
+                    &output.force),
         end_of_options(),
     };
     request asked = {.command = "steady",

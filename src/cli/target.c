@@ -18,7 +18,12 @@ lee_status check_choice(const request *asked, const output_choice *output,
         return lee_fail(error, LEE_ERR_ARGUMENT,
                         "-o - and --json both want standard output");
     }
+    return LEE_OK;
+}
+
+lee_status check_target(const output_choice *output, const lee_case *from,
+                        lee_error *error) {
     return output->path == NULL
                ? LEE_OK
-               : lee_check_target(output->path, output->force, error);
+               : lee_check_target(output->path, output->force, from, error);
 }

@@ -5,6 +5,7 @@
 #include <stdbool.h>
 
 #include "cli/options.h"
+#include "leewater/case.h"
 #include "leewater/status.h"
 
 /* Where results go beside standard output. */
@@ -15,9 +16,13 @@ typedef struct output_choice {
 
 bool is_stdout(const char *path);
 
-/* Combinations that make no sense, and files that cannot be written: better
- * before a long run than after. Errors: LEE_ERR_ARGUMENT, LEE_ERR_FILE. */
+/* Combinations that make no sense. Errors: LEE_ERR_ARGUMENT. */
 lee_status check_choice(const request *asked, const output_choice *output,
+                        lee_error *error);
+
+/* A file that cannot be written, or that the case itself is read from: better
+ * told before a long run than after. Errors: LEE_ERR_ARGUMENT, LEE_ERR_FILE. */
+lee_status check_target(const output_choice *output, const lee_case *from,
                         lee_error *error);
 
 #endif

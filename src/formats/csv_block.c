@@ -2,11 +2,11 @@
 #include "formats/csv_block.h"
 
 #include <errno.h>
-#include <fcntl.h>
 #include <stdlib.h>
 #include <string.h>
-#include <sys/stat.h>
 #include <unistd.h>
+
+#include "formats/regular_file.h"
 
 enum {
     FIRST_ROOM = 1 << 18,    /* 256 KiB: a block fits in the fast memory */
@@ -35,12 +35,6 @@ static lee_status refuse_byte(const lee_csv_block *block, const char *byte,
     const lee_csv_place next = {block->line, block->next};
     return lee_csv_block_refuse(
         block, lee_csv_pass_lines(next, block->next, byte), byte, what, error);
-}
-
-static lee_status cannot(const lee_csv_block *block, const char *what,
-                         lee_error *error) {
-    return lee_fail(error, LEE_ERR_FILE, "%s: cannot be %s: %s", block->path,
-                    what, strerror(errno));
 }
 
 /* Moves what is not yet read to the front and makes room behind it. */
@@ -88,7 +82,8 @@ lee_status lee_csv_block_fill(lee_csv_block *block, lee_error *error) {
                    (size_t)(block->bytes + block->room - block->end));
     } while (got < 0 && errno == EINTR);
     if (got < 0) {
-        return cannot(block, "read", error);
+        return lee_fail(error, LEE_ERR_FILE, "%s: cannot be read: %s",
+                        block->path, strerror(errno));
     }
     const char *nul = memchr(block->end, '\0', (size_t)got);
     if (nul != NULL) {
@@ -102,30 +97,6 @@ lee_status lee_csv_block_fill(lee_csv_block *block, lee_error *error) {
         end_last_line(block);
     }
     memset(block->end, 0, LEE_CSV_SPARE - 1);
-    return LEE_OK;
-}
-
-/* Opens without waiting: a pipe that nobody writes to is refused as well. */
-static lee_status open_regular(lee_csv_block *block, lee_error *error) {
-    block->file =
-        open(block->path, O_RDONLY | O_NONBLOCK | O_CLOEXEC | O_NOCTTY);
-    struct stat about;
-    if (block->file < 0 || fstat(block->file, &about) != 0) {
-        return cannot(block, "opened", error);
-    }
-    if (S_ISDIR(about.st_mode)) {
-        return lee_fail(error, LEE_ERR_FILE,
-                        "%s: is a directory; expected a file", block->path);
-    }
-    if (!S_ISREG(about.st_mode)) {
-        return lee_fail(error, LEE_ERR_FILE,
-                        "%s: is a pipe or a device; expected a file",
-                        block->path);
-    }
-    /* A small file needs a small block: it and a byte, so that the end of the
-     * file is met without growing. */
-    block->wanted =
-        about.st_size < FIRST_ROOM ? (size_t)about.st_size + 1 : FIRST_ROOM;
     return LEE_OK;
 }
 
@@ -161,8 +132,12 @@ static lee_status check_beginning(lee_csv_block *block, lee_error *error) {
 
 lee_status lee_csv_block_open(const char *path, lee_csv_block *block,
                               lee_error *error) {
+    size_t size = 0;
     *block = (lee_csv_block){.path = path, .line = 1};
-    lee_status status = open_regular(block, error);
+    lee_status status = lee_regular_open(path, &block->file, &size, error);
+    /* A small file needs a small block: it and a byte, so that the end of the
+     * file is met without growing. */
+    block->wanted = size < FIRST_ROOM ? size + 1 : FIRST_ROOM;
     if (status == LEE_OK) {
         status = lee_csv_block_fill(block, error);
     }

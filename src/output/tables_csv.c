@@ -6,6 +6,7 @@
 
 #include "base/constants.h"
 #include "formats/atomic_file.h"
+#include "formats/regular_file.h"
 
 #include "leewater/calendar.h"
 #include "leewater/output.h"
@@ -105,12 +106,42 @@ static lee_status check_path(const char *path, lee_error *error) {
                     "%s: results are written as .csv; name the file so", path);
 }
 
-lee_status lee_check_target(const char *path, bool force, lee_error *error) {
-    lee_atomic_file file = {0};
+/* Refuses to put results in the place of what they were made from. */
+static lee_status spare_inputs(const char *path, const lee_case *from,
+                               lee_error *error) {
+    for (size_t i = 0; i < from->inputs.n; i++) {
+        const char *input = from->inputs.text[i];
+        if (strcmp(path, input) == 0 && lee_is_same_file(path, input)) {
+            return lee_fail(error, LEE_ERR_FILE,
+                            "%s: is read by this case; name another file for "
+                            "the results",
+                            path);
+        }
+        if (lee_is_same_file(path, input)) {
+            return lee_fail(error, LEE_ERR_FILE,
+                            "%s: is the same file as %s, which this case "
+                            "reads; name another file for the results",
+                            path, input);
+        }
+    }
+    return LEE_OK;
+}
+
+static lee_status open_target(const char *path, bool force,
+                              const lee_case *from, lee_atomic_file *file,
+                              lee_error *error) {
     lee_status status = check_path(path, error);
     if (status == LEE_OK) {
-        status = lee_atomic_open(path, force, &file, error);
+        status = spare_inputs(path, from, error);
     }
+    return status == LEE_OK ? lee_atomic_open(path, force, file, error)
+                            : status;
+}
+
+lee_status lee_check_target(const char *path, bool force, const lee_case *from,
+                            lee_error *error) {
+    lee_atomic_file file = {0};
+    const lee_status status = open_target(path, force, from, &file, error);
     lee_atomic_discard(&file);
     return status;
 }
@@ -181,12 +212,8 @@ static void write_steady_row(FILE *out, const lee_wind_estimate *wind,
 
 lee_status lee_write_steady(const char *path, bool force, const lee_case *from,
                             const lee_steady_result *result, lee_error *error) {
-    lee_status status = check_path(path, error);
-    if (status != LEE_OK) {
-        return status;
-    }
     lee_atomic_file file = {0};
-    status = lee_atomic_open(path, force, &file, error);
+    lee_status status = open_target(path, force, from, &file, error);
     if (status != LEE_OK) {
         return status;
     }
@@ -244,12 +271,8 @@ static void write_run_row(FILE *out, const lee_run_result *result, size_t row,
 lee_status lee_write_run(const char *path, bool force, bool with_wind,
                          const lee_case *from, const lee_run_result *result,
                          lee_error *error) {
-    lee_status status = check_path(path, error);
-    if (status != LEE_OK) {
-        return status;
-    }
     lee_atomic_file file = {0};
-    status = lee_atomic_open(path, force, &file, error);
+    lee_status status = open_target(path, force, from, &file, error);
     if (status != LEE_OK) {
         return status;
     }

@@ -70,6 +70,15 @@ static void a_case_keeps_who_it_is_from(void **state) {
     lee_case_free(&c);
 }
 
+static void a_case_keeps_the_paths_of_all_that_it_was_read_from(void **state) {
+    lee_case c = read_whole(state);
+    assert_int_equal(c.inputs.n, 3);
+    assert_string_equal(c.inputs.text[0], c.path);
+    assert_string_equal(strrchr(c.inputs.text[1], '/'), "/axis.csv");
+    assert_string_equal(strrchr(c.inputs.text[2], '/'), "/wind.csv");
+    lee_case_free(&c);
+}
+
 static void a_case_keeps_its_lake(void **state) {
     lee_case c = read_whole(state);
     const lee_lake *lake = &c.problem.lake;
@@ -351,6 +360,7 @@ static void a_window_that_ends_before_it_begins_is_refused(void **state) {
 int main(void) {
     const struct CMUnitTest tests[] = {
         CASE_TEST(a_case_keeps_who_it_is_from),
+        CASE_TEST(a_case_keeps_the_paths_of_all_that_it_was_read_from),
         CASE_TEST(a_case_keeps_its_lake),
         CASE_TEST(a_case_keeps_its_axis),
         CASE_TEST(a_case_keeps_its_ends),

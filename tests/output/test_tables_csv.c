@@ -211,17 +211,64 @@ static void another_ending_than_csv_is_refused(void **state) {
 
 static void asking_for_a_target_leaves_nothing(void **state) {
     (void)state;
+    hand_made made;
     place here;
+    make(&made);
     place_open(&here);
-    assert_int_equal(lee_check_target(here.file, false, NULL), LEE_OK);
+    assert_int_equal(lee_check_target(here.file, false, &made.from, NULL),
+                     LEE_OK);
     assert_int_equal(access(here.file, F_OK), -1);
     place_close(&here);
 }
 
 static void a_target_in_no_folder_is_refused_ahead(void **state) {
     (void)state;
-    assert_int_equal(lee_check_target("/nowhere/at/all.csv", false, NULL),
-                     LEE_ERR_FILE);
+    hand_made made;
+    make(&made);
+    assert_int_equal(
+        lee_check_target("/nowhere/at/all.csv", false, &made.from, NULL),
+        LEE_ERR_FILE);
+}
+
+static void a_file_the_case_reads_is_no_target_even_forced(void **state) {
+    (void)state;
+    hand_made made;
+    place here;
+    lee_error error = {0};
+    make(&made);
+    place_open(&here);
+    write_run(&here, &made, false);
+    char *inputs[] = {here.file};
+    made.from.inputs = (lee_notes){.n = 1, .text = inputs};
+    assert_int_equal(
+        lee_write_run(here.file, true, false, &made.from, &made.run, &error),
+        LEE_ERR_FILE);
+    assert_non_null(strstr(error.message, ": is read by this case; name "));
+    assert_int_equal(
+        lee_write_steady(here.file, true, &made.from, &made.steady, NULL),
+        LEE_ERR_FILE);
+    place_close(&here);
+}
+
+static void another_name_of_a_file_the_case_reads_is_no_target(void **state) {
+    (void)state;
+    hand_made made;
+    place here;
+    char other[112];
+    lee_error error = {0};
+    make(&made);
+    place_open(&here);
+    write_run(&here, &made, false);
+    (void)snprintf(other, sizeof other, "%s/other.csv", here.folder);
+    assert_int_equal(link(here.file, other), 0);
+    char *inputs[] = {here.file};
+    made.from.inputs = (lee_notes){.n = 1, .text = inputs};
+    const lee_status status = lee_check_target(other, true, &made.from, &error);
+    (void)unlink(other);
+    assert_int_equal(status, LEE_ERR_FILE);
+    assert_non_null(strstr(error.message, "/other.csv: is the same file as "));
+    assert_non_null(strstr(error.message, here.file));
+    place_close(&here);
 }
 
 int main(void) {
@@ -237,6 +284,8 @@ int main(void) {
         cmocka_unit_test(another_ending_than_csv_is_refused),
         cmocka_unit_test(asking_for_a_target_leaves_nothing),
         cmocka_unit_test(a_target_in_no_folder_is_refused_ahead),
+        cmocka_unit_test(a_file_the_case_reads_is_no_target_even_forced),
+        cmocka_unit_test(another_name_of_a_file_the_case_reads_is_no_target),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }
