@@ -48,6 +48,10 @@ const lee_drag_relation *lee_drag_find(const char *name);
 /* The index-th relation in order of publication, or NULL past the last. */
 const lee_drag_relation *lee_drag_at(size_t index);
 
+/* Name of the relation nearest to a misspelt one, or NULL when none is near. Do
+ * not free. */
+const char *lee_drag_nearest(const char *name);
+
 /* The drag an estimate uses: a relation, a constant or a table, and a cap.
  * Owns its table. {0} is no drag; lee_drag_default gives the usual one. */
 typedef struct lee_drag {

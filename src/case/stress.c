@@ -12,16 +12,8 @@
 
 static void refuse_relation(lee_case_reader *reader, const lee_yaml_node *node,
                             const lee_key *key) {
-    enum { MOST = 64 };
-    const char *names[MOST];
-    size_t count = 0;
-    const lee_drag_relation *relation = lee_drag_at(0);
-    while (relation != NULL && count < MOST) {
-        names[count++] = relation->name;
-        relation = lee_drag_at(count);
-    }
     char shown[LEE_SHOWN];
-    const char *nearest = lee_text_nearest(node->text, count, names);
+    const char *nearest = lee_drag_nearest(node->text);
     lee_text_show(strlen(node->text), node->text, shown);
     if (nearest != NULL) {
         lee_key_problem(reader, node, key->name,

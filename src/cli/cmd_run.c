@@ -18,27 +18,33 @@ typedef struct run_choice {
     bool with_wind;
 } run_choice;
 
-static lee_status deliver(const request *asked, const run_choice *choice,
-                          const lee_case *from, const lee_run_result *result,
-                          lee_error *error) {
-    const output_choice *output = &choice->output;
-    lee_status status = LEE_OK;
-    if (output->path != NULL) {
-        status = lee_write_run(output->path, output->force, choice->with_wind,
-                               from, result, error);
-    }
-    if (status != LEE_OK || is_stdout(output->path)) {
-        return status;
-    }
-    return asked->is_json
-               ? lee_json_run(stdout, from, result, error)
-               : lee_print_run(stdout, from, result, asked->units, error);
+/* A run and what it is written with. */
+typedef struct outcome {
+    const lee_case *from;
+    bool with_wind;
+    lee_run_result result;
+} outcome;
+
+static lee_status write_levels(const void *what, const output_choice *output,
+                               lee_error *error) {
+    const outcome *out = what;
+    return lee_write_run(output->path, output->force, out->with_wind, out->from,
+                         &out->result, error);
+}
+
+static lee_status show_levels(const void *what, const request *asked,
+                              lee_error *error) {
+    const outcome *out = what;
+    return asked->is_json ? lee_json_run(stdout, out->from, &out->result, error)
+                          : lee_print_run(stdout, out->from, &out->result,
+                                          asked->units, error);
 }
 
 static lee_status run_case(const request *asked, const run_choice *choice,
                            const lee_case *from, lee_error *error) {
     progress at;
-    lee_run_result result = {0};
+    outcome out = {.from = from, .with_wind = choice->with_wind};
+    const delivery results = {&out, write_levels, show_levels};
     lee_run_options options = lee_run_options_default();
     options.has_range = !choice->has_no_range;
     options.keep_range = choice->with_range;
@@ -47,7 +53,7 @@ static lee_status run_case(const request *asked, const run_choice *choice,
     options.user = &at;
     progress_begin(&at, asked->command, asked->is_quiet);
     lee_status status =
-        lee_estimate_run(&from->problem, &options, &result, error);
+        lee_estimate_run(&from->problem, &options, &out.result, error);
     progress_clear(&at);
     if (status == LEE_ERR_INTERRUPTED) {
         return lee_fail(error, status, "interrupted; nothing was written");
@@ -56,9 +62,9 @@ static lee_status run_case(const request *asked, const run_choice *choice,
         progress_end(&at); /* a pipe may block: let Ctrl-C end it */
     }
     if (status == LEE_OK) {
-        status = deliver(asked, choice, from, &result, error);
+        status = deliver(&results, asked, &choice->output, error);
     }
-    lee_run_result_free(&result);
+    lee_run_result_free(&out.result);
     progress_end(&at);
     return status;
 }

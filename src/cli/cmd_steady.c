@@ -59,41 +59,47 @@ static lee_status replace_wind(const other_wind *other, lee_wind_source *wind,
     return LEE_OK;
 }
 
-static lee_status deliver(const request *asked, const output_choice *output,
-                          const lee_case *from, const lee_steady_result *result,
-                          lee_error *error) {
-    lee_status status = LEE_OK;
-    if (output->path != NULL) {
-        status =
-            lee_write_steady(output->path, output->force, from, result, error);
-    }
-    if (status != LEE_OK || is_stdout(output->path)) {
-        return status;
-    }
+/* A case and what was found for it. */
+typedef struct outcome {
+    lee_case from;
+    lee_steady_result result;
+} outcome;
+
+static lee_status write_levels(const void *what, const output_choice *output,
+                               lee_error *error) {
+    const outcome *out = what;
+    return lee_write_steady(output->path, output->force, &out->from,
+                            &out->result, error);
+}
+
+static lee_status show_levels(const void *what, const request *asked,
+                              lee_error *error) {
+    const outcome *out = what;
     return asked->is_json
-               ? lee_json_steady(stdout, from, result, error)
-               : lee_print_steady(stdout, from, result, asked->units, error);
+               ? lee_json_steady(stdout, &out->from, &out->result, error)
+               : lee_print_steady(stdout, &out->from, &out->result,
+                                  asked->units, error);
 }
 
 static lee_status estimate(const request *asked, const other_wind *other,
                            const output_choice *output, lee_error *error) {
-    lee_case from = {0};
-    lee_steady_result result = {0};
-    lee_status status = lee_case_read(asked->case_path, &from, error);
+    outcome out = {0};
+    const delivery results = {&out, write_levels, show_levels};
+    lee_status status = lee_case_read(asked->case_path, &out.from, error);
     if (status == LEE_OK) {
-        status = check_target(output, &from, error);
+        status = check_target(output, &out.from, error);
     }
     if (status == LEE_OK && is_any(other)) {
-        status = replace_wind(other, &from.problem.wind, error);
+        status = replace_wind(other, &out.from.problem.wind, error);
     }
     if (status == LEE_OK) {
-        status = lee_estimate_steady(&from.problem, &result, error);
+        status = lee_estimate_steady(&out.from.problem, &out.result, error);
     }
     if (status == LEE_OK) {
-        status = deliver(asked, output, &from, &result, error);
+        status = deliver(&results, asked, output, error);
     }
-    lee_steady_result_free(&result);
-    lee_case_free(&from);
+    lee_steady_result_free(&out.result);
+    lee_case_free(&out.from);
     return status;
 }
 

@@ -6,22 +6,14 @@
 
 #include "base/text.h"
 
-enum { MOST_NAMES = 64 };
-
 lee_status find_relation(const char *name, const lee_drag_relation **relation,
                          lee_error *error) {
-    const char *names[MOST_NAMES];
     char shown[LEE_SHOWN];
-    size_t n = 0;
-    const lee_drag_relation *each;
     *relation = lee_drag_find(name);
     if (*relation != NULL) {
         return LEE_OK;
     }
-    while (n < MOST_NAMES && (each = lee_drag_at(n)) != NULL) {
-        names[n++] = each->name;
-    }
-    const char *nearest = lee_text_nearest(name, n, names);
+    const char *nearest = lee_drag_nearest(name);
     (void)lee_text_show(strlen(name), name, shown);
     if (nearest == NULL) {
         return lee_fail(error, LEE_ERR_ARGUMENT,

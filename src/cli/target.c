@@ -27,3 +27,14 @@ lee_status check_target(const output_choice *output, const lee_case *from,
                ? LEE_OK
                : lee_check_target(output->path, output->force, from, error);
 }
+
+lee_status deliver(const delivery *results, const request *asked,
+                   const output_choice *output, lee_error *error) {
+    lee_status status = LEE_OK;
+    if (output->path != NULL) {
+        status = results->write(results->what, output, error);
+    }
+    return status == LEE_OK && !is_stdout(output->path)
+               ? results->show(results->what, asked, error)
+               : status;
+}

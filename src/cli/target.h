@@ -25,4 +25,18 @@ lee_status check_choice(const request *asked, const output_choice *output,
 lee_status check_target(const output_choice *output, const lee_case *from,
                         lee_error *error);
 
+/* Results on their way out: how they are written to a file and shown. */
+typedef struct delivery {
+    const void *what; /* passed to both */
+    lee_status (*write)(const void *what, const output_choice *output,
+                        lee_error *error);
+    lee_status (*show)(const void *what, const request *asked,
+                       lee_error *error);
+} delivery;
+
+/* Writes results to the file that was chosen, if any, and shows them unless
+ * standard output is the file. */
+lee_status deliver(const delivery *results, const request *asked,
+                   const output_choice *output, lee_error *error);
+
 #endif

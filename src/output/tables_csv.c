@@ -146,6 +146,28 @@ lee_status lee_check_target(const char *path, bool force, const lee_case *from,
     return status;
 }
 
+/* What a table is written from. */
+typedef struct table {
+    const lee_case *from;
+    const lee_steady_result *steady; /* or */
+    const lee_run_result *run;
+    bool with_wind;
+} table;
+
+/* Writes a table to a file: whole or not at all. */
+static lee_status write_file(const char *path, bool force,
+                             void (*write)(FILE *out, const table *what),
+                             const table *what, lee_error *error) {
+    lee_atomic_file file = {0};
+    lee_status status = open_target(path, force, what->from, &file, error);
+    if (status == LEE_OK) {
+        write(file.stream, what);
+        status = lee_atomic_commit(&file, error);
+    }
+    lee_atomic_discard(&file);
+    return status;
+}
+
 /* ---- steady ---- */
 
 #define AT(member) offsetof(lee_wind_estimate, member)
@@ -210,23 +232,21 @@ static void write_steady_row(FILE *out, const lee_wind_estimate *wind,
     (void)fputc('\n', out);
 }
 
+static void write_steady(FILE *out, const table *what) {
+    const lee_steady_result *result = what->steady;
+    write_head(out, what->from, &result->method, result->still_water);
+    write_foot_of_head(out, &result->warnings);
+    write_steady_header(out, what->from);
+    for (size_t i = 0; i < result->count; i++) {
+        write_steady_row(out, &result->wind[i],
+                         what->from->problem.station_count);
+    }
+}
+
 lee_status lee_write_steady(const char *path, bool force, const lee_case *from,
                             const lee_steady_result *result, lee_error *error) {
-    lee_atomic_file file = {0};
-    lee_status status = open_target(path, force, from, &file, error);
-    if (status != LEE_OK) {
-        return status;
-    }
-    write_head(file.stream, from, &result->method, result->still_water);
-    write_foot_of_head(file.stream, &result->warnings);
-    write_steady_header(file.stream, from);
-    for (size_t i = 0; i < result->count; i++) {
-        write_steady_row(file.stream, &result->wind[i],
-                         from->problem.station_count);
-    }
-    status = lee_atomic_commit(&file, error);
-    lee_atomic_discard(&file);
-    return status;
+    const table what = {.from = from, .steady = result};
+    return write_file(path, force, write_steady, &what, error);
 }
 
 /* ---- run ---- */
@@ -268,21 +288,19 @@ static void write_run_row(FILE *out, const lee_run_result *result, size_t row,
     (void)fputc('\n', out);
 }
 
+static void write_run(FILE *out, const table *what) {
+    const lee_run_result *result = what->run;
+    write_head(out, what->from, &result->method, result->still_water);
+    write_foot_of_head(out, &result->warnings);
+    write_run_header(out, what->from, result, what->with_wind);
+    for (size_t i = 0; i < result->n; i++) {
+        write_run_row(out, result, i, what->with_wind);
+    }
+}
+
 lee_status lee_write_run(const char *path, bool force, bool with_wind,
                          const lee_case *from, const lee_run_result *result,
                          lee_error *error) {
-    lee_atomic_file file = {0};
-    lee_status status = open_target(path, force, from, &file, error);
-    if (status != LEE_OK) {
-        return status;
-    }
-    write_head(file.stream, from, &result->method, result->still_water);
-    write_foot_of_head(file.stream, &result->warnings);
-    write_run_header(file.stream, from, result, with_wind);
-    for (size_t i = 0; i < result->n; i++) {
-        write_run_row(file.stream, result, i, with_wind);
-    }
-    status = lee_atomic_commit(&file, error);
-    lee_atomic_discard(&file);
-    return status;
+    const table what = {.from = from, .run = result, .with_wind = with_wind};
+    return write_file(path, force, write_run, &what, error);
 }

@@ -304,31 +304,6 @@ static double fastest_of(const lee_wind_record *record) {
     return fastest;
 }
 
-static lee_status warn_of_drag(workshop *shop, double fastest,
-                               lee_error *error) {
-    const lee_problem *problem = shop->problem;
-    lee_drag_input in = shop->plan.setting.fluids;
-    in.speed = lee_setting_speed(problem, &shop->plan.setting, fastest);
-    bool extrapolated = false;
-    bool capped = false;
-    (void)lee_drag_coefficient(&problem->drag, &in, &extrapolated, &capped);
-    lee_notes *warnings = &shop->result->warnings;
-    lee_status status = LEE_OK;
-    if (extrapolated) {
-        status = lee_notes_add(warnings, error,
-                               "drag extrapolated: the strongest wind, %.1f "
-                               "m/s, is outside the speeds that %s covers",
-                               in.speed, lee_setting_drag_name(problem));
-    }
-    if (status == LEE_OK && capped) {
-        status = lee_notes_add(warnings, error,
-                               "drag coefficient held at its cap %.4f in the "
-                               "strongest wind",
-                               problem->drag.cap);
-    }
-    return status;
-}
-
 static lee_status tell_method(workshop *shop, lee_error *error) {
     const lee_problem *problem = shop->problem;
     lee_run_result *result = shop->result;
@@ -345,7 +320,10 @@ static lee_status tell_method(workshop *shop, lee_error *error) {
         }
         lee_wind_check_free(&check);
     }
-    return status == LEE_OK ? warn_of_drag(shop, fastest, error) : status;
+    return status == LEE_OK
+               ? lee_setting_warn_of_drag(problem, &shop->plan.setting, fastest,
+                                          &result->warnings, error)
+               : status;
 }
 
 /* Moves what the plan and the result share. */

@@ -107,11 +107,6 @@ double lee_setting_speed(const lee_problem *problem, const lee_setting *setting,
                               &setting->fluids, measured);
 }
 
-const char *lee_setting_drag_name(const lee_problem *problem) {
-    return problem->drag.relation != NULL ? problem->drag.relation->name
-                                          : "the drag table";
-}
-
 /* Widens `range` by what one drag makes of the wind and its uncertainty. */
 static void widen(const lee_problem *problem, const lee_setting *setting,
                   const lee_drag *drag, double measured,

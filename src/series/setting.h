@@ -38,8 +38,11 @@ lee_status lee_setting_init(const lee_problem *problem, double time,
 double lee_setting_speed(const lee_problem *problem, const lee_setting *setting,
                          double measured);
 
-/* Short name of the drag used, for warnings. */
-const char *lee_setting_drag_name(const lee_problem *problem);
+/* Warns where the drag is extrapolated or capped at the strongest measured
+ * speed of a wind. Errors: LEE_ERR_MEMORY. */
+lee_status lee_setting_warn_of_drag(const lee_problem *problem,
+                                    const lee_setting *setting, double measured,
+                                    lee_notes *warnings, lee_error *error);
 
 /* Least and greatest pull lambda tau, Pa, of a measured wind speed on the
  * water: over one relation a paper, the stated wind uncertainty, lambda and

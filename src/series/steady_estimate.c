@@ -18,7 +18,6 @@ static const double across_share = 0.01;
 typedef struct solutions {
     size_t count;
     lee_steady steady[LEE_MEMBERS];
-    double section_bed_shift[LEE_MEMBERS];
 } solutions;
 
 static void free_solutions(solutions *all) {
@@ -220,32 +219,6 @@ static lee_status tell_stations(const lee_problem *problem,
     return LEE_OK;
 }
 
-static lee_status warn_of_drag(const lee_problem *problem,
-                               const lee_setting *setting,
-                               lee_wind_estimate *wind, lee_error *error) {
-    lee_drag_input in = setting->fluids;
-    in.speed = wind->speed;
-    bool extrapolated = false;
-    bool capped = false;
-    wind->coefficient =
-        lee_drag_coefficient(&problem->drag, &in, &extrapolated, &capped);
-    wind->stress =
-        in.air_density * wind->coefficient * wind->speed * wind->speed;
-    lee_status status = LEE_OK;
-    if (extrapolated) {
-        status = lee_notes_add(&wind->warnings, error,
-                               "drag extrapolated: %.1f m/s is outside the "
-                               "speeds that %s covers",
-                               wind->speed, lee_setting_drag_name(problem));
-    }
-    if (status == LEE_OK && capped) {
-        status = lee_notes_add(&wind->warnings, error,
-                               "drag coefficient held at its cap %.4f",
-                               problem->drag.cap);
-    }
-    return status;
-}
-
 static lee_status warn_of_shores(const lee_steady *main,
                                  lee_wind_estimate *wind, lee_error *error) {
     lee_status status = LEE_OK;
@@ -302,7 +275,13 @@ static lee_status tell_wind(const lee_problem *problem,
     wind->cross_tilt_at = main->cross_tilt_at;
     wind->dry_length = main->dry_length;
     tell_extremes(all, wind);
-    lee_status status = warn_of_drag(problem, setting, wind, error);
+    lee_drag_input in = setting->fluids;
+    in.speed = wind->speed;
+    wind->coefficient = lee_drag_coefficient(&problem->drag, &in, NULL, NULL);
+    wind->stress =
+        in.air_density * wind->coefficient * wind->speed * wind->speed;
+    lee_status status = lee_setting_warn_of_drag(
+        problem, setting, wind->wind.speed, &wind->warnings, error);
     if (status == LEE_OK) {
         status = tell_waters(all, wind, error);
     }

@@ -143,6 +143,31 @@ lee_status lee_setting_tell(const lee_problem *problem,
                       error);
 }
 
+lee_status lee_setting_warn_of_drag(const lee_problem *problem,
+                                    const lee_setting *setting, double measured,
+                                    lee_notes *warnings, lee_error *error) {
+    const lee_drag_relation *relation = problem->drag.relation;
+    lee_drag_input in = setting->fluids;
+    in.speed = lee_setting_speed(problem, setting, measured);
+    bool extrapolated = false;
+    bool capped = false;
+    (void)lee_drag_coefficient(&problem->drag, &in, &extrapolated, &capped);
+    lee_status status = LEE_OK;
+    if (extrapolated) {
+        status = lee_notes_add(
+            warnings, error,
+            "drag extrapolated: %.1f m/s is outside the speeds that %s covers",
+            in.speed, relation != NULL ? relation->name : "the drag table");
+    }
+    if (status == LEE_OK && capped) {
+        status = lee_notes_add(warnings, error,
+                               "drag coefficient held at its cap %.4f at %.1f "
+                               "m/s",
+                               problem->drag.cap, in.speed);
+    }
+    return status;
+}
+
 static lee_status tell_gap(const lee_wind_gap *gap, const lee_gap_rule *rule,
                            lee_notes *notes, lee_error *error) {
     char after[LEE_TIME_TEXT];

@@ -7,6 +7,8 @@
 #include <math.h>
 #include <string.h>
 
+#include "base/text.h"
+
 /* Floor of the speed in relations that diverge or vanish at rest, m s-1: the
  * one of Large and Yeager (2009), taken over for the others. The stress of so
  * light a wind raises no lake. */
@@ -409,4 +411,13 @@ const lee_drag_relation *lee_drag_find(const char *name) {
         }
     }
     return NULL;
+}
+
+const char *lee_drag_nearest(const char *name) {
+    const char *names[sizeof relations / sizeof relations[0]];
+    const size_t count = sizeof names / sizeof names[0];
+    for (size_t i = 0; i < count; i++) {
+        names[i] = relations[i].name;
+    }
+    return lee_text_nearest(name, count, names);
 }

@@ -316,6 +316,13 @@ static void an_unknown_name_finds_nothing(void **state) {
     assert_null(lee_drag_find(""));
 }
 
+static void a_misspelt_relation_has_a_nearest_one(void **state) {
+    (void)state;
+    assert_string_equal(lee_drag_nearest("garrat-linear-1977"),
+                        "garratt-linear-1977");
+    assert_null(lee_drag_nearest("nothing of the kind"));
+}
+
 /* From rest to half as much again as any wind at a lake. */
 static void each_relation_is_positive_and_finite_at_any_speed(void **state) {
     (void)state;
@@ -481,6 +488,7 @@ int main(void) {
         cmocka_unit_test(large_and_pond_jump_as_printed),
         cmocka_unit_test(each_relation_can_be_found_by_its_own_name),
         cmocka_unit_test(an_unknown_name_finds_nothing),
+        cmocka_unit_test(a_misspelt_relation_has_a_nearest_one),
         cmocka_unit_test(each_relation_is_positive_and_finite_at_any_speed),
         cmocka_unit_test(each_relation_is_plausible_within_its_range),
         cmocka_unit_test(each_relation_keeps_a_missing_speed_missing),
