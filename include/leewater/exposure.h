@@ -74,6 +74,89 @@ size_t lee_exposure_chain(const lee_exposure *exposure, const lee_drag *drag,
  * belongs to the first branch. */
 double lee_averaging_ratio(double seconds);
 
+/* Exposure classes of the WMO gust factors, by what lies upwind of the
+ * anemometer: roughly open terrain; a coast or shore with the wind off the
+ * land; a coast or shore with the wind off the water; open water more than
+ * some 20 km from any shore. Harper, Kepert & Ginger (2010), table 1.1
+ * [harper2010]. */
+typedef enum lee_gust_class {
+    LEE_GUST_IN_LAND,
+    LEE_GUST_OFF_LAND,
+    LEE_GUST_OFF_SEA,
+    LEE_GUST_AT_SEA
+} lee_gust_class;
+
+/* "in-land", "off-land", "off-sea", "at-sea". */
+const char *lee_gust_class_name(lee_gust_class place);
+
+/* Ratio of the highest `duration` mean within `period` to the mean over that
+ * period, at 10 m in strong wind:
+ *
+ *     G = max(1, G_T0 [1 + g Iu])
+ *     Tu = 3.13 z^0.2, nu = [0.007 + 0.213 (Tu/duration)^0.654]/Tu
+ *     s = sqrt(2 ln(3600 nu))
+ *     g = (s + 0.577/s) [1 - 0.193 (Tu/duration + 0.1)^-0.68]
+ *     G_T0 = 0.2193 ln(log10 period) + 0.7242, at most 1
+ *
+ * Iu is 0.25, 0.20, 0.15 and 0.10 in the classes' order. 1 where duration is
+ * the period.
+ *
+ *   duration  s, 1 to `period`; the report tables 3 s and longer
+ *   period    s, 60 to 3600
+ *
+ * NaN outside. Source: Harper, Kepert & Ginger (2010), WMO/TD-No. 1555,
+ * appendix D [harper2010]. */
+double lee_gust_factor(lee_gust_class place, double duration, double period);
+
+/* Ratio of the wind over a reservoir to that over the land upwind of it, by
+ * fetch (m): 1.08, 1.13, 1.21, 1.26, 1.28, 1.30 at 0.5, 1, 2, 3, 4, 5 miles,
+ * linear between, 1 at no fetch, 1.30 beyond 5 miles. NaN for a negative
+ * fetch. Saville, McClendon & Cochran (1962), EM 1110-2-1420 ch. 15
+ * [saville1962] (from memory). */
+double lee_reservoir_ratio(double fetch);
+
+/* Wind over the sea from the wind over land, m s-1, both at 10 m:
+ *     1980: 3 U^(2/3), about 3 to 20 m/s [hsu1980]
+ *     1981: 1.62 + 1.17 U, about 2 to 20 m/s [hsu1981] (from memory)
+ * NaN for a negative speed. Hsu (1980), Proc. 17th Coastal Eng. Conf., ch. 43;
+ * Hsu (1981), again in J. Phys. Oceanogr. 16 (1986), 390-394. */
+double lee_hsu_1980(double speed);
+double lee_hsu_1981(double speed);
+
+/* Integrated profile functions psi of zeta = z/L for momentum and heat; 0 at
+ * neutral, positive in unstable air. */
+typedef struct lee_stability_functions {
+    const char *name;  /* spelling in case files */
+    const char *paper; /* key in docs/references.md */
+    double (*momentum)(double zeta);
+    double (*heat)(double zeta);
+} lee_stability_functions;
+
+/* Set of functions called `name`, or NULL: coare-3.5 [edson2013], coare-3.0
+ * [fairall2003], businger-dyer [dyer1974] [paulson1970]. Do not free. */
+const lee_stability_functions *lee_stability_functions_find(const char *name);
+
+/* The index-th set, or NULL past the last. */
+const lee_stability_functions *lee_stability_functions_at(size_t index);
+
+/* Equivalent neutral 10 m wind by the wind at a height:
+ *     U10N/Uz = ln(10/z0) / (ln(z/z0) - psi_m(z/L))
+ *
+ *   height     z, m
+ *   roughness  z0, m, above 0 and below both heights; NaN otherwise
+ *   length     L, Obukhov's, m; infinite at neutral
+ *
+ * Monin-Obukhov similarity (common practice). */
+double lee_neutral_ratio(const lee_stability_functions *set, double height,
+                         double roughness, double length);
+
+/* Amplification of the wind by the difference of air and water temperature, K:
+ *     R_T = 1 - sgn(d) 0.06878 |d|^0.3811, d = T_air - T_water
+ * held beyond 20 K either way. A fit to fig. 3-14 of the SPM (1984) and fig.
+ * II-2-8 of EM 1110-2-1100, after Resio and Vincent (1977)
+ * [resiovincent1977] (from memory). */
+double lee_air_water_ratio(double difference);
+
 /* U10/Uz by the neutral logarithmic profile: ln(10/z0)/ln(z/z0). NaN unless
  * the roughness z0 is above 0 and below both heights. */
 double lee_log_profile_ratio(double height, double roughness);
