@@ -71,7 +71,8 @@ typedef struct lee_wind_source {
     size_t directions;
     lee_storm storm;
     lee_wind_record record;
-    char *record_path;
+    size_t record_count; /* files it was read from, joined when several */
+    char **record_path;  /* [record_count] as named, beside the case    */
     lee_gap_rule gap;
 } lee_wind_source;
 

@@ -36,6 +36,8 @@ typedef struct lee_wind_record {
     size_t duplicates; /* equal repeated rows that the reader dropped       */
     size_t variable_calm;    /* "variable" below 3 m s-1, taken as calm     */
     size_t variable_missing; /* "variable" from 3 m s-1 on, taken as missing*/
+    size_t merged;    /* samples dropped: they stand in another file too    */
+    size_t completed; /* samples that took what they lacked from another    */
 } lee_wind_record;
 
 /* Gives `record` room for n samples: times 0, winds NaN, no optional column.
@@ -86,6 +88,11 @@ typedef enum lee_wind_column {
 const char *lee_wind_column_name(lee_wind_column column);
 const char *lee_wind_column_unit(lee_wind_column column);
 
+/* [n] what a record holds of an optional quantity, LEE_WIND_PRESSURE and what
+ * follows it; NULL when it holds none, or when `column` is no such quantity. */
+const double *lee_wind_quantity(const lee_wind_record *record,
+                                lee_wind_column column);
+
 /* How a CSV file is to be read. Borrows its texts. {0} plus column names is
  * enough: separator and decimal sign are found, units stand in the header as
  * "speed [knots]". Only humidity and ice may do without a unit: they are then
@@ -107,6 +114,8 @@ typedef struct lee_wind_csv {
     int century; /* 1900: what two-digit years of LEE_WIND_YEAR are added to;
                     0: two-digit years are refused                          */
     lee_stamp stamp;
+    bool may_lack_quantities; /* a file need not have the columns named from
+                                 LEE_WIND_PRESSURE on: one of several       */
 } lee_wind_csv;
 
 /* Reads a wind record. Rows whose wind is missing are kept as NaN; equal
@@ -127,6 +136,33 @@ typedef struct lee_wind_csv {
  * no sample has a wind, LEE_ERR_MEMORY. */
 lee_status lee_wind_read_csv(const char *path, const lee_wind_csv *csv,
                              lee_wind_record *record, lee_error *error);
+
+/* One of several records that are to be one. Borrows both. */
+typedef struct lee_wind_part {
+    const char *name; /* for messages: its file */
+    const lee_wind_record *record;
+} lee_wind_part;
+
+/* Joins records into one, in order of time whatever the order given. Samples
+ * of equal time are one sample: equal values are merged, a missing one takes
+ * the value of the other record, and different ones are refused. Equal means
+ * within a millionth (of the value, or of 1 SI unit for small values), the
+ * rounding of units and of single precision. A quantity that some records
+ * lack is NaN there and told; so are unequal usual steps of instants.
+ *
+ *   part     [count] records, empty ones among them if any
+ *   joined   out: freed with lee_wind_record_free; its counts are the sums,
+ *            and `merged` and `completed` count what the join itself did
+ *   remarks  in/out: takes what ought to be told; on errors too
+ *
+ * Errors: LEE_ERR_ARGUMENT without a record; LEE_ERR_DATA when two records
+ * have different values at a time, different stamps, means of different
+ * steps, or overlap in time with fewer than half of the times in common (of
+ * the one that has fewer there), so that nothing tells whether they agree;
+ * LEE_ERR_MEMORY. The rules are our own. */
+lee_status lee_wind_join(size_t count, const lee_wind_part part[],
+                         lee_wind_record *joined, lee_notes *remarks,
+                         lee_error *error);
 
 /* What to do where the record has no wind. */
 typedef struct lee_gap_rule {
@@ -157,9 +193,11 @@ typedef struct lee_wind_check {
 
     size_t missing; /* samples without wind */
     size_t calms;
-    size_t duplicates; /* as the reader counted, like the next two */
+    size_t duplicates; /* as reader and join counted, like the next four */
     size_t variable_calm;
     size_t variable_missing;
+    size_t merged;
+    size_t completed;
 
     size_t beyond_belief;       /* faster than 75 m s-1 */
     int64_t beyond_belief_time; /* the first of them    */

@@ -118,6 +118,7 @@ static lee_status read_tree(const char *path, const lee_yaml_node *root,
     read_draft(&reader, &draft);
     draft.result.inputs = reader.inputs;
     free(draft.wind.missing);
+    free(draft.wind.record);
     const lee_status status =
         reader.has_no_room
             ? lee_fail(error, LEE_ERR_MEMORY, "%s: no room for the case", path)

@@ -42,7 +42,8 @@ typedef struct lee_column_draft {
 typedef enum lee_wind_gaps { LEE_GAPS_ERROR, LEE_GAPS_SPLIT } lee_wind_gaps;
 
 typedef struct lee_wind_draft {
-    const char *record; /* NULL when there is none */
+    size_t record_count; /* files of the record; 0 when there is none */
+    const char **record; /* owned list of borrowed texts              */
     lee_column_draft column[LEE_WIND_COLUMNS];
     lee_stamp stamp;
     size_t missing_count;
@@ -80,6 +81,7 @@ lee_key_read lee_key_utc_offset;  /* lee_given_time                     */
 lee_key_read lee_key_column;      /* lee_column_draft                   */
 lee_key_read lee_key_speed;       /* lee_case_draft: column or quantity */
 lee_key_read lee_key_from;        /* lee_case_draft: column or quantity */
+lee_key_read lee_key_record;      /* lee_wind_draft                     */
 lee_key_read lee_key_missing;     /* lee_wind_draft                     */
 lee_key_read lee_key_winds;       /* lee_wind_source                    */
 lee_key_read lee_key_over;        /* lee_exposure                       */

@@ -166,7 +166,7 @@ static const char *const height_methods[] = {"log", "power", "factor", NULL};
 static const char *const gap_rules[] = {"error", "split", NULL};
 
 static const lee_key wind_rows[] = {
-    KEY("record", lee_key_borrow, lee_case_draft, wind.record, OPTIONAL),
+    KEY("record", lee_key_record, lee_case_draft, wind, OPTIONAL),
     COLUMN("time", LEE_WIND_TIME),
     COLUMN("date", LEE_WIND_DATE),
     COLUMN("clock", LEE_WIND_CLOCK),

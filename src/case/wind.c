@@ -67,21 +67,48 @@ void lee_key_from(lee_case_reader *reader, const lee_yaml_node *node,
     }
 }
 
-void lee_key_missing(lee_case_reader *reader, const lee_yaml_node *node,
-                     const lee_key *key, void *into) {
-    lee_wind_draft *draft = (void *)((char *)into + key->offset);
+/* A text or a list of texts, borrowed from the tree; free() the list. NULL
+ * without memory. */
+static const char **borrow_texts(lee_case_reader *reader,
+                                 const lee_yaml_node *node, const lee_key *key,
+                                 size_t *texts) {
     const bool is_list = node->kind == LEE_YAML_LIST;
     const size_t count = is_list ? node->count : 1;
-    draft->missing = calloc(count + 1, sizeof *draft->missing);
-    if (draft->missing == NULL) {
+    const char **text = calloc(count + 1, sizeof *text);
+    if (text == NULL) {
         reader->has_no_room = true;
-        return;
+        return NULL;
     }
     for (size_t i = 0; i < count; i++) {
         const lee_yaml_node *item = is_list ? node->child[i] : node;
-        const char *text = lee_key_scalar(reader, item, key);
-        if (text != NULL) {
-            draft->missing[draft->missing_count++] = text;
+        text[*texts] = lee_key_scalar(reader, item, key);
+        *texts += text[*texts] != NULL;
+    }
+    return text;
+}
+
+void lee_key_missing(lee_case_reader *reader, const lee_yaml_node *node,
+                     const lee_key *key, void *into) {
+    lee_wind_draft *draft = (void *)((char *)into + key->offset);
+    draft->missing = borrow_texts(reader, node, key, &draft->missing_count);
+}
+
+void lee_key_record(lee_case_reader *reader, const lee_yaml_node *node,
+                    const lee_key *key, void *into) {
+    lee_wind_draft *draft = (void *)((char *)into + key->offset);
+    if (node->kind == LEE_YAML_LIST && node->count == 0) {
+        lee_key_problem(reader, node, key->name,
+                        "is an empty list; expected a file or a list of "
+                        "files");
+        return;
+    }
+    draft->record = borrow_texts(reader, node, key, &draft->record_count);
+    for (size_t i = 0; i < draft->record_count; i++) {
+        for (size_t j = 0; j < i; j++) {
+            if (strcmp(draft->record[i], draft->record[j]) == 0) {
+                lee_key_problem(reader, node, key->name, "names '%s' twice",
+                                draft->record[i]);
+            }
         }
     }
 }
@@ -265,27 +292,103 @@ static bool ends_with(const char *text, const char *ending) {
     return length >= tail && lee_text_same(text + length - tail, ending);
 }
 
-static void read_record(lee_case_reader *reader, lee_case_draft *draft) {
-    lee_wind_source *source = &draft->result.problem.wind;
+/* The place of the i-th file of the record in the case. */
+static const lee_yaml_node *record_node(const lee_case_draft *draft,
+                                        size_t index) {
     const lee_yaml_node *node = lee_case_node(draft, "wind/record");
-    if (ends_with(draft->wind.record, ".nc")) {
+    return node->kind == LEE_YAML_LIST ? node->child[index] : node;
+}
+
+/* Reads one file of the record by its ending. False after a problem. */
+static bool read_file(lee_case_reader *reader, const lee_case_draft *draft,
+                      const lee_yaml_node *node, const char *path,
+                      lee_wind_record *record) {
+    if (ends_with(path, ".nc")) {
         lee_key_problem(reader, node, "wind.record",
                         "is a NetCDF file, which this version does not read; "
                         "write the series of one point to CSV");
+        return false;
+    }
+    lee_wind_csv csv = csv_of(&draft->wind);
+    csv.may_lack_quantities = draft->wind.record_count > 1;
+    lee_error error = {0};
+    if (lee_wind_read_csv(path, &csv, record, &error) != LEE_OK) {
+        lee_case_pass_on(reader, node, &error);
+        return false;
+    }
+    return true;
+}
+
+/* Reads every file into its part, in the order of the case. */
+static bool read_files(lee_case_reader *reader, lee_case_draft *draft,
+                       lee_wind_record record[], lee_wind_part part[]) {
+    lee_wind_source *source = &draft->result.problem.wind;
+    bool is_read = true;
+    for (size_t i = 0; i < draft->wind.record_count; i++) {
+        char *path = lee_case_beside(reader, draft->wind.record[i]);
+        if (path == NULL) {
+            return false;
+        }
+        source->record_path[source->record_count++] = path;
+        part[i] = (lee_wind_part){draft->wind.record[i], &record[i]};
+        is_read =
+            read_file(reader, draft, record_node(draft, i), path, &record[i]) &&
+            is_read;
+    }
+    return is_read;
+}
+
+/* A quantity that the case names has to be in one of the files at least. */
+static void check_quantities(lee_case_reader *reader,
+                             const lee_case_draft *draft) {
+    for (int i = LEE_WIND_PRESSURE; i < LEE_WIND_COLUMNS; i++) {
+        const lee_wind_column column = (lee_wind_column)i;
+        const char *named = draft->wind.column[i].column;
+        if (named != NULL &&
+            lee_wind_quantity(&draft->result.problem.wind.record, column) ==
+                NULL) {
+            lee_key_problem(reader, lee_case_node(draft, "wind/record"),
+                            "wind.record",
+                            "names %zu files, and none of them has the column "
+                            "'%s'",
+                            draft->wind.record_count, named);
+        }
+    }
+}
+
+static void join_files(lee_case_reader *reader, lee_case_draft *draft,
+                       const lee_wind_part part[]) {
+    lee_error error = {0};
+    if (lee_wind_join(draft->wind.record_count, part,
+                      &draft->result.problem.wind.record, &draft->result.notes,
+                      &error) != LEE_OK) {
+        lee_case_pass_on(reader, lee_case_node(draft, "wind/record"), &error);
         return;
     }
+    check_quantities(reader, draft);
+}
+
+static void read_record(lee_case_reader *reader, lee_case_draft *draft) {
+    lee_wind_source *source = &draft->result.problem.wind;
+    const size_t count = draft->wind.record_count;
     source->kind = LEE_WIND_RECORD;
     source->gap.split = draft->wind.gaps == LEE_GAPS_SPLIT;
-    source->record_path = lee_case_beside(reader, draft->wind.record);
-    if (source->record_path == NULL) {
-        return;
+    source->record_path = calloc(count, sizeof *source->record_path);
+    lee_wind_record *record = calloc(count, sizeof *record);
+    lee_wind_part *part = calloc(count, sizeof *part);
+    if (source->record_path == NULL || record == NULL || part == NULL) {
+        reader->has_no_room = true;
+    } else if (read_files(reader, draft, record, part) && count == 1) {
+        source->record = record[0];
+        record[0] = (lee_wind_record){0};
+    } else if (reader->problems.count == 0 && !reader->has_no_room) {
+        join_files(reader, draft, part);
     }
-    const lee_wind_csv csv = csv_of(&draft->wind);
-    lee_error error = {0};
-    if (lee_wind_read_csv(source->record_path, &csv, &source->record, &error) !=
-        LEE_OK) {
-        lee_case_pass_on(reader, node, &error);
+    for (size_t i = 0; record != NULL && i < count; i++) {
+        lee_wind_record_free(&record[i]);
     }
+    free(part);
+    free(record);
 }
 
 static void give_one(lee_case_reader *reader, lee_case_draft *draft) {
@@ -308,7 +411,7 @@ static void give_one(lee_case_reader *reader, lee_case_draft *draft) {
 void lee_case_finish_wind(lee_case_reader *reader, lee_case_draft *draft) {
     lee_wind_source *source = &draft->result.problem.wind;
     const lee_yaml_node *wind = lee_case_node(draft, "wind");
-    if (draft->wind.record != NULL) {
+    if (draft->wind.record_count > 0) {
         read_record(reader, draft);
     } else if (draft->wind.has_storm) {
         source->kind = LEE_WIND_STORM;

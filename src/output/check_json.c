@@ -67,7 +67,11 @@ static void put_gaps(lee_json *json, const lee_wind_check *record) {
 static void put_record(lee_json *json, const lee_case *from,
                        const lee_problem_check *check) {
     const lee_wind_check *record = &check->record;
-    lee_json_put_text(json, "file", from->problem.wind.record_path);
+    lee_json_open_list(json, "files");
+    for (size_t i = 0; i < from->problem.wind.record_count; i++) {
+        lee_json_put_text(json, NULL, from->problem.wind.record_path[i]);
+    }
+    lee_json_close(json);
     lee_json_put_text(json, "stamp",
                       stamp_name(from->problem.wind.record.stamp));
     lee_json_put_count(json, "samples", record->samples);
@@ -77,6 +81,8 @@ static void put_record(lee_json *json, const lee_case *from,
     lee_json_put_count(json, "irregular", record->irregular);
     lee_json_put_count(json, "missing", record->missing);
     lee_json_put_count(json, "duplicates", record->duplicates);
+    lee_json_put_count(json, "merged", record->merged);
+    lee_json_put_count(json, "completed", record->completed);
     lee_json_put_count(json, "variable_calm", record->variable_calm);
     lee_json_put_count(json, "variable_missing", record->variable_missing);
     lee_json_put_count(json, "beyond_belief", record->beyond_belief);

@@ -154,6 +154,8 @@ static void print_doubts(const lee_printer *to, const lee_wind_check *record) {
         {"irregular steps", record->irregular,        ""                     },
         {"missing",         record->missing,          " without wind"        },
         {"repeated rows",   record->duplicates,       ", dropped"            },
+        {"in two files",    record->merged,           ", merged"             },
+        {"completed",       record->completed,        " out of another file" },
         {"variable",        record->variable_calm,    " light, kept as calm" },
         {"variable",        record->variable_missing, " strong, left missing"},
     };
@@ -175,12 +177,29 @@ static void print_doubts(const lee_printer *to, const lee_wind_check *record) {
     }
 }
 
+static void print_files(const lee_printer *to, const lee_wind_source *wind) {
+    enum { SHOWN = 5 };
+    const size_t count = wind->record_count;
+    if (count == 0) {
+        lee_print_row(to, "file", "not named");
+    }
+    for (size_t i = 0; i < count && i < SHOWN; i++) {
+        lee_print_row(to,
+                      i > 0       ? ""
+                      : count > 1 ? "files"
+                                  : "file",
+                      "%s", wind->record_path[i]);
+    }
+    if (count > SHOWN) {
+        lee_print_row(to, "", "and %zu more", count - SHOWN);
+    }
+}
+
 static void print_record(const lee_printer *to, const lee_case *from,
                          const lee_problem_check *check) {
     const lee_wind_check *record = &check->record;
     const lee_wind_source *wind = &from->problem.wind;
-    lee_print_row(to, "file", "%s",
-                  wind->record_path != NULL ? wind->record_path : "not named");
+    print_files(to, wind);
     lee_print_row(to, "samples", "%zu, %s", record->samples,
                   stamp_name(wind->record.stamp));
     lee_print_row(to, "from, to", "%s, %s", lee_show_time(record->first).text,

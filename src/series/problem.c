@@ -44,6 +44,9 @@ static void free_stations(lee_problem *problem) {
 void lee_problem_free(lee_problem *problem) {
     free_stations(problem);
     free(problem->wind.given);
+    for (size_t i = 0; i < problem->wind.record_count; i++) {
+        free(problem->wind.record_path[i]);
+    }
     free(problem->wind.record_path);
     lee_wind_record_free(&problem->wind.record);
     lee_drag_free(&problem->drag);

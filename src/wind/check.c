@@ -139,6 +139,8 @@ lee_status lee_wind_check_record(const lee_wind_record *record,
         .duplicates = record->duplicates,
         .variable_calm = record->variable_calm,
         .variable_missing = record->variable_missing,
+        .merged = record->merged,
+        .completed = record->completed,
         .fastest = NAN,
         .fastest_from = NAN,
     };

@@ -58,3 +58,10 @@ double **lee_wind_optional(lee_wind_record *record, lee_wind_column column) {
     }
     return NULL;
 }
+
+const double *lee_wind_quantity(const lee_wind_record *record,
+                                lee_wind_column column) {
+    lee_wind_record view = *record;
+    double **values = lee_wind_optional(&view, column);
+    return values != NULL ? *values : NULL;
+}

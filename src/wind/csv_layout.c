@@ -7,6 +7,7 @@
 
 #include "base/number.h"
 #include "base/text.h"
+#include "formats/csv_column.h"
 #include "leewater/calendar.h"
 #include "wind/columns.h"
 
@@ -210,11 +211,19 @@ static lee_status find_column(lee_wind_layout *layout, const lee_wind_csv *how,
     return find_meaning(layout, how, column, error);
 }
 
+/* May the file do without a column that the case names? */
+static bool may_lack(const lee_csv *csv, const lee_wind_csv *how,
+                     lee_wind_column column) {
+    return how->may_lack_quantities && column >= LEE_WIND_PRESSURE &&
+           how->column[column].name[0] != '#' &&
+           !lee_csv_has_column(csv, how->column[column].name);
+}
+
 static lee_status find_columns(lee_wind_layout *layout, const lee_wind_csv *how,
                                lee_error *error) {
     for (size_t i = 0; i < LEE_WIND_COLUMNS; i++) {
         const lee_wind_column column = (lee_wind_column)i;
-        if (!has(how, column)) {
+        if (!has(how, column) || may_lack(layout->csv, how, column)) {
             continue;
         }
         const lee_status status = find_column(layout, how, column, error);

@@ -6,6 +6,7 @@
 
 typedef struct checked {
     hand_made made;
+    char *path;
     lee_wind_gap gap[2];
     lee_problem_check check;
     captured out;
@@ -38,7 +39,9 @@ static void make_check(checked *all) {
     };
     lee_wind_source *wind = &all->made.from.problem.wind;
     wind->kind = LEE_WIND_RECORD;
-    wind->record_path = word(&all->made, 6, "marrow_wind.csv");
+    all->path = word(&all->made, 6, "marrow_wind.csv");
+    wind->record_count = 1;
+    wind->record_path = &all->path;
 }
 
 static const char *printed(checked *all) {

@@ -81,7 +81,10 @@ static void a_freed_problem_is_empty_and_may_be_freed_again(void **state) {
     problem.station[0].name = calloc(1, 8);
     problem.station[0].threshold = calloc(1, sizeof(lee_threshold));
     problem.wind.given = calloc(1, sizeof *problem.wind.given);
-    problem.wind.record_path = calloc(1, 8);
+    problem.wind.record_path = calloc(1, sizeof *problem.wind.record_path);
+    assert_non_null(problem.wind.record_path);
+    problem.wind.record_count = 1;
+    problem.wind.record_path[0] = calloc(1, 8);
     lee_problem_free(&problem);
     assert_int_equal(problem.station_count, 0);
     assert_null(problem.station);

@@ -72,12 +72,22 @@ static void a_record_keeps_each_optional_column_in_its_own_place(void **state) {
     assert_null(lee_wind_optional(&record, LEE_WIND_SPEED));
 }
 
+static void a_quantity_is_found_where_the_record_keeps_it(void **state) {
+    (void)state;
+    double ice[] = {0.5};
+    const lee_wind_record record = {.n = 1, .ice = ice};
+    assert_ptr_equal(lee_wind_quantity(&record, LEE_WIND_ICE), ice);
+    assert_null(lee_wind_quantity(&record, LEE_WIND_PRESSURE));
+    assert_null(lee_wind_quantity(&record, LEE_WIND_SPEED));
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(each_column_is_called_what_the_case_file_calls_it),
         cmocka_unit_test(times_have_no_unit_and_all_else_has_one),
         cmocka_unit_test(each_quantity_has_a_range),
         cmocka_unit_test(a_record_keeps_each_optional_column_in_its_own_place),
+        cmocka_unit_test(a_quantity_is_found_where_the_record_keeps_it),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }
