@@ -27,8 +27,8 @@ case "${1:-}" in
 esac
 
 need $build_packages binutils clang clang-format clang-tidy \
-    libclang-rt-14-dev libcmocka-dev python3 python3-netcdf4 python3-numpy \
-    udunits-bin ${all:+valgrind} || exit 3
+    libclang-rt-14-dev libcmocka-dev netcdf-bin python3 python3-cftime \
+    python3-netcdf4 python3-numpy udunits-bin ${all:+valgrind} || exit 3
 
 work=build-tests
 mkdir -p "$work"

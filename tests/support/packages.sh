@@ -4,7 +4,7 @@
 
 # What it takes to build the library and the program.
 build_packages='gcc libc6-dev meson ninja-build pkgconf libgsl-dev
-libudunits2-dev libyaml-dev libjansson-dev'
+libudunits2-dev libyaml-dev libjansson-dev libnetcdf-dev'
 
 missing_packages() {
     for package in "$@"; do
