@@ -3,20 +3,6 @@
 
 #include "leewater/basin.h"
 
-static test_folder folder;
-
-static int make_folder(void **state) {
-    (void)state;
-    folder_make(&folder);
-    return 0;
-}
-
-static int remove_folder(void **state) {
-    (void)state;
-    folder_remove(&folder);
-    return 0;
-}
-
 static lee_status read_text(const char *text, bool has_offset, int64_t offset,
                             lee_level_series *series, lee_error *error) {
     const char *path = folder_write(&folder, "pool.csv", text);

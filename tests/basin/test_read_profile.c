@@ -3,20 +3,6 @@
 
 #include "leewater/basin.h"
 
-static test_folder folder;
-
-static int make_folder(void **state) {
-    (void)state;
-    folder_make(&folder);
-    return 0;
-}
-
-static int remove_folder(void **state) {
-    (void)state;
-    folder_remove(&folder);
-    return 0;
-}
-
 static lee_status read_text(const char *text, lee_profile *profile,
                             lee_error *error) {
     const char *path = folder_write(&folder, "axis.csv", text);

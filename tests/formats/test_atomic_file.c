@@ -10,8 +10,6 @@
 
 #include "formats/atomic_file.h"
 
-static test_folder folder;
-
 /* Path of a name in the folder. */
 static const char *in_folder(const char *name, char path[FOLDER_PATH]) {
     (void)snprintf(path, FOLDER_PATH, "%s/%s", folder.path, name);
@@ -360,26 +358,18 @@ static void a_full_device_at_standard_output_is_an_error(void **state) {
                         "space left on device");
 }
 
-static int make_folder(void **state) {
-    (void)state;
-    folder_make(&folder);
-    return 0;
-}
-
-static int remove_folder(void **state) {
-    (void)state;
+static int remove_all(void **state) {
     static const char *const names[] = {"new.csv", "race.csv", "a.csv",
                                         "b.csv",   "pipe",     "link.csv"};
     for (size_t i = 0; i < sizeof names / sizeof names[0]; i++) {
         char path[FOLDER_PATH];
         (void)remove(in_folder(names[i], path));
     }
-    folder_remove(&folder);
-    return 0;
+    return remove_folder(state);
 }
 
 #define TEST(name) \
-    cmocka_unit_test_setup_teardown(name, make_folder, remove_folder)
+    cmocka_unit_test_setup_teardown(name, make_folder, remove_all)
 
 int main(void) {
     const struct CMUnitTest tests[] = {

@@ -7,8 +7,6 @@
 
 #include "formats/csv.h"
 
-static test_folder folder;
-
 static lee_csv *opened(const char *text) {
     const char *path = folder_write(&folder, "good.csv", text);
     lee_csv *csv = NULL;
@@ -404,18 +402,6 @@ static void a_pipe_is_refused_without_waiting_for_it(void **state) {
     assert_int_equal(mkfifo(path, 0600), 0);
     refused_path(path, message);
     (void)remove(path);
-}
-
-static int make_folder(void **state) {
-    (void)state;
-    folder_make(&folder);
-    return 0;
-}
-
-static int remove_folder(void **state) {
-    (void)state;
-    folder_remove(&folder);
-    return 0;
 }
 
 int main(void) {

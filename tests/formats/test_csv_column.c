@@ -3,20 +3,6 @@
 
 #include "formats/csv_column.h"
 
-static test_folder folder;
-
-static int make_folder(void **state) {
-    (void)state;
-    folder_make(&folder);
-    return 0;
-}
-
-static int remove_folder(void **state) {
-    (void)state;
-    folder_remove(&folder);
-    return 0;
-}
-
 static lee_csv *table(const char *text) {
     lee_csv *csv = NULL;
     const char *path = folder_write(&folder, "table.csv", text);

@@ -9,8 +9,6 @@
 #include "base/text.h"
 #include "formats/csv.h"
 
-static test_folder folder;
-
 /* Opens a file and fails unless that works. */
 static lee_csv *opened(const char *path) {
     lee_csv *csv = NULL;
@@ -295,18 +293,6 @@ static void the_undamaged_file_is_read_whole(void **state) {
     lee_error error = {0};
     assert_int_equal(read_all(path, &numbers, &error), LEE_OK);
     assert_int_equal(numbers, 10);
-}
-
-static int make_folder(void **state) {
-    (void)state;
-    folder_make(&folder);
-    return 0;
-}
-
-static int remove_folder(void **state) {
-    (void)state;
-    folder_remove(&folder);
-    return 0;
 }
 
 int main(void) {

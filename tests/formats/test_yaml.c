@@ -3,22 +3,6 @@
 
 #include "support/files.h"
 
-static int make_folder(void **state) {
-    test_folder *folder = calloc(1, sizeof *folder);
-    if (folder == NULL) {
-        return -1;
-    }
-    folder_make(folder);
-    *state = folder;
-    return 0;
-}
-
-static int remove_folder(void **state) {
-    folder_remove(*state);
-    free(*state);
-    return 0;
-}
-
 static lee_yaml_node *read_text(void **state, const char *text) {
     lee_yaml_node *root = NULL;
     lee_error error = {0};
@@ -34,13 +18,12 @@ static lee_yaml_node *read_text(void **state, const char *text) {
  * folder's name, and no tree is handed out. */
 static void assert_refused_bytes(void **state, size_t length,
                                  const char bytes[], const char *expected) {
-    const test_folder *folder = *state;
     const char *path = folder_write_bytes(*state, "a.yaml", length, bytes);
     lee_yaml_node *root = NULL;
     lee_error error = {0};
     assert_int_equal(lee_yaml_read(path, &root, &error), LEE_ERR_FORMAT);
     assert_null(root);
-    const size_t skipped = strlen(folder->path) + 1;
+    const size_t skipped = strlen(folder.path) + 1;
     assert_string_equal(error.message + skipped, expected);
 }
 
@@ -287,11 +270,11 @@ static void a_missing_file_is_named(void **state) {
 }
 
 static void a_directory_is_refused(void **state) {
-    const test_folder *folder = *state;
+    (void)state;
     lee_yaml_node *root = NULL;
     lee_error error = {0};
-    assert_int_equal(lee_yaml_read(folder->path, &root, &error), LEE_ERR_FILE);
-    assert_string_equal(error.message + strlen(folder->path),
+    assert_int_equal(lee_yaml_read(folder.path, &root, &error), LEE_ERR_FILE);
+    assert_string_equal(error.message + strlen(folder.path),
                         ": is a directory; expected a file");
 }
 
@@ -364,43 +347,40 @@ static void a_damaged_file_is_read_or_refused_with_a_place(void **state) {
     assert_true(refused > ROUNDS / 10 && refused < ROUNDS);
 }
 
-#define TEST(name) \
-    cmocka_unit_test_setup_teardown(name, make_folder, remove_folder)
-
 int main(void) {
     const struct CMUnitTest tests[] = {
-        TEST(a_mapping_keeps_its_keys_in_order),
-        TEST(keys_and_values_know_their_place),
-        TEST(columns_count_characters_not_bytes),
-        TEST(scalars_stay_text),
-        TEST(an_unknown_key_has_no_child),
-        TEST(json_is_read_too),
-        TEST(a_byte_order_mark_and_crlf_are_read),
-        TEST(a_mapping_of_many_keys_keeps_them_all),
-        TEST(a_repeated_key_is_refused_with_both_lines),
-        TEST(the_first_of_several_repeated_keys_is_told),
-        TEST(one_key_may_stand_in_two_mappings),
-        TEST(a_tab_as_indentation_is_refused),
-        TEST(an_open_bracket_is_refused),
-        TEST(anchors_are_refused),
-        TEST(aliases_are_refused),
-        TEST(tags_are_refused),
-        TEST(merge_keys_are_refused),
-        TEST(keys_that_are_collections_are_refused),
-        TEST(an_empty_key_is_refused),
-        TEST(a_second_document_is_refused),
-        TEST(a_file_without_content_is_refused),
-        TEST(an_empty_text_in_quotes_is_content),
-        TEST(a_nul_byte_is_refused_where_it_stands),
-        TEST(broken_utf8_is_refused_where_it_stands),
-        TEST(brackets_without_end_are_refused_at_depth_32),
-        TEST(thirty_two_levels_are_read),
-        TEST(more_than_200000_values_are_refused),
-        TEST(a_file_beyond_a_mebibyte_is_refused),
-        TEST(a_missing_file_is_named),
-        TEST(a_directory_is_refused),
-        TEST(a_device_is_refused),
-        TEST(a_damaged_file_is_read_or_refused_with_a_place),
+        FOLDER_TEST(a_mapping_keeps_its_keys_in_order),
+        FOLDER_TEST(keys_and_values_know_their_place),
+        FOLDER_TEST(columns_count_characters_not_bytes),
+        FOLDER_TEST(scalars_stay_text),
+        FOLDER_TEST(an_unknown_key_has_no_child),
+        FOLDER_TEST(json_is_read_too),
+        FOLDER_TEST(a_byte_order_mark_and_crlf_are_read),
+        FOLDER_TEST(a_mapping_of_many_keys_keeps_them_all),
+        FOLDER_TEST(a_repeated_key_is_refused_with_both_lines),
+        FOLDER_TEST(the_first_of_several_repeated_keys_is_told),
+        FOLDER_TEST(one_key_may_stand_in_two_mappings),
+        FOLDER_TEST(a_tab_as_indentation_is_refused),
+        FOLDER_TEST(an_open_bracket_is_refused),
+        FOLDER_TEST(anchors_are_refused),
+        FOLDER_TEST(aliases_are_refused),
+        FOLDER_TEST(tags_are_refused),
+        FOLDER_TEST(merge_keys_are_refused),
+        FOLDER_TEST(keys_that_are_collections_are_refused),
+        FOLDER_TEST(an_empty_key_is_refused),
+        FOLDER_TEST(a_second_document_is_refused),
+        FOLDER_TEST(a_file_without_content_is_refused),
+        FOLDER_TEST(an_empty_text_in_quotes_is_content),
+        FOLDER_TEST(a_nul_byte_is_refused_where_it_stands),
+        FOLDER_TEST(broken_utf8_is_refused_where_it_stands),
+        FOLDER_TEST(brackets_without_end_are_refused_at_depth_32),
+        FOLDER_TEST(thirty_two_levels_are_read),
+        FOLDER_TEST(more_than_200000_values_are_refused),
+        FOLDER_TEST(a_file_beyond_a_mebibyte_is_refused),
+        FOLDER_TEST(a_missing_file_is_named),
+        FOLDER_TEST(a_directory_is_refused),
+        FOLDER_TEST(a_device_is_refused),
+        FOLDER_TEST(a_damaged_file_is_read_or_refused_with_a_place),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

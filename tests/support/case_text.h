@@ -14,24 +14,7 @@
     "  axis: {bearing: 65 degree, uniform: {length: 12 km, depth: 4 m, " \
     "width: 1 km}}\n"
 
-static inline int make_folder(void **state) {
-    test_folder *folder = calloc(1, sizeof *folder);
-    if (folder == NULL) {
-        return -1;
-    }
-    folder_make(folder);
-    *state = folder;
-    return 0;
-}
-
-static inline int remove_folder(void **state) {
-    folder_remove(*state);
-    free(*state);
-    return 0;
-}
-
-#define CASE_TEST(name) \
-    cmocka_unit_test_setup_teardown(name, make_folder, remove_folder)
+#define CASE_TEST(name) FOLDER_TEST(name)
 
 /* The case in `text`, which has to be in order. Free with lee_case_free. */
 static inline lee_case read_case(void **state, const char *text) {
@@ -46,10 +29,10 @@ static inline lee_case read_case(void **state, const char *text) {
 }
 
 /* Takes "FOLDER/" out of a message wherever it stands. */
-static inline void hide_folder(const test_folder *folder, char message[]) {
-    const size_t length = strlen(folder->path) + 1;
+static inline void hide_folder(const test_folder *in, char message[]) {
+    const size_t length = strlen(in->path) + 1;
     char *found;
-    while ((found = strstr(message, folder->path)) != NULL) {
+    while ((found = strstr(message, in->path)) != NULL) {
         memmove(found, found + length, strlen(found + length) + 1);
     }
 }

@@ -18,47 +18,66 @@ typedef struct test_folder {
     char file[FOLDER_FILES][FOLDER_PATH];
 } test_folder;
 
-static inline void folder_make(test_folder *folder) {
+static inline void folder_make(test_folder *in) {
     static const char head[] = "test-";
-    *folder = (test_folder){0};
-    memcpy(folder->path, head, sizeof head);
-    memset(folder->path + sizeof head - 1, 'X', 6);
-    assert_non_null(mkdtemp(folder->path));
+    *in = (test_folder){0};
+    memcpy(in->path, head, sizeof head);
+    memset(in->path + sizeof head - 1, 'X', 6);
+    assert_non_null(mkdtemp(in->path));
 }
 
 /* Writes bytes[length] to a file of the folder; returns its path, which lives
  * as long as the folder. */
-static inline const char *folder_write_bytes(test_folder *folder,
-                                             const char *name, size_t length,
+static inline const char *folder_write_bytes(test_folder *in, const char *name,
+                                             size_t length,
                                              const char bytes[]) {
     char path[FOLDER_PATH];
-    (void)snprintf(path, sizeof path, "%s/%s", folder->path, name);
+    (void)snprintf(path, sizeof path, "%s/%s", in->path, name);
     size_t i = 0;
-    while (i < folder->count && strcmp(folder->file[i], path) != 0) {
+    while (i < in->count && strcmp(in->file[i], path) != 0) {
         i++;
     }
     assert_true(i < FOLDER_FILES);
-    if (i == folder->count) {
-        memcpy(folder->file[folder->count++], path, sizeof path);
+    if (i == in->count) {
+        memcpy(in->file[in->count++], path, sizeof path);
     }
     FILE *stream = fopen(path, "wb");
     assert_non_null(stream);
     assert_int_equal(fwrite(bytes, 1, length, stream), length);
     assert_int_equal(fclose(stream), 0);
-    return folder->file[i];
+    return in->file[i];
 }
 
-static inline const char *folder_write(test_folder *folder, const char *name,
+static inline const char *folder_write(test_folder *in, const char *name,
                                        const char *text) {
-    return folder_write_bytes(folder, name, strlen(text), text);
+    return folder_write_bytes(in, name, strlen(text), text);
 }
 
-static inline void folder_remove(test_folder *folder) {
-    for (size_t i = 0; i < folder->count; i++) {
-        (void)remove(folder->file[i]);
+static inline void folder_remove(test_folder *in) {
+    for (size_t i = 0; i < in->count; i++) {
+        (void)remove(in->file[i]);
     }
-    (void)rmdir(folder->path);
-    folder->count = 0;
+    (void)rmdir(in->path);
+    in->count = 0;
 }
+
+/* The folder of the test, or of the group of tests, that runs: made and removed
+ * around it, and its state. */
+static test_folder folder;
+
+static inline int make_folder(void **state) {
+    folder_make(&folder);
+    *state = &folder;
+    return 0;
+}
+
+static inline int remove_folder(void **state) {
+    (void)state;
+    folder_remove(&folder);
+    return 0;
+}
+
+#define FOLDER_TEST(name) \
+    cmocka_unit_test_setup_teardown(name, make_folder, remove_folder)
 
 #endif

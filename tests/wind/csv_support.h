@@ -15,20 +15,12 @@
 /* A few rounding errors of a wind of some tens of m s-1. */
 static const double rounding = 1e-13;
 
-static test_folder folder;
 static const char *path; /* of the one file in the folder */
 
-static inline int make_folder(void **state) {
-    (void)state;
-    folder_make(&folder);
+static inline int make_record(void **state) {
+    const int made = make_folder(state);
     path = folder_write(&folder, "wind.csv", "");
-    return 0;
-}
-
-static inline int remove_folder(void **state) {
-    (void)state;
-    folder_remove(&folder);
-    return 0;
+    return made;
 }
 
 static inline void write_bytes(size_t length, const char bytes[]) {

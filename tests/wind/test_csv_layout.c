@@ -175,5 +175,5 @@ int main(void) {
         cmocka_unit_test(a_wind_may_not_be_told_in_two_ways),
         cmocka_unit_test(a_time_is_told_in_exactly_one_way),
     };
-    return cmocka_run_group_tests(tests, make_folder, remove_folder);
+    return cmocka_run_group_tests(tests, make_record, remove_folder);
 }

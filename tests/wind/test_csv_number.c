@@ -135,5 +135,5 @@ int main(void) {
         cmocka_unit_test(a_humidity_in_percent_must_say_so),
         cmocka_unit_test(a_speed_that_is_no_number_is_refused),
     };
-    return cmocka_run_group_tests(tests, make_folder, remove_folder);
+    return cmocka_run_group_tests(tests, make_record, remove_folder);
 }

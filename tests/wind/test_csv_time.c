@@ -233,5 +233,5 @@ int main(void) {
         cmocka_unit_test(a_text_that_is_no_time_is_refused),
         cmocka_unit_test(an_endless_time_is_refused),
     };
-    return cmocka_run_group_tests(tests, make_folder, remove_folder);
+    return cmocka_run_group_tests(tests, make_record, remove_folder);
 }

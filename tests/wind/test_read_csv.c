@@ -383,5 +383,5 @@ int main(void) {
         cmocka_unit_test(a_file_that_is_not_there_is_refused),
         cmocka_unit_test(a_damaged_record_is_read_clean_or_refused_once),
     };
-    return cmocka_run_group_tests(tests, make_folder, remove_folder);
+    return cmocka_run_group_tests(tests, make_record, remove_folder);
 }
