@@ -112,8 +112,7 @@ void lee_key_time(lee_case_reader *reader, const lee_yaml_node *node,
         return;
     }
     if (lee_time_parse(text, 0, &given->value, NULL, &error) != LEE_OK) {
-        lee_key_problem(reader, node, key->name, "cannot be read: %s",
-                        error.message);
+        lee_key_unreadable(reader, node, key, &error);
         return;
     }
     given->is_given = true;
@@ -128,8 +127,7 @@ void lee_key_utc_offset(lee_case_reader *reader, const lee_yaml_node *node,
         return;
     }
     if (lee_utc_offset_parse(text, &given->value, &error) != LEE_OK) {
-        lee_key_problem(reader, node, key->name, "cannot be read: %s",
-                        error.message);
+        lee_key_unreadable(reader, node, key, &error);
         return;
     }
     given->is_given = true;

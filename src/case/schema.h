@@ -73,6 +73,10 @@ void lee_key_problem(lee_case_reader *reader, const lee_yaml_node *node,
                      const char *name, const char *format, ...)
     LEE_PRINTF(4, 5);
 
+/* A value that `error` says cannot be read: a problem, or no room. */
+void lee_key_unreadable(lee_case_reader *reader, const lee_yaml_node *node,
+                        const lee_key *key, const lee_error *error);
+
 /* "a single value", "a list" or "a mapping". */
 const char *lee_key_kind(const lee_yaml_node *node);
 

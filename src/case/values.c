@@ -42,6 +42,16 @@ const char *lee_key_scalar(lee_case_reader *reader, const lee_yaml_node *node,
     return node->text;
 }
 
+void lee_key_unreadable(lee_case_reader *reader, const lee_yaml_node *node,
+                        const lee_key *key, const lee_error *error) {
+    if (error->status == LEE_ERR_MEMORY) {
+        reader->has_no_room = true;
+        return;
+    }
+    lee_key_problem(reader, node, key->name, "cannot be read: %s",
+                    error->message);
+}
+
 /* "auto, or more than 0 and up to 2000 m" */
 static void say_range(const lee_key *key, size_t size, char text[]) {
     const bool is_pure = strcmp(key->unit, "1") == 0;
@@ -86,8 +96,7 @@ bool lee_key_value(lee_case_reader *reader, const lee_yaml_node *node,
     lee_error error = {0};
     double shown = 0.0;
     if (lee_quantity_parse(text, key->unit, &shown, &error) != LEE_OK) {
-        lee_key_problem(reader, node, key->name, "cannot be read: %s",
-                        error.message);
+        lee_key_unreadable(reader, node, key, &error);
         return false;
     }
     if (!is_in_range(key, shown)) {
@@ -98,7 +107,11 @@ bool lee_key_value(lee_case_reader *reader, const lee_yaml_node *node,
         *value = shown;
         return true;
     }
-    return lee_quantity_parse(text, key->si, value, NULL) == LEE_OK;
+    if (lee_quantity_parse(text, key->si, value, &error) != LEE_OK) {
+        lee_key_unreadable(reader, node, key, &error);
+        return false;
+    }
+    return true;
 }
 
 void lee_key_quantity(lee_case_reader *reader, const lee_yaml_node *node,

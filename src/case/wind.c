@@ -24,8 +24,7 @@ static void check_column_unit(lee_case_reader *reader,
     lee_conversion conversion;
     lee_error error = {0};
     if (lee_unit_conversion(unit, wanted, &conversion, &error) != LEE_OK) {
-        lee_key_problem(reader, node, key->name, "cannot be read: %s",
-                        error.message);
+        lee_key_unreadable(reader, node, key, &error);
     }
 }
 

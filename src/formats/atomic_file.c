@@ -15,8 +15,8 @@
 
 static lee_status cannot(const char *path, const char *what, int reason,
                          lee_error *error) {
-    return lee_fail(error, LEE_ERR_FILE, "%s: cannot be %s%s%s", path, what,
-                    reason == 0 ? "" : ": ",
+    return lee_fail(error, reason == ENOMEM ? LEE_ERR_MEMORY : LEE_ERR_FILE,
+                    "%s: cannot be %s%s%s", path, what, reason == 0 ? "" : ": ",
                     reason == 0 ? "" : strerror(reason));
 }
 

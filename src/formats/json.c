@@ -117,9 +117,11 @@ lee_status lee_json_write(lee_json *json, FILE *stream, lee_error *error) {
         goto done;
     }
     errno = 0;
-    if (json_dumpf(json->open[0], stream,
-                   JSON_INDENT(2) | JSON_REAL_PRECISION(9)) != 0 ||
-        fputc('\n', stream) == EOF) {
+    const int refused = json_dumpf(json->open[0], stream,
+                                   JSON_INDENT(2) | JSON_REAL_PRECISION(9));
+    if (refused != 0 && !ferror(stream)) {
+        status = lee_fail(error, LEE_ERR_MEMORY, "no room to write JSON");
+    } else if (refused != 0 || fputc('\n', stream) == EOF) {
         status = lee_fail(error, LEE_ERR_FILE, "cannot write: %s",
                           errno != 0 ? strerror(errno) : "output failed");
     }

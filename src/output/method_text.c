@@ -3,20 +3,16 @@
 
 #include <math.h>
 
-#include "base/text.h"
-
 void lee_print_head(const lee_printer *to, const lee_case *from,
                     double still_water) {
     const lee_lake *lake = &from->problem.lake;
     if (from->title != NULL) {
         lee_print_wrapped(to, 0, "", from->title);
     }
-    lee_text line = {0};
-    lee_text_add(&line, "%s, still water %s above %s",
-                 lake->name != NULL ? lake->name : "Lake",
-                 lee_show_length(to, still_water).text, lee_datum_of(from));
-    lee_print_wrapped(to, 0, "", line.bytes != NULL ? line.bytes : "");
-    lee_text_free(&line);
+    lee_print_sentence(to, 0, "", "%s, still water %s above %s",
+                       lake->name != NULL ? lake->name : "Lake",
+                       lee_show_length(to, still_water).text,
+                       lee_datum_of(from));
     for (size_t i = 0; i < from->notes.n; i++) {
         lee_print_wrapped(to, 4, "! ", from->notes.text[i]);
     }

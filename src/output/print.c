@@ -12,6 +12,9 @@
 
 enum { LINE_WIDTH = 80, LABEL_WIDTH = 16 };
 
+/* Bytes of a row or a sentence: room for a path and for words around it. */
+enum { LONGEST_TEXT = 4096 + 512 };
+
 static const double foot = 0.3048;       /* m (international foot, 1959)     */
 static const double mile = 1609.344;     /* m (5280 feet)                    */
 static const double acre = 4046.8564224; /* m2 (43560 square feet)           */
@@ -281,9 +284,19 @@ void lee_print_wrapped(const lee_printer *to, size_t indent, const char *mark,
     put_lines(to, indent, text);
 }
 
+void lee_print_sentence(const lee_printer *to, size_t indent, const char *mark,
+                        const char *format, ...) {
+    char text[LONGEST_TEXT];
+    va_list arguments;
+    va_start(arguments, format);
+    (void)vsnprintf(text, sizeof text, format, arguments);
+    va_end(arguments);
+    lee_print_wrapped(to, indent, mark, text);
+}
+
 void lee_print_row(const lee_printer *to, const char *label, const char *format,
                    ...) {
-    char text[640];
+    char text[LONGEST_TEXT];
     va_list arguments;
     va_start(arguments, format);
     (void)vsnprintf(text, sizeof text, format, arguments);

@@ -83,6 +83,10 @@ size_t lee_text_width(const char *text);
 void lee_print_wrapped(const lee_printer *to, size_t indent, const char *mark,
                        const char *text);
 
+/* The same of a formatted text. Both take no memory that could run out. */
+void lee_print_sentence(const lee_printer *to, size_t indent, const char *mark,
+                        const char *format, ...) LEE_PRINTF(4, 5);
+
 /* A heading and its notes, or nothing when there are none. */
 void lee_print_notes(const lee_printer *to, const char *heading,
                      const lee_notes *notes);

@@ -4,8 +4,6 @@
 #include <math.h>
 #include <stdbool.h>
 
-#include "base/text.h"
-
 static void print_span(const lee_printer *to, const lee_run_result *result) {
     if (result->n == 0) {
         return;
@@ -77,12 +75,9 @@ static void print_exceedance(const lee_printer *to,
 
 static void print_station(const lee_printer *to, const lee_station *station,
                           const lee_station_series *series) {
-    lee_text heading = {0};
-    lee_text_add(&heading, "%s, chainage %s", station->name,
-                 lee_show_distance(to, station->at).text);
     (void)fputc('\n', to->stream);
-    lee_print_wrapped(to, 0, "", heading.bytes != NULL ? heading.bytes : "");
-    lee_text_free(&heading);
+    lee_print_sentence(to, 0, "", "%s, chainage %s", station->name,
+                       lee_show_distance(to, station->at).text);
     print_extreme(to, "highest", &series->max, series->max_time);
     print_extreme(to, "lowest", &series->min, series->min_time);
     if (!isnan(station->bed) && !isnan(series->min.value)) {

@@ -7,8 +7,6 @@
 #include <stdbool.h>
 #include <string.h>
 
-#include "base/text.h"
-
 enum { BLOCKS_UP_TO = 3 }; /* winds that get a block of their own */
 
 /* What stands at a place: "lee shore, 11.80 km". */
@@ -43,16 +41,20 @@ static void print_wind(const lee_printer *to, const lee_wind_estimate *wind) {
 
 static void print_nodes(const lee_printer *to,
                         const lee_water_estimate *water) {
-    lee_text line = {0};
-    for (size_t i = 0; i < water->node_count; i++) {
-        lee_text_add(&line, "%s%s", i > 0 ? ", " : "at ",
-                     lee_show_distance(to, water->node[i]).text);
+    enum { SHOWN = 40 };
+    char line[SHOWN * sizeof(lee_cell)];
+    size_t length = 0;
+    for (size_t i = 0; i < water->node_count && i < SHOWN; i++) {
+        length += (size_t)snprintf(line + length, sizeof line - length,
+                                   "%s%.48s", i > 0 ? ", " : "at ",
+                                   lee_show_distance(to, water->node[i]).text);
     }
-    if (line.bytes != NULL) {
-        lee_print_row(to, water->node_count > 1 ? "nodes" : "node", "%s",
-                      line.bytes);
+    if (water->node_count > SHOWN) {
+        lee_print_row(to, "nodes", "%s and %zu more", line,
+                      water->node_count - SHOWN);
+    } else if (water->node_count > 0) {
+        lee_print_row(to, water->node_count > 1 ? "nodes" : "node", "%s", line);
     }
-    lee_text_free(&line);
 }
 
 static void print_ends(const lee_printer *to, const lee_wind_estimate *wind,
@@ -305,14 +307,14 @@ static size_t count_warning(shared_warning seen[], size_t n, const char *text,
 }
 
 static void print_shared(const lee_printer *to, const shared_warning *seen) {
-    lee_text line = {0};
-    lee_text_add(&line, "from %s", lee_show_direction(seen->from).text);
+    lee_cell more = {{0}};
     if (seen->count > 1) {
-        lee_text_add(&line, ", and %zu more winds alike", seen->count - 1);
+        (void)snprintf(more.text, sizeof more.text,
+                       ", and %zu more winds alike", seen->count - 1);
     }
-    lee_text_add(&line, ": %s", seen->text);
-    lee_print_wrapped(to, 4, "- ", line.bytes != NULL ? line.bytes : "");
-    lee_text_free(&line);
+    lee_print_sentence(to, 4, "- ", "from %s%s: %s",
+                       lee_show_direction(seen->from).text, more.text,
+                       seen->text);
 }
 
 static void print_warnings(const lee_printer *to,

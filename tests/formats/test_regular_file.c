@@ -7,18 +7,6 @@
 
 #include "formats/regular_file.h"
 
-static int make_folder(void **state) {
-    static test_folder folder;
-    folder_make(&folder);
-    *state = &folder;
-    return 0;
-}
-
-static int remove_folder(void **state) {
-    folder_remove(*state);
-    return 0;
-}
-
 static lee_status open_one(const char *path, lee_error *error) {
     int descriptor = 0;
     size_t size = 0;
@@ -42,9 +30,9 @@ static void a_regular_file_opens_and_tells_its_size(void **state) {
 }
 
 static void a_directory_is_refused(void **state) {
-    const test_folder *folder = *state;
+    (void)state;
     lee_error error = {0};
-    assert_int_equal(open_one(folder->path, &error), LEE_ERR_FILE);
+    assert_int_equal(open_one(folder.path, &error), LEE_ERR_FILE);
     assert_non_null(strstr(error.message, ": is a directory; expected a file"));
 }
 
@@ -76,7 +64,6 @@ static void a_missing_file_is_refused_with_the_reason(void **state) {
 
 static void
 a_file_is_the_same_through_links_and_roundabout_paths(void **state) {
-    const test_folder *folder = *state;
     const char *file = folder_write(*state, "one.txt", "1");
     const char *hard = folder_write(*state, "hard.txt", "");
     const char *soft = folder_write(*state, "soft.txt", "");
@@ -85,7 +72,7 @@ a_file_is_the_same_through_links_and_roundabout_paths(void **state) {
     assert_int_equal(link(file, hard), 0);
     assert_int_equal(unlink(soft), 0);
     assert_int_equal(symlink("one.txt", soft), 0);
-    (void)snprintf(round, sizeof round, "./%s/../%s", folder->path, file);
+    (void)snprintf(round, sizeof round, "./%s/../%s", folder.path, file);
     assert_true(lee_is_same_file(file, file));
     assert_true(lee_is_same_file(file, hard));
     assert_true(lee_is_same_file(soft, hard));
