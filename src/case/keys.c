@@ -205,7 +205,7 @@ static const lee_key wind_rows[] = {
     KEY("winds", lee_key_winds, lee_case_draft, result.problem.wind, OPTIONAL,
         .section = &given_keys),
     KEY("height", lee_key_quantity, lee_case_draft,
-        result.problem.exposure.height, OPTIONAL, BETWEEN("m", 0.5, 500.0)),
+        result.problem.exposure.height, OPTIONAL, BETWEEN("m", 0.5, 200.0)),
     KEY("height_method", lee_key_choice, lee_case_draft,
         result.problem.exposure.height_method, OPTIONAL,
         .words = height_methods),

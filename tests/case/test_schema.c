@@ -167,7 +167,7 @@ static void a_negative_size_is_refused_everywhere(void **state) {
         SLIP(LAKE "wind: {speed: -3 m/s, from: 4 degree}\n",
              "a.yaml:4:15: 'wind.speed' is '-3 m/s'; expected 0 to 100 m/s"),
         SLIP(LAKE "wind: {speed: 3 m/s, from: 4 degree, height: -2 m}\n",
-             "a.yaml:4:46: 'wind.height' is '-2 m'; expected 0.5 to 500 m"),
+             "a.yaml:4:46: 'wind.height' is '-2 m'; expected 0.5 to 200 m"),
         SLIP(LAKE "wind: {speed: 3 m/s, from: 4 degree, averaging: -2 min}\n",
              "a.yaml:4:49: 'wind.averaging' is '-2 min'; expected more than 0 "
              "and up to 44640 min"),
@@ -434,6 +434,43 @@ static void a_damaged_case_is_read_or_refused_with_a_message(void **state) {
     assert_true(refused > ROUNDS / 2 && refused < ROUNDS);
 }
 
+static void one_problem_more_than_twenty_is_one_problem(void **state) {
+    char text[1024] = LAKE;
+    for (int i = 0; i < 21; i++) {
+        char line[16];
+        (void)snprintf(line, sizeof line, "z%d: 1\n", i);
+        strcat(text, line);
+    }
+    lee_case c = {0};
+    lee_error error = {0};
+    const char *path = folder_write(*state, "a.yaml", text);
+    assert_int_equal(lee_case_read(path, &c, &error), LEE_ERR_FORMAT);
+    assert_string_equal(strrchr(error.message, '\n'), "\n1 more problem");
+}
+
+static void what_stands_at_the_limit_of_a_key_is_taken(void **state) {
+    lee_case low =
+        read_case(state, LAKE
+                  "wind: {speed: 0 m/s, from: 0 degree, height: 0.5 m}\n"
+                  "stress: {air_temperature: -60 degC, air_pressure: 300 hPa,\n"
+                  "  drag_cap: 5e-4}\n"
+                  "uncertainty: {wind: 0, depth: 0 m, bed: 0}\n"
+                  "solver: {cells: 4}\n");
+    assert_near(low.problem.air.temperature, 213.15, 1e-10); /* rounding */
+    assert_near(low.problem.exposure.height, 0.5, 0.0);
+    lee_case_free(&low);
+    lee_case high =
+        read_case(state, LAKE
+                  "wind: {speed: 100 m/s, from: 360 degree, height: 200 m}\n"
+                  "stress: {air_temperature: 60 degC, air_pressure: 1100 hPa,\n"
+                  "  drag_cap: 0.02}\n"
+                  "uncertainty: {wind: 0.9, depth: 100 m, bed: 0.9}\n"
+                  "solver: {cells: 100000, step: 86400 s}\n");
+    assert_near(high.problem.air.temperature, 333.15, 1e-10);
+    assert_near(high.problem.exposure.height, 200.0, 0.0);
+    lee_case_free(&high);
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         CASE_TEST(an_unknown_key_is_told_with_the_nearest_known),
@@ -459,6 +496,8 @@ int main(void) {
         CASE_TEST(twenty_problems_are_told_and_the_rest_counted),
         CASE_TEST(long_problems_are_told_in_whole_lines),
         CASE_TEST(a_damaged_case_is_read_or_refused_with_a_message),
+        CASE_TEST(one_problem_more_than_twenty_is_one_problem),
+        CASE_TEST(what_stands_at_the_limit_of_a_key_is_taken),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

@@ -303,6 +303,56 @@ static void a_maximum_needs_its_averaging(void **state) {
     lee_case_free(&c);
 }
 
+#define RECORD "wind: {record: wind.csv, "
+
+static const char two_samples[] = "time,speed [m/s],from [degree]\n"
+                                  "2031-01-01T00:00Z,8,250\n"
+                                  "2031-01-01T01:00Z,9,250\n";
+
+static void each_word_for_a_stamp_means_its_stamp(void **state) {
+    static const struct {
+        const char *text;
+        lee_stamp stamp;
+    } words[] = {
+        {LAKE RECORD "stamp: instant}\n", LEE_STAMP_INSTANT},
+        {LAKE RECORD "stamp: start}\n",   LEE_STAMP_START  },
+        {LAKE RECORD "stamp: middle}\n",  LEE_STAMP_MIDDLE },
+        {LAKE RECORD "stamp: end}\n",     LEE_STAMP_END    },
+    };
+    (void)folder_write(*state, "wind.csv", two_samples);
+    for (size_t i = 0; i < sizeof words / sizeof words[0]; i++) {
+        lee_case c = read_case(state, words[i].text);
+        assert_int_equal(c.problem.wind.record.stamp, words[i].stamp);
+        lee_case_free(&c);
+    }
+}
+
+static void
+a_gap_of_a_leap_year_may_be_bridged_and_no_longer_one(void **state) {
+    (void)folder_write(*state, "wind.csv", two_samples);
+    lee_case c = read_case(state, LAKE RECORD "largest_gap: 8784 h}\n");
+    assert_int_equal(c.problem.wind.gap.largest, (int64_t)366 * 86400);
+    lee_case_free(&c);
+    assert_told(state, LAKE RECORD "largest_gap: 8785 h}\n",
+                "a.yaml:4:39: 'wind.largest_gap' is '8785 h'; expected 0 to "
+                "8784 h");
+}
+
+static void an_hour_needs_the_date_it_belongs_to(void **state) {
+    assert_told(state, LAKE RECORD "time: time, hour: 3}\n",
+                "a.yaml:4:38: 'hour' needs 'year', which is missing from "
+                "'wind'");
+}
+
+static void a_clock_and_an_hour_exclude_each_other(void **state) {
+    assert_told(state,
+                LAKE RECORD "date: date, clock: clock, year: y, month: m, "
+                            "day: d, hour: h}\n",
+                "a.yaml:4:52: 'date' and 'year' exclude each other in 'wind'\n"
+                "a.yaml:4:79: 'clock' and 'hour' exclude each other in "
+                "'wind'");
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         CASE_TEST(one_wind_is_given_outright),
@@ -327,6 +377,10 @@ int main(void) {
         CASE_TEST(a_wind_over_water_is_the_default),
         CASE_TEST(a_height_factor_goes_with_its_method),
         CASE_TEST(a_maximum_needs_its_averaging),
+        CASE_TEST(each_word_for_a_stamp_means_its_stamp),
+        CASE_TEST(a_gap_of_a_leap_year_may_be_bridged_and_no_longer_one),
+        CASE_TEST(an_hour_needs_the_date_it_belongs_to),
+        CASE_TEST(a_clock_and_an_hour_exclude_each_other),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

@@ -188,6 +188,24 @@ static void json_holds_the_counts_and_the_gaps(void **state) {
     json_decref(root);
 }
 
+static void five_gaps_are_listed_and_no_more_is_said(void **state) {
+    (void)state;
+    checked all;
+    lee_wind_gap gap[6];
+    make_check(&all);
+    for (size_t i = 0; i < 6; i++) {
+        const int64_t after = made_day + 86400 * (int64_t)i;
+        gap[i] = (lee_wind_gap){after, after + 7200, false};
+    }
+    all.check.record.gap = gap;
+    all.check.record.gap_count = 5;
+    assert_lacks(printed(&all), "more\n");
+    capture_free(&all.out);
+    all.check.record.gap_count = 6;
+    assert_contains(printed(&all), "and 1 more\n");
+    capture_free(&all.out);
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(the_lake_is_told_by_axis_bed_width_and_volume),
@@ -199,6 +217,7 @@ int main(void) {
         cmocka_unit_test(each_station_tells_its_bed),
         cmocka_unit_test(a_storm_is_told_by_its_shape),
         cmocka_unit_test(json_holds_the_counts_and_the_gaps),
+        cmocka_unit_test(five_gaps_are_listed_and_no_more_is_said),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

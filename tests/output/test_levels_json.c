@@ -195,6 +195,29 @@ static void warnings_and_remarks_are_lists_of_sentences(void **state) {
     json_decref(root);
 }
 
+static void a_level_that_may_fall_dry_gives_no_reason(void **state) {
+    (void)state;
+    hand_made made;
+    make(&made);
+    made.level[0].level.low = (double)NAN;
+    json_t *root = steady_of(&made);
+    json_t *station = item(item(root, "winds", 0), "stations", 0);
+    assert_near(number(station, "level_m"), 100.95, 1e-6);
+    assert_true(json_is_null(item(station, "range_m", 0)));
+    assert_null(json_object_get(station, "reason"));
+    json_decref(root);
+}
+
+static void a_direction_is_told_from_0_to_360_degrees(void **state) {
+    (void)state;
+    hand_made made;
+    make(&made);
+    made.wind[0].wind.from = degrees(-10.0);
+    json_t *root = steady_of(&made);
+    assert_near(number(item(root, "winds", 0), "from_degree"), 350.0, 1e-6);
+    json_decref(root);
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(every_summary_says_what_it_comes_from),
@@ -206,6 +229,8 @@ int main(void) {
         cmocka_unit_test(an_own_error_that_was_left_out_is_null_with_a_reason),
         cmocka_unit_test(names_that_are_not_utf8_still_give_valid_json),
         cmocka_unit_test(warnings_and_remarks_are_lists_of_sentences),
+        cmocka_unit_test(a_level_that_may_fall_dry_gives_no_reason),
+        cmocka_unit_test(a_direction_is_told_from_0_to_360_degrees),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

@@ -232,6 +232,12 @@ static void text_that_cannot_be_written_is_a_file_error(void **state) {
     (void)fclose(full);
 }
 
+static void two_days_are_days(void **state) {
+    (void)state;
+    assert_string_equal(lee_show_duration(48.0 * 3600.0).text, "2 d");
+    assert_string_equal(lee_show_duration(47.0 * 3600.0).text, "47 h");
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(levels_are_shown_to_the_millimetre),
@@ -259,6 +265,7 @@ int main(void) {
         cmocka_unit_test(a_word_longer_than_the_line_stays_whole),
         cmocka_unit_test(an_empty_list_of_notes_has_no_heading),
         cmocka_unit_test(text_that_cannot_be_written_is_a_file_error),
+        cmocka_unit_test(two_days_are_days),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

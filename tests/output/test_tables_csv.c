@@ -141,7 +141,7 @@ static void a_title_of_two_lines_stays_in_its_head_line(void **state) {
     place here;
     char text[8192];
     make(&made);
-    (void)word(&made, 3, "January\ngale");
+    (void)word(&made, 3, "January\x1Fgale");
     place_open(&here);
     write_run(&here, &made, false);
     read_back(&here, sizeof text, text);
@@ -271,6 +271,14 @@ static void another_name_of_a_file_the_case_reads_is_no_target(void **state) {
     place_close(&here);
 }
 
+static void an_ending_alone_is_no_name(void **state) {
+    (void)state;
+    hand_made made;
+    make(&made);
+    assert_int_equal(lee_check_target(".csv", false, &made.from, NULL),
+                     LEE_ERR_ARGUMENT);
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(the_head_says_case_datum_method_and_caution),
@@ -286,6 +294,7 @@ int main(void) {
         cmocka_unit_test(a_target_in_no_folder_is_refused_ahead),
         cmocka_unit_test(a_file_the_case_reads_is_no_target_even_forced),
         cmocka_unit_test(another_name_of_a_file_the_case_reads_is_no_target),
+        cmocka_unit_test(an_ending_alone_is_no_name),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

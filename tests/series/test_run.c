@@ -423,6 +423,114 @@ static void a_steady_start_between_two_held_ends_is_refused(void **state) {
     lee_problem_free(&problem);
 }
 
+static void a_given_wind_of_less_than_a_minute_is_refused(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    lee_run_result result;
+    lee_error error = {0};
+    blow(&problem, 10.0, from_west, 59.0);
+    assert_int_equal(lee_estimate_run(&problem, &plain, &result, &error),
+                     LEE_ERR_DATA);
+    assert_non_null(strstr(error.message, "a duration of at least 1 min"));
+    lee_problem_free(&problem);
+}
+
+static void a_window_behind_a_gap_is_one_piece(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    record_with_a_hole(&problem, 72, 12);
+    problem.wind.gap.split = true;
+    problem.run.has_from = true;
+    problem.run.from = (int64_t)50 * 3600; /* the hole ends at 48 h */
+    lee_run_result result = run(&problem, &plain);
+    assert_int_equal(result.pieces, 1);
+    assert_int_equal(result.time[0], 50 * 3600);
+    lee_run_result_free(&result);
+    lee_problem_free(&problem);
+}
+
+static void a_window_from_the_last_sample_on_is_refused(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    record_with_a_hole(&problem, 72, 0);
+    problem.run.has_from = true;
+    problem.run.from = (int64_t)71 * 3600;
+    lee_run_result result;
+    lee_error error = {0};
+    assert_int_equal(lee_estimate_run(&problem, &plain, &result, &error),
+                     LEE_ERR_DATA);
+    assert_non_null(strstr(error.message, "is outside the wind record"));
+    lee_problem_free(&problem);
+}
+
+static void minutely_wind_gives_levels_every_ten_minutes(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    record_with_a_hole(&problem, 61, 0);
+    for (size_t i = 0; i < 61; i++) {
+        problem.wind.record.time[i] = (int64_t)i * 60;
+    }
+    lee_run_result result = run(&problem, &plain);
+    assert_int_equal(result.n, 7);
+    assert_int_equal(result.time[1] - result.time[0], 600);
+    lee_run_result_free(&result);
+    lee_problem_free(&problem);
+}
+
+static bool warns_of(const lee_run_result *result, const char *words) {
+    bool warns = false;
+    for (size_t i = 0; i < result->warnings.n; i++) {
+        warns = warns || strstr(result->warnings.text[i], words) != NULL;
+    }
+    return warns;
+}
+
+/* Weak wind: the error is over 1 % of the level and yet under 2 mm. */
+static void an_own_error_under_two_millimetres_is_no_warning(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    problem.bed = (lee_bed_law){LEE_BED_MANNING, 0.025};
+    problem.solver.cells = 40;
+    problem.solver.step = 100.0;
+    blow(&problem, 4.0, from_west, 4.0 * 3600.0);
+    const lee_run_options judged = {.has_own_error = true};
+    lee_run_result result = run(&problem, &judged);
+    assert_true(result.numerical_error < 2e-3);
+    assert_true(result.numerical_error > 0.01 * result.station[2].max.value);
+    assert_false(warns_of(&result, "own numerical error"));
+    lee_run_result_free(&result);
+    lee_problem_free(&problem);
+}
+
+static void a_given_wind_ends_with_its_duration(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    problem.run.every = 300;
+    blow(&problem, 10.0, from_west, 3600.0);
+    lee_run_result result = run(&problem, &plain);
+    assert_near(result.speed[11], 10.0, 1e-12); /* 55 min; rounding */
+    assert_near(result.speed[13], 0.0, 0.0);    /* 65 min */
+    lee_run_result_free(&result);
+    lee_problem_free(&problem);
+}
+
+static void
+means_of_three_hours_smooth_peaks_and_longer_ones_hide_them(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    record_with_a_hole(&problem, 72, 0);
+    problem.exposure.averaging = 3.0 * 3600.0;
+    lee_run_result three = run(&problem, &plain);
+    problem.exposure.averaging = 3.1 * 3600.0;
+    lee_run_result longer = run(&problem, &plain);
+    assert_true(warns_of(&three, "peaks are smoothed, "));
+    assert_false(warns_of(&three, "SMOOTHED AWAY"));
+    assert_true(warns_of(&longer, "SMOOTHED AWAY"));
+    lee_run_result_free(&three);
+    lee_run_result_free(&longer);
+    lee_problem_free(&problem);
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(a_sudden_wind_overshoots_to_twice_the_steady_rise),
@@ -445,6 +553,14 @@ int main(void) {
         cmocka_unit_test(a_linear_law_holds_thin_water_over_a_sill),
         cmocka_unit_test(two_held_ends_let_water_through),
         cmocka_unit_test(a_steady_start_between_two_held_ends_is_refused),
+        cmocka_unit_test(a_given_wind_of_less_than_a_minute_is_refused),
+        cmocka_unit_test(a_window_behind_a_gap_is_one_piece),
+        cmocka_unit_test(a_window_from_the_last_sample_on_is_refused),
+        cmocka_unit_test(minutely_wind_gives_levels_every_ten_minutes),
+        cmocka_unit_test(an_own_error_under_two_millimetres_is_no_warning),
+        cmocka_unit_test(a_given_wind_ends_with_its_duration),
+        cmocka_unit_test(
+            means_of_three_hours_smooth_peaks_and_longer_ones_hide_them),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

@@ -279,6 +279,87 @@ static void a_depth_uncertainty_that_empties_the_lake_is_refused(void **state) {
     lee_problem_free(&problem);
 }
 
+static void hold(lee_end *end, double level) {
+    end->is_held = true;
+    assert_int_equal(lee_level_constant(level, &end->level, NULL), LEE_OK);
+}
+
+static void
+without_wind_a_lake_stands_at_the_level_its_end_is_held(void **state) {
+    (void)state;
+    for (int side = 0; side < 2; side++) {
+        lee_problem problem = even_lake(length, depth);
+        hold(side == 0 ? &problem.lake.start : &problem.lake.end, 0.25);
+        blow(&problem, 0.0, from_west, NAN);
+        lee_steady_result result;
+        assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+        for (size_t i = 0; i < LAKE_STATIONS; i++) {
+            /* solver tolerance, m */
+            assert_near(result.wind[0].station[i].level.value, 0.25, 1e-7);
+        }
+        lee_steady_result_free(&result);
+        lee_problem_free(&problem);
+    }
+}
+
+/* A pond of 1 km and one of 10 km, 4 m deep, a dam 3 m high between them. */
+static lee_problem two_ponds(void) {
+    static const double rows[][2] = {
+        {0.0,    -4.0},
+        {1e3,    -4.0},
+        {1.1e3,  3.0 },
+        {1.2e3,  -4.0},
+        {11.2e3, -4.0},
+    };
+    enum { ROWS = sizeof rows / sizeof rows[0] };
+    lee_problem problem = even_lake(length, depth);
+    lee_profile *profile = &problem.lake.profile;
+    lee_profile_free(profile);
+    assert_int_equal(lee_profile_init(profile, ROWS, NULL), LEE_OK);
+    for (size_t i = 0; i < ROWS; i++) {
+        profile->chainage[i] = rows[i][0];
+        profile->bed[i] = rows[i][1];
+        profile->width[i] = 1000.0;
+        profile->bearing[i] = lake_east;
+    }
+    problem.station[2].at = rows[ROWS - 1][0];
+    return problem;
+}
+
+static void the_range_of_a_pond_is_its_own(void **state) {
+    (void)state;
+    lee_problem problem = two_ponds();
+    blow(&problem, 15.0, from_west, NAN);
+    lee_steady_result result;
+    assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+    const lee_wind_estimate *wind = &result.wind[0];
+    assert_int_equal(wind->water_count, 2);
+    /* a tenth of the fetch, about a tenth of the tilt */
+    assert_true(wind->water[0].tilt.high < 0.5 * wind->water[1].tilt.low);
+    lee_steady_result_free(&result);
+    lee_problem_free(&problem);
+}
+
+static void a_still_water_of_two_levels_says_which_is_used(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    lee_level_series *pool = &problem.lake.still_water;
+    lee_level_series_free(pool);
+    *pool = (lee_level_series){.n = 2,
+                               .time = calloc(2, sizeof *pool->time),
+                               .level = calloc(2, sizeof *pool->level)};
+    assert_non_null(pool->time);
+    assert_non_null(pool->level);
+    pool->time[1] = 86400;
+    pool->level[0] = 0.1;
+    blow(&problem, 20.0, from_west, NAN);
+    lee_steady_result result;
+    assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+    assert_true(has_warning(&result.warnings, "its first level, 0.100 m"));
+    lee_steady_result_free(&result);
+    lee_problem_free(&problem);
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(a_west_wind_raises_the_east_wall_by_the_parabola),
@@ -298,6 +379,10 @@ int main(void) {
         cmocka_unit_test(a_problem_without_given_winds_is_refused),
         cmocka_unit_test(a_lake_without_water_is_refused),
         cmocka_unit_test(a_depth_uncertainty_that_empties_the_lake_is_refused),
+        cmocka_unit_test(
+            without_wind_a_lake_stands_at_the_level_its_end_is_held),
+        cmocka_unit_test(the_range_of_a_pond_is_its_own),
+        cmocka_unit_test(a_still_water_of_two_levels_says_which_is_used),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

@@ -157,6 +157,51 @@ static void the_residual_is_looked_for_in_its_window_only(void **state) {
     lee_watch_free(&watch);
 }
 
+static void see_these(lee_watch *watch, size_t count, const double level[],
+                      size_t spun_up) {
+    const lee_station station = {.at = 0.0};
+    assert_int_equal(lee_watch_init(1, &station, watch, NULL), LEE_OK);
+    for (size_t i = 0; i < count; i++) {
+        lee_watch_see(watch, 600.0 * (double)i, &level[i], i >= spun_up);
+    }
+}
+
+static void a_highest_level_that_lasts_is_told_with_its_begin(void **state) {
+    (void)state;
+    const double level[] = {1.0, 3.0, 3.0, 1.0, 1.0};
+    lee_watch watch;
+    see_these(&watch, 5, level, 0);
+    assert_near(watch.station[0].max_time, 600.0, 0.0);
+    assert_near(watch.station[0].min_time, 0.0, 0.0);
+    lee_watch_free(&watch);
+}
+
+static void a_spin_up_is_no_dry_time(void **state) {
+    (void)state;
+    const double level[] = {(double)NAN, (double)NAN, (double)NAN};
+    lee_watch watch;
+    see_these(&watch, 3, level, 1);
+    assert_near(watch.station[0].dry_time, 600.0, 0.0);
+    lee_watch_free(&watch);
+}
+
+static void a_level_after_the_window_is_no_residual(void **state) {
+    (void)state;
+    const lee_station station = {.at = 0.0};
+    const double level[] = {5.0, 1.2, 1.1, 7.0};
+    lee_watch watch;
+    assert_int_equal(lee_watch_init(1, &station, &watch, NULL), LEE_OK);
+    watch.still_water = 1.0;
+    watch.residual_from = 600.0;
+    watch.residual_to = 1200.0;
+    for (size_t i = 0; i < 4; i++) {
+        lee_watch_see(&watch, 600.0 * (double)i, &level[i], true);
+    }
+    assert_near(watch.station[0].residual, 0.2, 1e-15); /* rounding */
+    assert_near(watch.station[0].residual_time, 600.0, 0.0);
+    lee_watch_free(&watch);
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(the_first_crossing_is_linear_between_sights),
@@ -170,6 +215,9 @@ int main(void) {
         cmocka_unit_test(a_spin_up_is_judged_by_nothing),
         cmocka_unit_test(a_gap_parts_two_occasions),
         cmocka_unit_test(the_residual_is_looked_for_in_its_window_only),
+        cmocka_unit_test(a_highest_level_that_lasts_is_told_with_its_begin),
+        cmocka_unit_test(a_spin_up_is_no_dry_time),
+        cmocka_unit_test(a_level_after_the_window_is_no_residual),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }
