@@ -218,6 +218,17 @@ static void a_direction_is_told_from_0_to_360_degrees(void **state) {
     json_decref(root);
 }
 
+static void a_threshold_that_is_still_passed_has_no_return(void **state) {
+    (void)state;
+    hand_made made;
+    make(&made);
+    made.exceedance[0].has_returned = false;
+    json_t *root = run_of(&made);
+    json_t *seen = item(item(root, "stations", 1), "thresholds", 0);
+    assert_true(json_is_null(json_object_get(seen, "return_time")));
+    json_decref(root);
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(every_summary_says_what_it_comes_from),
@@ -231,6 +242,7 @@ int main(void) {
         cmocka_unit_test(warnings_and_remarks_are_lists_of_sentences),
         cmocka_unit_test(a_level_that_may_fall_dry_gives_no_reason),
         cmocka_unit_test(a_direction_is_told_from_0_to_360_degrees),
+        cmocka_unit_test(a_threshold_that_is_still_passed_has_no_return),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

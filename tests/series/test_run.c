@@ -531,6 +531,27 @@ means_of_three_hours_smooth_peaks_and_longer_ones_hide_them(void **state) {
     lee_problem_free(&problem);
 }
 
+static bool is_first_flagged(double before) {
+    lee_problem problem = even_lake(length, depth);
+    problem.wind.kind = LEE_WIND_STORM;
+    problem.wind.storm = (lee_storm){.peak = 10.0,
+                                     .from = from_west,
+                                     .rise = 6.0 * 3600.0,
+                                     .fall = 6.0 * 3600.0,
+                                     .before = before};
+    lee_run_result result = run(&problem, &plain);
+    const bool is_flagged = result.is_spin_up[0];
+    lee_run_result_free(&result);
+    lee_problem_free(&problem);
+    return is_flagged;
+}
+
+static void a_storm_out_of_calm_needs_no_spin_up(void **state) {
+    (void)state;
+    assert_false(is_first_flagged(0.0));
+    assert_true(is_first_flagged(5.0));
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(a_sudden_wind_overshoots_to_twice_the_steady_rise),
@@ -561,6 +582,7 @@ int main(void) {
         cmocka_unit_test(a_given_wind_ends_with_its_duration),
         cmocka_unit_test(
             means_of_three_hours_smooth_peaks_and_longer_ones_hide_them),
+        cmocka_unit_test(a_storm_out_of_calm_needs_no_spin_up),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

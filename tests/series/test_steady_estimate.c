@@ -360,6 +360,24 @@ static void a_still_water_of_two_levels_says_which_is_used(void **state) {
     lee_problem_free(&problem);
 }
 
+/* The strongest member dries the windward wall before the estimate does. */
+static void a_station_that_may_fall_dry_has_no_low_end(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(50e3, 1.0);
+    bool may_fall_dry = false;
+    for (double speed = 5.0; speed < 30.0 && !may_fall_dry; speed += 0.5) {
+        blow(&problem, speed, from_west, NAN);
+        lee_steady_result result;
+        assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+        const lee_ranged *level = &result.wind[0].station[0].level;
+        may_fall_dry = isnan(level->low);
+        assert_true(isfinite(level->value) != 0);
+        lee_steady_result_free(&result);
+    }
+    assert_true(may_fall_dry);
+    lee_problem_free(&problem);
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(a_west_wind_raises_the_east_wall_by_the_parabola),
@@ -383,6 +401,7 @@ int main(void) {
             without_wind_a_lake_stands_at_the_level_its_end_is_held),
         cmocka_unit_test(the_range_of_a_pond_is_its_own),
         cmocka_unit_test(a_still_water_of_two_levels_says_which_is_used),
+        cmocka_unit_test(a_station_that_may_fall_dry_has_no_low_end),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

@@ -202,6 +202,15 @@ static void a_level_after_the_window_is_no_residual(void **state) {
     lee_watch_free(&watch);
 }
 
+static void a_level_at_the_threshold_does_not_reach_it(void **state) {
+    (void)state;
+    const double at_two[SIGHTS] = {2.0, 2.0, 2.0, 2.0, 2.0, 2.0, 2.0};
+    lee_watch watch;
+    see_all(&watch, &above_two, at_two);
+    assert_false(watch.station[0].threshold[0].is_reached);
+    lee_watch_free(&watch);
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(the_first_crossing_is_linear_between_sights),
@@ -218,6 +227,7 @@ int main(void) {
         cmocka_unit_test(a_highest_level_that_lasts_is_told_with_its_begin),
         cmocka_unit_test(a_spin_up_is_no_dry_time),
         cmocka_unit_test(a_level_after_the_window_is_no_residual),
+        cmocka_unit_test(a_level_at_the_threshold_does_not_reach_it),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }
