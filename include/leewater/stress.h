@@ -15,6 +15,12 @@ double lee_water_density(double temperature);
  * p / (287.05 T) (common practice, gas constant of dry air in J kg-1 K-1). */
 double lee_air_density(double pressure, double temperature);
 
+/* Kinematic viscosity of dry air at temperature T (K), m2 s-1; -173 to 277
+ * degC, NaN outside:
+ *     1.326e-5 (1 + 6.542e-3 t + 8.301e-6 t^2 - 4.84e-9 t^3), t in degC
+ * Andreas (1989), CRREL Report 89-11 [andreas1989]. */
+double lee_air_viscosity(double temperature);
+
 /* Pressure at an altitude (m, -500 to 9000) in the standard atmosphere, Pa:
  *     p = 101325 (1 - 2.25577e-5 z)^5.25588
  * ISO 2533:1975, troposphere [iso2533]. NaN outside the range. */
@@ -25,7 +31,13 @@ typedef struct lee_drag_input {
     double speed;         /* neutral 10 m wind speed, m s-1, >= 0 */
     double air_density;   /* kg m-3                               */
     double water_density; /* kg m-3                               */
+    double gravity;       /* m s-2                                */
+    double air_viscosity; /* kinematic, m2 s-1                    */
 } lee_drag_input;
+
+/* Air of the standard atmosphere at sea level (1.225 kg m-3, 15 degC), fresh
+ * water of 1000 kg m-3, standard gravity; speed 0. */
+lee_drag_input lee_drag_input_default(void);
 
 /* One published drag relation: C10 of the neutral 10 m wind. */
 typedef struct lee_drag_relation {
@@ -39,6 +51,8 @@ typedef struct lee_drag_relation {
     bool is_from_memory;       /* coefficients not re-read in the source    */
     bool is_for_range;         /* takes part in the range of an estimate: one
                                   relation a paper                          */
+    bool is_solved; /* implicit: solved anew at each call, some hundred times
+                       slower than a formula; lee_drag_solve tables it      */
     double (*coefficient)(const lee_drag_input *in); /* C10, [1]            */
 } lee_drag_relation;
 
@@ -60,13 +74,33 @@ typedef struct lee_drag {
     size_t n;                          /* rows of the table, 0 for none     */
     double *speed;                     /* [n] m s-1, increasing             */
     double *coefficient;               /* [n] C10; linear between rows, held
-                                          and "extrapolated" outside        */
+                                          and "extrapolated" outside. Beside
+                                          a relation: the relation solved   */
     double cap;                        /* largest C10; INFINITY for none    */
+    double *bend;                      /* [n] or NULL: C10 in the middle to the
+                                          next row, above the line to it    */
+    size_t bins;                       /* of equal width over a solved table;
+                                          0: rows are searched              */
+    size_t *bin;                       /* [bins] last row at or below the
+                                          begin of each                     */
 } lee_drag;
 
 /* garratt-linear-1977 capped at 3.0e-3. */
 lee_drag lee_drag_default(void);
 void lee_drag_free(lee_drag *drag);
+
+/* A drag of its own like `drag`, quick to evaluate: an implicit relation is
+ * solved for the densities, gravity and viscosity of `fluids` into a table,
+ * from which lee_drag_coefficient reads C10 within 1e-6 of the solution,
+ * whatever the fluids it is called with then. Other drags are copied.
+ *
+ *   fluids  its speed is not used
+ *   solved  out: freed with lee_drag_free
+ *
+ * Errors: LEE_ERR_ARGUMENT when an implicit relation has no solution for
+ * these fluids; LEE_ERR_MEMORY. */
+lee_status lee_drag_solve(const lee_drag *drag, const lee_drag_input *fluids,
+                          lee_drag *solved, lee_error *error);
 
 /* C10 with its cap. NaN in, NaN out.
  *
@@ -84,16 +118,14 @@ char *lee_drag_describe(const lee_drag *drag, size_t size, char text[]);
  *
  *     tau = rho_air C10(|U|) |U| U
  *
- *   drag           C10
- *   air_density    kg m-3
- *   water_density  kg m-3, for relations given as a share of it
- *   wind           east, north, m s-1, at 10 m over open water
- *   stress         out: east, north; both NaN when either component of the
- *                  wind is; may alias wind
+ *   drag    C10
+ *   fluids  air and water; its speed is not used
+ *   wind    east, north, m s-1, at 10 m over open water
+ *   stress  out: east, north; both NaN when either component of the wind is;
+ *           may alias wind
  *
  * Source: definition of the drag coefficient (common practice). */
-void lee_wind_stress(const lee_drag *drag, double air_density,
-                     double water_density, const double wind[2],
-                     double stress[2]);
+void lee_wind_stress(const lee_drag *drag, const lee_drag_input *fluids,
+                     const double wind[2], double stress[2]);
 
 #endif

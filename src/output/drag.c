@@ -14,7 +14,10 @@ typedef double table_value(const lee_drag_table *table,
 
 static double thousandfold(const lee_drag_table *table,
                            const lee_drag_relation *relation, double speed) {
-    const lee_drag_input in = {speed, table->air_density, table->water_density};
+    lee_drag_input in = lee_drag_input_default();
+    in.speed = speed;
+    in.air_density = table->air_density;
+    in.water_density = table->water_density;
     return 1e3 * relation->coefficient(&in);
 }
 

@@ -44,7 +44,7 @@ static lee_status check_record(const lee_problem *problem,
 lee_status lee_check_problem(const lee_problem *problem,
                              lee_problem_check *check, lee_error *error) {
     *check = (lee_problem_check){0};
-    lee_setting setting;
+    lee_setting setting = {0};
     lee_status status = lee_exposure_check(&problem->exposure, error);
     if (status == LEE_OK) {
         const double begin = problem->wind.kind == LEE_WIND_RECORD
@@ -69,6 +69,7 @@ lee_status lee_check_problem(const lee_problem *problem,
         status = lee_record_tell(&check->record, &problem->wind.gap,
                                  &check->method.record, error);
     }
+    lee_setting_free(&setting);
     if (status != LEE_OK) {
         lee_problem_check_free(check);
     }

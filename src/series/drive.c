@@ -182,7 +182,7 @@ void lee_drive_pull(const lee_drive *drive, const double wind[2],
         in.speed = lee_setting_speed(drive->problem, drive->setting, speed);
         per_speed =
             drive->setting->return_flow * in.air_density *
-            lee_drag_coefficient(&drive->problem->drag, &in, NULL, NULL) *
+            lee_drag_coefficient(&drive->setting->drag, &in, NULL, NULL) *
             in.speed * in.speed / speed;
     } else if (speed > 0.0) {
         const double *column = drive->pull == LEE_PULL_LOW ? drive->table->low

@@ -349,6 +349,7 @@ lee_status lee_run_plan_init(const lee_problem *problem, lee_run_plan *plan,
 }
 
 void lee_run_plan_free(lee_run_plan *plan) {
+    lee_setting_free(&plan->setting);
     lee_run_wind_free(&plan->wind);
     free(plan->pull);
     free(plan->span);

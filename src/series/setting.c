@@ -3,8 +3,16 @@
 
 #include <math.h>
 #include <stdio.h>
+#include <stdlib.h>
 
 #include "base/constants.h"
+
+/* Of the standard atmosphere at sea level, K (ISO 2533:1975) [iso2533]. */
+static const double usual_air_temperature = 288.15;
+
+static double air_temperature(const lee_air *air) {
+    return isnan(air->temperature) ? usual_air_temperature : air->temperature;
+}
 
 double lee_air_density_of(const lee_air *air, double altitude, size_t size,
                           char text[]) {
@@ -17,7 +25,7 @@ double lee_air_density_of(const lee_air *air, double altitude, size_t size,
     const double height = isnan(altitude) ? 0.0 : altitude;
     const double pressure =
         has_pressure ? air->pressure : lee_standard_pressure(height);
-    const double temperature = has_temperature ? air->temperature : 288.15;
+    const double temperature = air_temperature(air);
     (void)snprintf(text, size, "dry air at %.1f hPa (%s) and %.1f degC (%s)",
                    pressure / 100.0,
                    has_pressure      ? "given"
@@ -60,6 +68,33 @@ static void settle_return_flow(const lee_problem *problem,
     setting->return_flow_high = highest_return_flow(problem, setting);
 }
 
+/* Solves the drag of the estimate and those of its range. */
+static lee_status settle_drags(const lee_problem *problem, lee_setting *setting,
+                               lee_error *error) {
+    size_t count = 0;
+    const lee_drag_relation *relation;
+    for (size_t i = 0; (relation = lee_drag_at(i)) != NULL; i++) {
+        count += relation->is_for_range ? 1 : 0;
+    }
+    setting->member = calloc(count, sizeof *setting->member);
+    if (setting->member == NULL) {
+        return lee_fail(error, LEE_ERR_MEMORY, "no room for %zu relations",
+                        count);
+    }
+    lee_status status =
+        lee_drag_solve(&problem->drag, &setting->fluids, &setting->drag, error);
+    for (size_t i = 0; status == LEE_OK && (relation = lee_drag_at(i)) != NULL;
+         i++) {
+        const lee_drag drag = {.relation = relation, .cap = problem->drag.cap};
+        if (relation->is_for_range) {
+            status = lee_drag_solve(&drag, &setting->fluids,
+                                    &setting->member[setting->member_count++],
+                                    error);
+        }
+    }
+    return status;
+}
+
 lee_status lee_setting_init(const lee_problem *problem, double time,
                             lee_setting *setting, lee_error *error) {
     const lee_lake *lake = &problem->lake;
@@ -74,6 +109,8 @@ lee_status lee_setting_init(const lee_problem *problem, double time,
         .air_density =
             lee_air_density_of(&problem->air, lake->altitude, sizeof how, how),
         .water_density = lake->water_density,
+        .gravity = lake->gravity,
+        .air_viscosity = lee_air_viscosity(air_temperature(&problem->air)),
     };
     setting->lake = lee_profile_summary(&lake->profile, setting->still_water);
     if (!(setting->lake.volume > 0.0)) {
@@ -89,7 +126,20 @@ lee_status lee_setting_init(const lee_problem *problem, double time,
         setting->end_level = lee_level_at(&lake->end.level, time);
     }
     settle_return_flow(problem, setting);
-    return LEE_OK;
+    const lee_status status = settle_drags(problem, setting, error);
+    if (status != LEE_OK) {
+        lee_setting_free(setting);
+    }
+    return status;
+}
+
+void lee_setting_free(lee_setting *setting) {
+    for (size_t i = 0; i < setting->member_count; i++) {
+        lee_drag_free(&setting->member[i]);
+    }
+    free(setting->member);
+    lee_drag_free(&setting->drag);
+    *setting = (lee_setting){0};
 }
 
 static double stress_of(const lee_problem *problem, const lee_setting *setting,
@@ -103,7 +153,7 @@ static double stress_of(const lee_problem *problem, const lee_setting *setting,
 
 double lee_setting_speed(const lee_problem *problem, const lee_setting *setting,
                          double measured) {
-    return lee_exposure_speed(&problem->exposure, &problem->drag,
+    return lee_exposure_speed(&problem->exposure, &setting->drag,
                               &setting->fluids, measured);
 }
 
@@ -128,15 +178,10 @@ lee_pull_range lee_setting_pull(const lee_problem *problem,
                                 const lee_setting *setting, double measured) {
     lee_pull_range range = {.low = INFINITY, .high = 0.0};
     range.main = setting->return_flow *
-                 stress_of(problem, setting, &problem->drag, measured);
-    widen(problem, setting, &problem->drag, measured, &range);
-    const lee_drag_relation *relation;
-    for (size_t i = 0; (relation = lee_drag_at(i)) != NULL; i++) {
-        if (relation->is_for_range) {
-            const lee_drag drag = {.relation = relation,
-                                   .cap = problem->drag.cap};
-            widen(problem, setting, &drag, measured, &range);
-        }
+                 stress_of(problem, setting, &setting->drag, measured);
+    widen(problem, setting, &setting->drag, measured, &range);
+    for (size_t i = 0; i < setting->member_count; i++) {
+        widen(problem, setting, &setting->member[i], measured, &range);
     }
     return range;
 }

@@ -16,11 +16,15 @@ static const double lee_lateral_depth_divisor = 1.2;
 /* Added to lambda at the high end of a range, [1] (docs/theory.md). */
 static const double lee_return_flow_margin = 0.1;
 
+/* Owns its drags. */
 typedef struct lee_setting {
     double still_water; /* m above the datum */
     lee_basin_summary lake;
     double gravity;
-    lee_drag_input fluids;   /* densities; its speed is not used */
+    lee_drag_input fluids;   /* air and water; its speed is not used */
+    lee_drag drag;           /* the problem's, solved ahead */
+    size_t member_count;     /* relations of the range, one a paper */
+    lee_drag *member;        /* [member_count] solved ahead */
     double return_flow;      /* lambda of the estimate */
     double return_flow_high; /* lambda at the high end of the range */
     bool return_flow_forced; /* to 1, by the relation or by an open end */
@@ -28,10 +32,12 @@ typedef struct lee_setting {
     double end_level;
 } lee_setting;
 
-/* Settles densities, lambda and levels at `time` (s since 1970).
- * Errors: LEE_ERR_DATA when the lake holds no water at its still level. */
+/* Settles densities, drags, lambda and levels at `time` (s since 1970).
+ * Errors: LEE_ERR_DATA when the lake holds no water at its still level;
+ * LEE_ERR_MEMORY. */
 lee_status lee_setting_init(const lee_problem *problem, double time,
                             lee_setting *setting, lee_error *error);
+void lee_setting_free(lee_setting *setting);
 
 /* 10 m wind speed over open water from a measured speed, by the problem's
  * exposure and drag. */

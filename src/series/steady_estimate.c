@@ -277,7 +277,7 @@ static lee_status tell_wind(const lee_problem *problem,
     tell_extremes(all, wind);
     lee_drag_input in = setting->fluids;
     in.speed = wind->speed;
-    wind->coefficient = lee_drag_coefficient(&problem->drag, &in, NULL, NULL);
+    wind->coefficient = lee_drag_coefficient(&setting->drag, &in, NULL, NULL);
     wind->stress =
         in.air_density * wind->coefficient * wind->speed * wind->speed;
     lee_status status = lee_setting_warn_of_drag(
@@ -357,7 +357,7 @@ lee_status lee_estimate_steady(const lee_problem *problem,
                         "list of winds, or speed and directions), not a "
                         "record or a storm");
     }
-    lee_setting setting;
+    lee_setting setting = {0};
     lee_status status = lee_exposure_check(&problem->exposure, error);
     if (status == LEE_OK) {
         status = lee_setting_init(problem, -INFINITY, &setting, error);
@@ -371,9 +371,12 @@ lee_status lee_estimate_steady(const lee_problem *problem,
     result->wind = calloc(result->count + 1, sizeof *result->wind);
     if (result->wind == NULL) {
         result->count = 0;
-        return lee_fail(error, LEE_ERR_MEMORY, "no room for the winds");
+        status = lee_fail(error, LEE_ERR_MEMORY, "no room for the winds");
     }
-    status = estimate_winds(problem, &setting, result, error);
+    if (status == LEE_OK) {
+        status = estimate_winds(problem, &setting, result, error);
+    }
+    lee_setting_free(&setting);
     if (status == LEE_OK) {
         status = warn_of_still_water(problem, result, error);
     }

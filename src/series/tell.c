@@ -137,7 +137,7 @@ lee_status lee_setting_tell(const lee_problem *problem,
                      method->return_flow_how);
     tell_bed(&problem->bed, sizeof method->bed, method->bed);
     method->correction_count =
-        lee_exposure_chain(&problem->exposure, &problem->drag, &setting->fluids,
+        lee_exposure_chain(&problem->exposure, &setting->drag, &setting->fluids,
                            measured, method->correction);
     return tell_range(problem, setting, measured, &method->range_members,
                       error);
@@ -151,7 +151,7 @@ lee_status lee_setting_warn_of_drag(const lee_problem *problem,
     in.speed = lee_setting_speed(problem, setting, measured);
     bool extrapolated = false;
     bool capped = false;
-    (void)lee_drag_coefficient(&problem->drag, &in, &extrapolated, &capped);
+    (void)lee_drag_coefficient(&setting->drag, &in, &extrapolated, &capped);
     lee_status status = LEE_OK;
     if (extrapolated) {
         status = lee_notes_add(

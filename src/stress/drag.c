@@ -6,6 +6,8 @@
 #include <stdlib.h>
 #include <string.h>
 
+#include "base/constants.h"
+
 lee_drag lee_drag_default(void) {
     return (lee_drag){
         .relation = lee_drag_find("garratt-linear-1977"),
@@ -13,9 +15,20 @@ lee_drag lee_drag_default(void) {
     };
 }
 
+lee_drag_input lee_drag_input_default(void) {
+    return (lee_drag_input){
+        .air_density = 1.225,
+        .water_density = 1000.0,
+        .gravity = lee_standard_gravity,
+        .air_viscosity = lee_air_viscosity(lee_celsius_zero + 15.0),
+    };
+}
+
 void lee_drag_free(lee_drag *drag) {
     free(drag->speed);
     free(drag->coefficient);
+    free(drag->bend);
+    free(drag->bin);
     *drag = (lee_drag){0};
 }
 
@@ -34,6 +47,18 @@ static size_t row_below(const lee_drag *drag, double speed) {
     return low;
 }
 
+/* The same in a solved table, where the bin says where to begin. */
+static size_t row_in_bin(const lee_drag *drag, double speed) {
+    const double *u = drag->speed;
+    const double width = u[drag->n - 1] / (double)drag->bins;
+    const size_t k = (size_t)(speed / width);
+    size_t row = drag->bin[k < drag->bins ? k : drag->bins - 1];
+    while (row + 2 < drag->n && u[row + 1] <= speed) {
+        row++;
+    }
+    return row;
+}
+
 static double from_table(const lee_drag *drag, double speed) {
     const double *u = drag->speed;
     const double *c = drag->coefficient;
@@ -43,15 +68,19 @@ static double from_table(const lee_drag *drag, double speed) {
     if (speed >= u[drag->n - 1]) {
         return c[drag->n - 1];
     }
-    const size_t i = row_below(drag, speed);
-    return c[i] + (c[i + 1] - c[i]) * (speed - u[i]) / (u[i + 1] - u[i]);
+    const size_t i =
+        drag->bins > 0 ? row_in_bin(drag, speed) : row_below(drag, speed);
+    const double share = (speed - u[i]) / (u[i + 1] - u[i]);
+    const double bend = drag->bend != NULL ? drag->bend[i] : 0.0;
+    return c[i] + share * (c[i + 1] - c[i] + 4.0 * (1.0 - share) * bend);
 }
 
 static double uncapped(const lee_drag *drag, const lee_drag_input *in) {
-    if (drag->relation != NULL) {
-        return drag->relation->coefficient(in);
+    if (drag->n > 0) {
+        return from_table(drag, in->speed);
     }
-    return drag->n > 0 ? from_table(drag, in->speed) : drag->constant;
+    return drag->relation != NULL ? drag->relation->coefficient(in)
+                                  : drag->constant;
 }
 
 static bool is_outside(double speed, double low, double high) {

@@ -4,201 +4,30 @@
  * differ between sources, docs/theory.md says which one stands here and why. */
 #include "leewater/stress.h"
 
-#include <math.h>
 #include <string.h>
 
 #include "base/text.h"
-
-/* Floor of the speed in relations that diverge or vanish at rest, m s-1: the
- * one of Large and Yeager (2009), taken over for the others. The stress of so
- * light a wind raises no lake. */
-static const double calm = 0.5;
+#include "stress/drag_formulas.h"
 
 /* Where "up to hurricane" ends: the speed at which one begins, m s-1 (12 on
  * the Beaufort scale; common practice). */
 #define HURRICANE 32.7
 
-/* Unlike fmax and fmin these keep NaN. */
-static double at_least(double floor, double speed) {
-    return speed < floor ? floor : speed;
-}
-
-static double at_most(double ceiling, double speed) {
-    return speed > ceiling ? ceiling : speed;
-}
-
-/* Most linear relations are printed as 1000 C10 = a + b U. */
-static double line(double a, double b, double speed) {
-    return (a + b * speed) * 1e-3;
-}
-
-/* C10 of a relation printed as friction velocity. */
-static double from_friction_velocity(double friction, double speed) {
-    const double ratio = friction / speed;
-    return ratio * ratio;
-}
-
-/* Stress as a share k U^2 of the water's density: k = low up to the speed
- * `start`, low + rise (1 - start/U)^2 above. */
-static double share_of_water(double low, double rise, double start,
-                             const lee_drag_input *in) {
-    const double gain = 1.0 - start / at_least(start, in->speed);
-    const double k = low + rise * gain * gain;
-    return k * in->water_density / in->air_density;
-}
-
-/* Van Dorn (1953) as Dean and Dalrymple print it. */
-static double van_dorn_1953(const lee_drag_input *in) {
-    return share_of_water(1.2e-6, 2.25e-6, 5.6, in);
-}
-
-/* Heaps (1965): constant, a line, constant again. */
-static double heaps_1965(const lee_drag_input *in) {
-    if (in->speed <= 5.0) {
-        return 0.565e-3;
-    }
-    return in->speed >= 19.22 ? 2.513e-3 : line(-0.12, 0.137, in->speed);
-}
-
-/* Smith and Banke (1975). */
-static double smith_banke_1975(const lee_drag_input *in) {
-    return line(0.63, 0.066, in->speed);
-}
-
-/* Garratt (1977): linear fit to the data of earlier authors. */
-static double garratt_linear_1977(const lee_drag_input *in) {
-    return line(0.75, 0.067, in->speed);
-}
-
-/* Garratt (1977): power law through the same data. It is zero at rest, where
- * a roughness is still wanted, so the speed has a floor. */
-static double garratt_power_1977(const lee_drag_input *in) {
-    return 0.51e-3 * pow(at_least(calm, in->speed), 0.46);
-}
-
-/* Amorocho and DeVries (1980): from one level to another about 12.5 m s-1. */
-static double amorocho_devries_1980(const lee_drag_input *in) {
-    return (1.04 + 1.5 / (1.0 + exp((12.5 - in->speed) / 1.56))) * 1e-3;
-}
-
-/* Smith (1980), eq. 14. */
-static double smith_1980(const lee_drag_input *in) {
-    return line(0.61, 0.063, in->speed);
-}
-
-/* Large and Pond (1981). The jump of 0.005e-3 at 11 m s-1 is the paper's. */
-static double large_pond_1981(const lee_drag_input *in) {
-    return in->speed < 11.0 ? 1.20e-3 : line(0.49, 0.065, in->speed);
-}
-
-/* Wu (1982): one line from breeze to hurricane. */
-static double wu_1982(const lee_drag_input *in) {
-    return line(0.80, 0.065, in->speed);
-}
-
-/* Wu (1982) held below 7.5 m s-1: found in programs, not in the paper. */
-static double wu_low_wind_1982(const lee_drag_input *in) {
-    return line(0.80, 0.065, at_least(7.5, in->speed));
-}
-
-/* Van Dorn (1953) as the Shore Protection Manual (1984), ch. 3, prints it. */
-static double van_dorn_spm_1984(const lee_drag_input *in) {
-    return share_of_water(1.1e-6, 2.5e-6, 7.2, in);
-}
-
-/* Trenberth, Large and Olson (1990): continuous at 1, 3 and 10 m s-1. */
-static double trenberth_1990(const lee_drag_input *in) {
-    const double u = in->speed;
-    if (u <= 1.0) {
-        return 2.18e-3;
-    }
-    if (u < 3.0) {
-        return (0.62 + 1.56 / u) * 1e-3;
-    }
-    return u < 10.0 ? 1.14e-3 : line(0.49, 0.065, u);
-}
-
-/* Anderson (1993). */
-static double anderson_1993(const lee_drag_input *in) {
-    return line(0.49, 0.071, in->speed);
-}
-
-/* Yelland and Taylor (1996). The light branch diverges at rest and is held
- * below 3 m s-1, where its data end. */
-static double yelland_taylor_1996(const lee_drag_input *in) {
-    const double u = at_least(3.0, in->speed);
-    if (u < 6.0) {
-        return (0.29 + 3.1 / u + 7.7 / (u * u)) * 1e-3;
-    }
-    return line(0.60, 0.070, u);
-}
-
-/* Yelland et al. (1998): corrected for the flow about the ship. */
-static double yelland_1998(const lee_drag_input *in) {
-    return line(0.50, 0.071, in->speed);
-}
-
-/* Wuest and Lorke (2003), light wind on lakes. It diverges at rest: held below
- * 0.1 m s-1, as programs for lakes do, at 0.06215. */
-static double wuest_lorke_low_2003(const lee_drag_input *in) {
-    return 0.0044 * pow(at_least(0.1, in->speed), -1.15);
-}
-
-/* Stand-in of programs for lakes for the implicit strong-wind law of Wuest
- * and Lorke (2003); not in the paper. A parabola: held beyond its top. */
-static double wuest_lorke_quadratic_2003(const lee_drag_input *in) {
-    const double top = 7.387e-5 / (2.0 * 7.12e-7);
-    const double u = at_most(top, in->speed);
-    return 6.605e-4 + u * (7.387e-5 - 7.12e-7 * u);
-}
-
-/* Large and Yeager (2004), eq. 6a, with the slope 1/13.09 = 0.0764 of its
- * parent fit. Diverges at rest: floored as in their paper of 2009. */
-static double large_yeager_2004(const lee_drag_input *in) {
-    const double u = at_least(calm, in->speed);
-    return (2.70 / u + 0.142 + 0.0764 * u) * 1e-3;
-}
-
-/* Large and Yeager (2009), eq. 11. The floor is the paper's. */
-static double large_yeager_2009(const lee_drag_input *in) {
-    const double u = at_least(calm, in->speed);
-    if (u >= 33.0) {
-        return 2.34e-3;
-    }
-    const double u6 = u * u * u * u * u * u;
-    return (2.7 / u + 0.142 + u / 13.09 - 3.14807e-10 * u6) * 1e-3;
-}
-
-/* Andreas, Mahrt and Vickers (2012): friction velocity as a hyperbola. Its
- * friction at rest is not zero, so C10 diverges there: floored speed. */
-static double andreas_2012(const lee_drag_input *in) {
-    const double u = at_least(calm, in->speed);
-    const double a = u - 8.271;
-    return from_friction_velocity(
-        0.239 + 0.0433 * (a + sqrt(0.120 * a * a + 0.181)), u);
-}
-
-/* The two asymptotes of that hyperbola, broken where they cross. */
-static double andreas_lines_2012(const lee_drag_input *in) {
-    const double u = at_least(calm, in->speed);
-    return from_friction_velocity(
-        u <= 8.271 ? 0.00513 + 0.0283 * u : -0.243 + 0.0583 * u, u);
-}
-
-/* Zijlema, van Vledder and Holthuijsen (2012). The parabola falls below zero
- * above 68 m s-1: held from 60 m s-1 on, the end of what it is meant for. */
-static double zijlema_2012(const lee_drag_input *in) {
-    const double x = at_most(60.0, in->speed) / 31.5;
-    return (0.55 + 2.97 * x - 1.49 * x * x) * 1e-3;
-}
+/* Winds of the composite of earlier measurements in Garratt (1977), m s-1. They
+ * stand for relations whose own range has not been read: an own choice. */
+#define COMPOSITE_FROM 4.0
+#define COMPOSITE_TO   21.0
 
 /* In order of publication. In the range of an estimate (is_for_range) stands
  * one relation a paper, in the form its paper supports best: no variants that
- * only programs know, none for light wind alone, and none fitted on set-up
- * itself, whose coefficient holds the return flow that the others leave to
- * lambda. The ranges of Trenberth et al. (1990) and Large and Yeager (2009)
- * end where their data do: at the end of Large and Pond's, and at the speed
- * from which the coefficient is held. */
+ * only programs know, none for light wind alone, no constant that was not
+ * fitted in its paper or was replaced by the same author, and none fitted on
+ * set-up itself, whose coefficient holds the return flow that the others leave
+ * to lambda (docs/decisions/0013). The ranges of Trenberth et al. (1990) and
+ * Large and Yeager (2009) end where their data do: at the end of Large and
+ * Pond's, and at the speed from which the coefficient is held.
+ *
+ * Every row gives every field: clang-format 14 dies of rows that differ. */
 static const lee_drag_relation relations[] = {
     {
      .name = "van-dorn-1953",
@@ -207,7 +36,34 @@ static const lee_drag_relation relations[] = {
      .speed_min = 0.0,
      .speed_max = 15.0,
      .includes_return_flow = true,
-     .coefficient = van_dorn_1953,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = false,
+     .coefficient = lee_c10_van_dorn_1953,
+     },
+    {
+     .name = "charnock-rough-1955",
+     .paper = "charnock1955",
+     .source = "Charnock (1955), Q. J. R. Met. Soc. 81, 639, alpha 0.0120",
+     .speed_min = COMPOSITE_FROM,
+     .speed_max = COMPOSITE_TO,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = true,
+     .coefficient = lee_c10_charnock_rough_1955,
+     },
+    {
+     .name = "charnock-smooth-1955",
+     .paper = "charnock1955",
+     .source = "Charnock (1955), alpha 0.0120; smooth flow of Smith (1988)",
+     .speed_min = COMPOSITE_FROM,
+     .speed_max = COMPOSITE_TO,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = true,
+     .coefficient = lee_c10_charnock_smooth_1955,
      },
     {
      .name = "heaps-1965",
@@ -217,7 +73,9 @@ static const lee_drag_relation relations[] = {
      .speed_max = HURRICANE,
      .includes_return_flow = true,
      .is_from_memory = true,
-     .coefficient = heaps_1965,
+     .is_for_range = false,
+     .is_solved = false,
+     .coefficient = lee_c10_heaps_1965,
      },
     {
      .name = "smith-banke-1975",
@@ -225,8 +83,11 @@ static const lee_drag_relation relations[] = {
      .source = "Smith and Banke (1975), Q. J. R. Met. Soc. 101, 665-673",
      .speed_min = 3.0,
      .speed_max = 21.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
      .is_for_range = true,
-     .coefficient = smith_banke_1975,
+     .is_solved = false,
+     .coefficient = lee_c10_smith_banke_1975,
      },
     {
      .name = "garratt-linear-1977",
@@ -234,8 +95,11 @@ static const lee_drag_relation relations[] = {
      .source = "Garratt (1977), Mon. Wea. Rev. 105, 915-929, linear fit",
      .speed_min = 4.0,
      .speed_max = 21.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
      .is_for_range = true,
-     .coefficient = garratt_linear_1977,
+     .is_solved = false,
+     .coefficient = lee_c10_garratt_linear_1977,
      },
     {
      .name = "garratt-power-1977",
@@ -243,7 +107,35 @@ static const lee_drag_relation relations[] = {
      .source = "Garratt (1977), Mon. Wea. Rev. 105, 915-929, power law",
      .speed_min = 4.0,
      .speed_max = 21.0,
-     .coefficient = garratt_power_1977,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = false,
+     .coefficient = lee_c10_garratt_power_1977,
+     },
+    {
+     .name = "garratt-rough-1977",
+     .paper = "garratt1977",
+     .source = "Garratt (1977), alpha 0.0144, kappa 0.41",
+     .speed_min = 4.0,
+     .speed_max = 21.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = true,
+     .coefficient = lee_c10_garratt_rough_1977,
+     },
+    {
+     .name = "garratt-smooth-1977",
+     .paper = "garratt1977",
+     .source = "Garratt (1977), alpha 0.0144; smooth flow of Smith (1988)",
+     .speed_min = 4.0,
+     .speed_max = 21.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = true,
+     .coefficient = lee_c10_garratt_smooth_1977,
      },
     {
      .name = "amorocho-devries-1980",
@@ -251,8 +143,11 @@ static const lee_drag_relation relations[] = {
      .source = "Amorocho and DeVries (1980), J. Geophys. Res. 85(C1), 433",
      .speed_min = 0.0,
      .speed_max = 40.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
      .is_for_range = true,
-     .coefficient = amorocho_devries_1980,
+     .is_solved = false,
+     .coefficient = lee_c10_amorocho_devries_1980,
      },
     {
      .name = "smith-1980",
@@ -260,8 +155,59 @@ static const lee_drag_relation relations[] = {
      .source = "Smith (1980), J. Phys. Oceanogr. 10, 709-726, eq. 14",
      .speed_min = 6.0,
      .speed_max = 22.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
      .is_for_range = true,
-     .coefficient = smith_1980,
+     .is_solved = false,
+     .coefficient = lee_c10_smith_1980,
+     },
+    {
+     .name = "smith-rough-1980",
+     .paper = "smith1980",
+     .source = "Smith (1980), alpha 0.018",
+     .speed_min = 6.0,
+     .speed_max = 22.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = true,
+     .coefficient = lee_c10_smith_rough_1980,
+     },
+    {
+     .name = "smith-smooth-1980",
+     .paper = "smith1980",
+     .source = "Smith (1980), alpha 0.018; smooth flow of Smith (1988)",
+     .speed_min = 6.0,
+     .speed_max = 22.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = true,
+     .coefficient = lee_c10_smith_smooth_1980,
+     },
+    {
+     .name = "wu-rough-1980",
+     .paper = "wu1980",
+     .source = "Wu (1980), J. Phys. Oceanogr. 10, 727-740, alpha 0.0185",
+     .speed_min = COMPOSITE_FROM,
+     .speed_max = COMPOSITE_TO,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = true,
+     .coefficient = lee_c10_wu_rough_1980,
+     },
+    {
+     .name = "wu-smooth-1980",
+     .paper = "wu1980",
+     .source = "Wu (1980), alpha 0.0185; smooth flow of Smith (1988)",
+     .speed_min = COMPOSITE_FROM,
+     .speed_max = COMPOSITE_TO,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = true,
+     .coefficient = lee_c10_wu_smooth_1980,
      },
     {
      .name = "large-pond-1981",
@@ -269,8 +215,11 @@ static const lee_drag_relation relations[] = {
      .source = "Large and Pond (1981), J. Phys. Oceanogr. 11, 324-336",
      .speed_min = 4.0,
      .speed_max = 25.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
      .is_for_range = true,
-     .coefficient = large_pond_1981,
+     .is_solved = false,
+     .coefficient = lee_c10_large_pond_1981,
      },
     {
      .name = "wu-1982",
@@ -278,8 +227,11 @@ static const lee_drag_relation relations[] = {
      .source = "Wu (1982), J. Geophys. Res. 87(C12), 9704-9706",
      .speed_min = 1.0,
      .speed_max = HURRICANE,
+     .includes_return_flow = false,
+     .is_from_memory = false,
      .is_for_range = true,
-     .coefficient = wu_1982,
+     .is_solved = false,
+     .coefficient = lee_c10_wu_1982,
      },
     {
      .name = "wu-low-wind-1982",
@@ -287,7 +239,11 @@ static const lee_drag_relation relations[] = {
      .source = "Wu (1982), held below 7.5 m/s; not so in the paper",
      .speed_min = 1.0,
      .speed_max = HURRICANE,
-     .coefficient = wu_low_wind_1982,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = false,
+     .coefficient = lee_c10_wu_low_wind_1982,
      },
     {
      .name = "van-dorn-spm-1984",
@@ -297,7 +253,33 @@ static const lee_drag_relation relations[] = {
      .speed_max = 15.0,
      .includes_return_flow = true,
      .is_from_memory = true,
-     .coefficient = van_dorn_spm_1984,
+     .is_for_range = false,
+     .is_solved = false,
+     .coefficient = lee_c10_van_dorn_spm_1984,
+     },
+    {
+     .name = "smith-rough-1988",
+     .paper = "smith1988",
+     .source = "Smith (1988), J. Geophys. Res. 93(C12), 15467, alpha 0.011",
+     .speed_min = 6.0,
+     .speed_max = 22.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = true,
+     .coefficient = lee_c10_smith_rough_1988,
+     },
+    {
+     .name = "smith-smooth-1988",
+     .paper = "smith1988",
+     .source = "Smith (1988), J. Geophys. Res. 93(C12), 15467-15472",
+     .speed_min = 6.0,
+     .speed_max = 22.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = true,
+     .coefficient = lee_c10_smith_smooth_1988,
      },
     {
      .name = "trenberth-1990",
@@ -305,8 +287,11 @@ static const lee_drag_relation relations[] = {
      .source = "Trenberth et al. (1990), J. Phys. Oceanogr. 20, 1742-1760",
      .speed_min = 0.0,
      .speed_max = 25.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
      .is_for_range = true,
-     .coefficient = trenberth_1990,
+     .is_solved = false,
+     .coefficient = lee_c10_trenberth_1990,
      },
     {
      .name = "anderson-1993",
@@ -314,9 +299,11 @@ static const lee_drag_relation relations[] = {
      .source = "Anderson (1993), J. Phys. Oceanogr. 23, 2153-2161",
      .speed_min = 4.5,
      .speed_max = 21.0,
+     .includes_return_flow = false,
      .is_from_memory = true,
      .is_for_range = true,
-     .coefficient = anderson_1993,
+     .is_solved = false,
+     .coefficient = lee_c10_anderson_1993,
      },
     {
      .name = "yelland-taylor-1996",
@@ -324,8 +311,11 @@ static const lee_drag_relation relations[] = {
      .source = "Yelland and Taylor (1996), J. Phys. Oceanogr. 26, 541-558",
      .speed_min = 3.0,
      .speed_max = 26.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
      .is_for_range = true,
-     .coefficient = yelland_taylor_1996,
+     .is_solved = false,
+     .coefficient = lee_c10_yelland_taylor_1996,
      },
     {
      .name = "yelland-1998",
@@ -333,8 +323,59 @@ static const lee_drag_relation relations[] = {
      .source = "Yelland et al. (1998), J. Phys. Oceanogr. 28, 1511-1526",
      .speed_min = 6.0,
      .speed_max = 26.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
      .is_for_range = true,
-     .coefficient = yelland_1998,
+     .is_solved = false,
+     .coefficient = lee_c10_yelland_1998,
+     },
+    {
+     .name = "zeng-rough-1998",
+     .paper = "zeng1998",
+     .source = "Zeng et al. (1998), alpha 0.013, without its smooth flow",
+     .speed_min = COMPOSITE_FROM,
+     .speed_max = COMPOSITE_TO,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = true,
+     .coefficient = lee_c10_zeng_rough_1998,
+     },
+    {
+     .name = "zeng-smooth-1998",
+     .paper = "zeng1998",
+     .source = "Zeng et al. (1998), J. Climate 11, 2628-2644",
+     .speed_min = COMPOSITE_FROM,
+     .speed_max = COMPOSITE_TO,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = true,
+     .coefficient = lee_c10_zeng_smooth_1998,
+     },
+    {
+     .name = "fairall-2003",
+     .paper = "fairall2003",
+     .source = "Fairall et al. (2003), J. Climate 16, 571-591 (COARE 3.0)",
+     .speed_min = 0.0,
+     .speed_max = 20.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = true,
+     .is_solved = true,
+     .coefficient = lee_c10_fairall_2003,
+     },
+    {
+     .name = "wuest-lorke-2003",
+     .paper = "wuestlorke2003",
+     .source = "Wuest and Lorke (2003), both laws, met where they cross",
+     .speed_min = 0.1,
+     .speed_max = 25.0,
+     .includes_return_flow = false,
+     .is_from_memory = true,
+     .is_for_range = true,
+     .is_solved = true,
+     .coefficient = lee_c10_wuest_lorke_2003,
      },
     {
      .name = "wuest-lorke-low-2003",
@@ -342,7 +383,11 @@ static const lee_drag_relation relations[] = {
      .source = "Wuest and Lorke (2003), Annu. Rev. Fluid Mech. 35, 373-412",
      .speed_min = 0.1,
      .speed_max = 3.9,
-     .coefficient = wuest_lorke_low_2003,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = false,
+     .coefficient = lee_c10_wuest_lorke_low_2003,
      },
     {
      .name = "wuest-lorke-quadratic-2003",
@@ -350,7 +395,11 @@ static const lee_drag_relation relations[] = {
      .source = "Stand-in for the strong-wind law of Wuest and Lorke (2003)",
      .speed_min = 3.85,
      .speed_max = 25.0,
-     .coefficient = wuest_lorke_quadratic_2003,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = false,
+     .coefficient = lee_c10_wuest_lorke_quadratic_2003,
      },
     {
      .name = "large-yeager-2004",
@@ -358,8 +407,11 @@ static const lee_drag_relation relations[] = {
      .source = "Large and Yeager (2004), NCAR/TN-460+STR, eq. 6a",
      .speed_min = 0.5,
      .speed_max = 25.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
      .is_for_range = true,
-     .coefficient = large_yeager_2004,
+     .is_solved = false,
+     .coefficient = lee_c10_large_yeager_2004,
      },
     {
      .name = "large-yeager-2009",
@@ -367,8 +419,11 @@ static const lee_drag_relation relations[] = {
      .source = "Large and Yeager (2009), Clim. Dyn. 33, 341-364, eq. 11",
      .speed_min = 0.5,
      .speed_max = 33.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
      .is_for_range = true,
-     .coefficient = large_yeager_2009,
+     .is_solved = false,
+     .coefficient = lee_c10_large_yeager_2009,
      },
     {
      .name = "andreas-2012",
@@ -376,8 +431,11 @@ static const lee_drag_relation relations[] = {
      .source = "Andreas et al. (2012), J. Atmos. Sci. 69, 2520, hyperbola",
      .speed_min = 0.0,
      .speed_max = 25.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
      .is_for_range = true,
-     .coefficient = andreas_2012,
+     .is_solved = false,
+     .coefficient = lee_c10_andreas_2012,
      },
     {
      .name = "andreas-lines-2012",
@@ -385,7 +443,11 @@ static const lee_drag_relation relations[] = {
      .source = "Andreas et al. (2012), J. Atmos. Sci. 69, 2520, two lines",
      .speed_min = 0.0,
      .speed_max = 25.0,
-     .coefficient = andreas_lines_2012,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = false,
+     .is_solved = false,
+     .coefficient = lee_c10_andreas_lines_2012,
      },
     {
      .name = "zijlema-2012",
@@ -393,8 +455,23 @@ static const lee_drag_relation relations[] = {
      .source = "Zijlema et al. (2012), Coastal Eng. 65, 19-26",
      .speed_min = 0.0,
      .speed_max = 50.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
      .is_for_range = true,
-     .coefficient = zijlema_2012,
+     .is_solved = false,
+     .coefficient = lee_c10_zijlema_2012,
+     },
+    {
+     .name = "edson-2013",
+     .paper = "edson2013",
+     .source = "Edson et al. (2013), J. Phys. Oceanogr. 43 (COARE 3.5)",
+     .speed_min = 0.0,
+     .speed_max = 25.0,
+     .includes_return_flow = false,
+     .is_from_memory = false,
+     .is_for_range = true,
+     .is_solved = true,
+     .coefficient = lee_c10_edson_2013,
      },
 };
 

@@ -33,3 +33,11 @@ double lee_standard_pressure(double altitude) {
     }
     return 101325.0 * pow(1.0 - 2.25577e-5 * altitude, 5.25588);
 }
+
+double lee_air_viscosity(double temperature) {
+    const double t = temperature - lee_celsius_zero;
+    if (!(t >= -173.0 - rounding_of_units && t <= 277.0 + rounding_of_units)) {
+        return NAN;
+    }
+    return 1.326e-5 * (1.0 + t * (6.542e-3 + t * (8.301e-6 + t * -4.84e-9)));
+}

@@ -3,16 +3,12 @@
 
 #include <math.h>
 
-void lee_wind_stress(const lee_drag *drag, double air_density,
-                     double water_density, const double wind[2],
-                     double stress[2]) {
-    const lee_drag_input in = {
-        .speed = hypot(wind[0], wind[1]),
-        .air_density = air_density,
-        .water_density = water_density,
-    };
+void lee_wind_stress(const lee_drag *drag, const lee_drag_input *fluids,
+                     const double wind[2], double stress[2]) {
+    lee_drag_input in = *fluids;
+    in.speed = hypot(wind[0], wind[1]);
     const double c10 = lee_drag_coefficient(drag, &in, NULL, NULL);
-    const double per_wind = air_density * c10 * in.speed;
+    const double per_wind = fluids->air_density * c10 * in.speed;
     const double east = per_wind * wind[0];
     const double north = per_wind * wind[1];
     stress[0] = east;

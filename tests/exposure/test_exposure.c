@@ -4,7 +4,7 @@
 #include "leewater/exposure.h"
 
 static const double kappa = 0.40;
-static const lee_drag_input fluids = {0.0, 1.225, 1000.0};
+static const lee_drag_input fluids = {0.0, 1.225, 1000.0, 9.81, 1.5e-5};
 
 /* The iteration's own tolerance, and as much again for what it feeds. */
 static const double solved = 2e-10;
@@ -160,7 +160,7 @@ static void a_drag_that_is_missing_gives_no_speed(void **state) {
     (void)state;
     const lee_drag drag = by("van-dorn-1953");
     const lee_exposure exposure = over_water(5.0);
-    const lee_drag_input unknown = {0.0, NAN, 1000.0};
+    const lee_drag_input unknown = {0.0, NAN, 1000.0, 9.81, 1.5e-5};
     assert_true(isnan(lee_exposure_speed(&exposure, &drag, &unknown, 10.0)));
 }
 

@@ -89,7 +89,8 @@ static void the_high_end_is_the_strongest_relation_and_lambda(void **state) {
     double strongest = 1.5e-3;
     const lee_drag_relation *relation;
     for (size_t i = 0; (relation = lee_drag_at(i)) != NULL; i++) {
-        const lee_drag_input in = {speed, 1.25, 1000.0};
+        const lee_drag_input in = {speed, 1.25, 1000.0, 9.80665,
+                                   lee_air_viscosity(288.15)};
         if (relation->is_for_range) {
             strongest = fmax(strongest, relation->coefficient(&in));
         }

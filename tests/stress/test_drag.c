@@ -9,7 +9,7 @@
 static const double near_zero = 1e-15; /* a few roundings of a C10 */
 
 static lee_drag_input at(double speed) {
-    return (lee_drag_input){speed, 1.225, 1000.0};
+    return (lee_drag_input){speed, 1.225, 1000.0, 9.81, 1.5e-5};
 }
 
 static double coefficient(const lee_drag *drag, double speed) {

@@ -225,7 +225,7 @@ static double coefficient(const char *name, double speed) {
         print_error("no relation is called %s\n", name);
         return NAN;
     }
-    const lee_drag_input in = {speed, 1.225, 1000.0};
+    const lee_drag_input in = {speed, 1.225, 1000.0, 9.81, 1.5e-5};
     return relation->coefficient(&in);
 }
 
@@ -329,7 +329,7 @@ static void each_relation_is_positive_and_finite_at_any_speed(void **state) {
     const lee_drag_relation *relation;
     for (size_t i = 0; (relation = lee_drag_at(i)) != NULL; i++) {
         for (int k = 0; k <= 1200; k++) {
-            const lee_drag_input in = {0.1 * k, 1.225, 1000.0};
+            const lee_drag_input in = {0.1 * k, 1.225, 1000.0, 9.81, 1.5e-5};
             const double c10 = relation->coefficient(&in);
             if (!(isfinite(c10) && c10 > 0.0)) {
                 print_error("%s at %g m/s: %g\n", relation->name, in.speed,

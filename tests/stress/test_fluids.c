@@ -88,6 +88,33 @@ static void missing_air_has_no_density(void **state) {
 /* The standard's primary constants (from memory): 288.15 K, -6.5 K per km,
  * 287.05287 J kg-1 K-1, 9.80665 m s-2. The three constants of the short form
  * carry six digits: worth 1e-6 of the pressure at 9 km. */
+/* Andreas (1989), worked from the printed polynomial to six digits. */
+static void air_is_as_viscous_as_andreas_says(void **state) {
+    (void)state;
+    static const struct {
+        double celsius;
+        double expected; /* m2 s-1 */
+    } air[] = {
+        {-10.0, 1.24036e-5},
+        {0.0,   1.32600e-5},
+        {10.0,  1.41384e-5},
+        {15.0,  1.45858e-5},
+        {20.0,  1.50385e-5},
+        {30.0,  1.59597e-5},
+    };
+    for (size_t i = 0; i < sizeof air / sizeof air[0]; i++) {
+        assert_near(lee_air_viscosity(celsius_zero + air[i].celsius),
+                    air[i].expected, 0.5e-10);
+    }
+}
+
+static void air_outside_its_range_has_no_viscosity(void **state) {
+    (void)state;
+    assert_true(isnan(lee_air_viscosity(celsius_zero - 174.0)));
+    assert_true(isnan(lee_air_viscosity(celsius_zero + 278.0)));
+    assert_true(isnan(lee_air_viscosity(NAN)));
+}
+
 static void pressure_is_that_of_the_standard_atmosphere(void **state) {
     (void)state;
     for (double z = -500.0; z <= 9000.0; z += 250.0) {
@@ -137,6 +164,8 @@ int main(void) {
         cmocka_unit_test(dry_air_follows_the_gas_law),
         cmocka_unit_test(dry_air_is_close_to_the_metrologists_air),
         cmocka_unit_test(missing_air_has_no_density),
+        cmocka_unit_test(air_is_as_viscous_as_andreas_says),
+        cmocka_unit_test(air_outside_its_range_has_no_viscosity),
         cmocka_unit_test(pressure_is_that_of_the_standard_atmosphere),
         cmocka_unit_test(pressure_is_the_tabulated_one),
         cmocka_unit_test(pressure_falls_by_the_weight_of_the_air),

@@ -4,13 +4,12 @@
 #include "leewater/stress.h"
 
 static const double pi = 3.14159265358979323846;
-static const double air = 1.225;    /* kg m-3 */
-static const double water = 1000.0; /* kg m-3 */
+static const lee_drag_input fluids = {0.0, 1.225, 1000.0, 9.81, 1.5e-5};
 
 static void stress_of(const lee_drag *drag, double east, double north,
                       double stress[2]) {
     const double wind[2] = {east, north};
-    lee_wind_stress(drag, air, water, wind, stress);
+    lee_wind_stress(drag, &fluids, wind, stress);
 }
 
 static lee_drag constant(double c10) {
@@ -47,8 +46,11 @@ static void a_share_of_the_water_does_not_ask_for_the_air(void **state) {
     const double wind[2] = {10.0, 0.0};
     double light[2];
     double heavy[2];
-    lee_wind_stress(&drag, 1.0, water, wind, light);
-    lee_wind_stress(&drag, 1.3, water, wind, heavy);
+    lee_drag_input air = fluids;
+    air.air_density = 1.0;
+    lee_wind_stress(&drag, &air, wind, light);
+    air.air_density = 1.3;
+    lee_wind_stress(&drag, &air, wind, heavy);
     assert_near(light[0], 0.16356, 1e-12);
     assert_near(heavy[0], 0.16356, 1e-12);
 }
@@ -135,7 +137,7 @@ static void the_stress_may_take_the_place_of_the_wind(void **state) {
     double apart[2];
     stress_of(&drag, 6.0, 8.0, apart);
     double vector[2] = {6.0, 8.0};
-    lee_wind_stress(&drag, air, water, vector, vector);
+    lee_wind_stress(&drag, &fluids, vector, vector);
     assert_near(vector[0], apart[0], 0.0);
     assert_near(vector[1], apart[1], 0.0);
 }
