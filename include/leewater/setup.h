@@ -270,7 +270,9 @@ double lee_transient_inflow(const lee_transient *engine);
  * than the dry depth); towards a wall or a held end the line of the last two
  * wet nodes goes on, second order like the rest; in the last wet cell before
  * a shore the level of its node holds to the cell's end, for the line of a
- * film may lie below the bed. NaN in a dry cell and off the axis. */
+ * film may lie below the bed. NaN off the axis, in a dry cell, and where the
+ * line stands less than the dry depth over the cell's bed, which is a line
+ * too: through the node and the inner faces. */
 double lee_transient_level_at(const lee_transient *engine, double x);
 
 /* How the steps went since the start. */

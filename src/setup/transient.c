@@ -218,6 +218,20 @@ static size_t node_at(const lee_channel *channel, double x) {
     return low;
 }
 
+/* The bed at x in a node's cell, m above the datum: a line from the node's
+ * mean to the bed of the face on that side; at an outer face, whose bed nobody
+ * keeps, the line from the inner face goes on. */
+static double bed_at(const lee_channel *c, size_t node, double x) {
+    const double from_middle =
+        (x - c->chainage[node]) / (0.5 * c->length[node]);
+    const bool is_beyond = from_middle >= 0.0;
+    const bool is_outer = is_beyond ? node == c->links : node == 0;
+    const bool takes_right = is_beyond != is_outer;
+    const double face = c->link_bed[takes_right ? node : node - 1];
+    const double share = is_outer ? -fabs(from_middle) : fabs(from_middle);
+    return c->bed[node] + share * (face - c->bed[node]);
+}
+
 double lee_transient_level_at(const lee_transient *engine, double x) {
     const lee_channel *c = engine->channel;
     const size_t last = engine->nodes - 1;
@@ -241,5 +255,7 @@ double lee_transient_level_at(const lee_transient *engine, double x) {
     }
     const double share =
         (x - c->chainage[node]) / (c->chainage[neighbour] - c->chainage[node]);
-    return level[node] + share * (level[neighbour] - level[node]);
+    const double found = level[node] + share * (level[neighbour] - level[node]);
+    return found - bed_at(c, node, x) >= engine->options.dry_depth ? found
+                                                                   : NAN;
 }

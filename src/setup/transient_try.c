@@ -117,6 +117,8 @@ static void predict(lee_transient *engine, double dt, const double middle[]) {
     const lee_transient_options *o = &engine->options;
     const double step = o->theta * dt;
     const double r = o->bed.kind == LEE_BED_LINEAR ? o->bed.value : 0.0;
+    const double linear = 1.0 + step * r;
+    const double step_left = step / linear;
     const double *level = engine->now.level;
     const double *bed = engine->bed;
     const double *speed = engine->now.speed;
@@ -140,12 +142,12 @@ static void predict(lee_transient *engine, double dt, const double middle[]) {
                 step * per_depth * engine->inverse_step[f] / engine->width[f];
             y -= advected(speed + f, engine->carried + f, k);
         }
-        const double c = step * engine->friction[f] * per_depth;
+        const double c = step_left * engine->friction[f] * per_depth;
         const double lost = c * fabs(u);
         const double slope = 1.0 + 2.0 * lost;
-        /* 1/(1 + gamma); a law has C_f or r, never both */
+        /* 1/(1 + gamma): C_f acts on what a linear law has left of y */
         const double kept =
-            slope / ((1.0 + lost) * (1.0 + lost) + c * fabs(y) + step * r);
+            slope / (linear * (1.0 + lost) * (1.0 + lost) + c * fabs(y));
         engine->predicted[f] = y * kept;
         engine->response[f] = step * pull * o->theta * kept;
     }

@@ -84,6 +84,54 @@ static void a_strong_wind_ends_in_the_dried_parabola(void **state) {
     lee_channel_free(&channel);
 }
 
+/* The same storm while the windward end falls dry: between the last wet cells
+ * the line of the film points under the ground. */
+static void no_level_is_told_below_the_bed(void **state) {
+    (void)state;
+    const double bottom = -2.0;
+    const double still = 0.0;
+    const double stress = 1.5;
+    lee_channel channel = cut_reach(0.0, 50e3, 200, flat, &bottom);
+    const lee_transient_options options = rough(0.025);
+    lee_transient *engine = start_engine(&channel, &options, flat, &still);
+    weather wind = {channel.links, steady_stress, &stress, 0.0};
+    size_t dry = 0;
+    for (size_t k = 0; k < 288; k++) {
+        run_steps(engine, 1, 300.0, &wind);
+        for (double x = 0.0; x <= 10e3; x += 50.0) {
+            const double level = lee_transient_level_at(engine, x);
+            /* a dry depth over the bed, or dry */
+            assert_true(isnan(level) || level >= bottom + 0.01 - 1e-12);
+            dry += isnan(level) ? 1 : 0;
+        }
+    }
+    assert_true(dry > 0);
+    lee_transient_free(engine);
+    lee_channel_free(&channel);
+}
+
+/* Two levels in the two first cells of a bed that falls towards the wall: the
+ * line to the wall passes under the middle of its cell, over the bed there. */
+static double deep_at_the_wall(const void *numbers, double x) {
+    (void)numbers;
+    return -2.0 + 1e-3 * x;
+}
+
+static double deep_level(const void *numbers, double x) {
+    (void)numbers;
+    return -1.93 + 0.95e-3 * (x - 50.0);
+}
+
+static void a_line_over_a_bed_that_falls_to_the_wall_is_kept(void **state) {
+    (void)state;
+    lee_channel channel = cut_reach(0.0, 10e3, 100, deep_at_the_wall, NULL);
+    const lee_transient_options options = rough(0.025);
+    lee_transient *engine = start_engine(&channel, &options, deep_level, NULL);
+    assert_near(lee_transient_level_at(engine, 0.0), -1.9775, 1e-12);
+    lee_transient_free(engine);
+    lee_channel_free(&channel);
+}
+
 /* ---- the swinging bowl ---- */
 
 /* Bed h0 (x^2/a^2 - 1), water planar: level h0 (2 x s - s^2)/a^2, shores s -+
@@ -457,6 +505,8 @@ int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(a_steady_wind_ends_in_the_wet_parabola),
         cmocka_unit_test(a_strong_wind_ends_in_the_dried_parabola),
+        cmocka_unit_test(no_level_is_told_below_the_bed),
+        cmocka_unit_test(a_line_over_a_bed_that_falls_to_the_wall_is_kept),
         cmocka_unit_test(water_swings_in_a_bowl_with_the_period_of_thacker),
         cmocka_unit_test(friction_slows_the_swing_as_it_should),
         cmocka_unit_test(shores_of_the_bowl_stay_within_a_cell),
