@@ -370,7 +370,7 @@ static const lee_key solver_rows[] = {
     KEY("cells", lee_key_count, lee_case_draft, result.problem.solver.cells,
         OPTIONAL, BETWEEN("1", 4.0, 1e5), OR_WORD("auto", 0.0)),
     KEY("step", lee_key_quantity, lee_case_draft, result.problem.solver.step,
-        OPTIONAL, ABOVE("s", 0.0, 86400.0), OR_WORD("auto", 0.0)),
+        OPTIONAL, BETWEEN("s", 0.01, 86400.0), OR_WORD("auto", 0.0)),
     KEY("dry_depth", lee_key_quantity, lee_case_draft,
         result.problem.solver.dry_depth, OPTIONAL, ABOVE("m", 0.0, 1.0)),
     KEY("advection", lee_key_flag, lee_case_draft,

@@ -131,7 +131,8 @@ void lee_key_seconds(lee_case_reader *reader, const lee_yaml_node *node,
         return;
     }
     const double whole = round(value);
-    if (fabs(value - whole) > 1e-6) {
+    const bool is_nothing = key->is_above && !(whole > key->low);
+    if (fabs(value - whole) > 1e-6 || is_nothing) {
         lee_key_problem(reader, node, key->name,
                         "is '%s'; expected whole seconds", node->text);
         return;

@@ -189,8 +189,8 @@ static void a_negative_size_is_refused_everywhere(void **state) {
              "a.yaml:4:21: 'solver.dry_depth' is '-1 cm'; expected more than 0 "
              "and up to 1 m"),
         SLIP(LAKE "solver: {step: -1 s}\n",
-             "a.yaml:4:16: 'solver.step' is '-1 s'; expected auto, or more "
-             "than 0 and up to 86400 s"),
+             "a.yaml:4:16: 'solver.step' is '-1 s'; expected auto, or 0.01 "
+             "to 86400 s"),
     };
     assert_all_told(state, slips);
 }
@@ -241,6 +241,20 @@ static void a_count_is_a_whole_number_in_range(void **state) {
 static void a_time_step_of_output_is_whole_seconds(void **state) {
     assert_told(state, LAKE "run: {every: 0.5 s}\n",
                 "a.yaml:4:14: 'run.every' is '0.5 s'; expected whole seconds");
+}
+
+/* Rounded it would be 0, which stands for automatic. */
+static void a_time_step_of_output_is_not_next_to_nothing(void **state) {
+    assert_told(state, LAKE "run: {every: 0.5 us}\n",
+                "a.yaml:4:14: 'run.every' is '0.5 us'; expected whole "
+                "seconds");
+}
+
+static void
+a_solver_step_below_a_hundredth_of_a_second_is_refused(void **state) {
+    assert_told(state, LAKE "solver: {step: 9 ms}\n",
+                "a.yaml:4:16: 'solver.step' is '9 ms'; expected auto, or 0.01 "
+                "to 86400 s");
 }
 
 static void a_word_outside_its_list_is_told_with_the_list(void **state) {
@@ -485,6 +499,8 @@ int main(void) {
         CASE_TEST(a_direction_beyond_the_circle_is_refused),
         CASE_TEST(a_count_is_a_whole_number_in_range),
         CASE_TEST(a_time_step_of_output_is_whole_seconds),
+        CASE_TEST(a_time_step_of_output_is_not_next_to_nothing),
+        CASE_TEST(a_solver_step_below_a_hundredth_of_a_second_is_refused),
         CASE_TEST(a_word_outside_its_list_is_told_with_the_list),
         CASE_TEST(each_word_for_on_and_off_is_read),
         CASE_TEST(a_time_that_is_none_is_told),
