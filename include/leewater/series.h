@@ -209,24 +209,38 @@ typedef struct lee_exceedance {
     bool is_reached;
     int64_t first_time; /* first crossing */
     bool has_returned;
-    int64_t return_time; /* when it was last left again */
+    int64_t return_time; /* when it was last left again; where that was in a
+                            gap of the record, the first time seen after it */
     double longest;      /* s */
     double total;        /* s */
     size_t times;        /* separate occasions */
 } lee_exceedance;
 
+/* Why a station has no residual seiche. */
+typedef enum lee_residual {
+    LEE_RESIDUAL_FOUND,
+    LEE_RESIDUAL_NO_WIND, /* nothing blew in what is judged */
+    LEE_RESIDUAL_NO_DROP, /* the wind stays over a quarter of its stress */
+    LEE_RESIDUAL_DRY,     /* the station lies dry then */
+    LEE_RESIDUAL_UNSEEN   /* a gap or a start at rest is then */
+} lee_residual;
+
 typedef struct lee_station_series {
     double *level; /* [n] m above the datum; NaN where dry */
-    double *low;   /* [n] range; NULL when not asked for */
+    double *low;   /* [n] range; NULL when not asked for; NaN where the
+                      estimate or a member of the range is dry */
     double *high;
-    lee_ranged max; /* over every solver step, not only output times */
+    lee_ranged max; /* over every solver step, not only output times; low is
+                       NaN when a member is dry throughout */
     int64_t max_time;
-    lee_ranged min;
+    lee_ranged min; /* lowest while wet; low is NaN when the estimate or a
+                       member falls dry */
     int64_t min_time;
     double dry_time; /* s that the station lay dry */
-    double residual; /* m: largest |level - still water| in the two first
-                           periods after the strongest wind has dropped below
-                           a quarter of its stress; NaN when it never does */
+    double residual; /* m: largest |level - still water of that time| in
+                        the two first periods after the strongest wind has
+                        dropped below a quarter of its stress; NaN: none */
+    lee_residual residual_state;
     int64_t residual_time;
     size_t exceedance_count;
     lee_exceedance *exceedance;
@@ -236,8 +250,8 @@ typedef struct lee_run_options {
     bool has_range;     /* run the members of the range: on by default */
     bool keep_range;    /* keep low and high series */
     bool has_own_error; /* second passes for the numerical error: on */
-    /* Called a few times a second with the share done, 0 to 1; false stops
-     * the run with LEE_ERR_INTERRUPTED. May be NULL. */
+    /* Called between steps, about once a millisecond, with the share done, 0
+     * to 1; false stops the run with LEE_ERR_INTERRUPTED. May be NULL. */
     bool (*keep_going)(void *user, double share);
     void *user;
 } lee_run_options;
@@ -253,10 +267,16 @@ typedef struct lee_run_result {
     double *speed;    /* [n] 10 m wind over open water */
     double *from;     /* [n] radians */
     bool *is_spin_up; /* [n] within two first periods after a start at rest */
+    double strongest; /* the record's strongest wind within the run, or one
+                         between samples at an output time; 10 m over open
+                         water, m s-1; 0 in a calm */
+    double strongest_from; /* radians */
+    int64_t strongest_time;
     size_t station_count;
     lee_station_series *station;
     size_t cells;
-    double step;         /* s */
+    double step;         /* longest, s: never over the steps of the record and
+                            of the output */
     double first_period; /* s, of the longest water */
     double volume_defect;
     double numerical_error; /* m, over the strongest events; NaN if not run */

@@ -126,13 +126,29 @@ static void put_exceedance(lee_json *json, const lee_exceedance *seen) {
     lee_json_close(json);
 }
 
+static const char *residual_reason(lee_residual state) {
+    switch (state) {
+    case LEE_RESIDUAL_NO_WIND:
+        return "no wind blows in the run";
+    case LEE_RESIDUAL_NO_DROP:
+        return "the strongest wind does not drop within the run";
+    case LEE_RESIDUAL_DRY:
+        return "the station lies dry when the wind has dropped";
+    case LEE_RESIDUAL_UNSEEN:
+        return "a gap or a start at rest follows the strongest wind";
+    case LEE_RESIDUAL_FOUND:
+        break;
+    }
+    return "";
+}
+
 static void put_residual(lee_json *json, const lee_station_series *series) {
     const bool is_known = !isnan(series->residual);
     lee_json_put_number(json, "residual_m", series->residual);
     lee_json_put_time(json, "residual_time", is_known, series->residual_time);
     if (!is_known) {
         lee_json_put_text(json, "residual_reason",
-                          "the strongest wind does not drop within the run");
+                          residual_reason(series->residual_state));
     }
 }
 

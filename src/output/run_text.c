@@ -15,20 +15,15 @@ static void print_span(const lee_printer *to, const lee_run_result *result) {
 
 static void print_strongest(const lee_printer *to,
                             const lee_run_result *result) {
-    size_t best = result->n;
-    for (size_t i = 0; i < result->n; i++) {
-        if (!isnan(result->speed[i]) &&
-            (best == result->n || result->speed[i] > result->speed[best])) {
-            best = i;
-        }
+    if (!(result->strongest > 0.0)) {
+        (void)fputs("calm throughout\n", to->stream);
+        return;
     }
-    if (best < result->n) {
-        (void)fprintf(to->stream,
-                      "strongest wind %s from %s (10 m over water), %s\n",
-                      lee_show_speed(to, result->speed[best]).text,
-                      lee_show_direction(result->from[best]).text,
-                      lee_show_time(result->time[best]).text);
-    }
+    (void)fprintf(to->stream,
+                  "strongest wind %s from %s (10 m over water), %s\n",
+                  lee_show_speed(to, result->strongest).text,
+                  lee_show_direction(result->strongest_from).text,
+                  lee_show_time(result->strongest_time).text);
 }
 
 static void print_extreme(const lee_printer *to, const char *label,

@@ -4,6 +4,13 @@
 #include <math.h>
 #include <stdlib.h>
 
+/* Steps between two breaks above which a step is no step (docs/formats.md says
+ * what a case may ask for). */
+static const double most_parts = 1e9;
+
+/* Cell-steps between two questions whether to go on: about a millisecond. */
+static const double work_between_questions = 2e4;
+
 /* Eta below which a set-up volume is not worth dividing by, m (docs/theory.md,
  * "Levels in time"). */
 static const double least_eta = 1e-3;
@@ -27,6 +34,7 @@ typedef struct leg {
     int64_t *breaks; /* times that steps must hit, increasing */
     size_t next_output;
     double *at_stations; /* [stations] scratch */
+    double *bed_at;      /* [stations] of the profile itself, m */
     double *poured;      /* [nodes] m3, scratch */
     double pool;         /* still water at the engine's time, m */
     double start_volume;
@@ -52,7 +60,10 @@ static size_t sample_breaks(const lee_run_wind *wind, size_t i, int64_t at[2]) {
         return 1;
     case LEE_STAMP_START:
         at[0] = time;
-        at[1] = time + wind->step;
+        at[1] = time + wind->step; /* held up to the next when that is sooner */
+        if (i + 1 < wind->record->n && wind->record->time[i + 1] < at[1]) {
+            at[1] = wind->record->time[i + 1];
+        }
         return 2;
     case LEE_STAMP_MIDDLE:
         at[0] = time - half;
@@ -72,12 +83,20 @@ static void add_break(leg *l, int64_t time) {
     }
 }
 
+/* Times at which a series of levels bends. */
+static void add_bends(leg *l, const lee_level_series *series) {
+    for (size_t i = 0; series->n > 1 && i < series->n; i++) {
+        add_break(l, series->time[i]);
+    }
+}
+
 static lee_status gather_breaks(leg *l, lee_error *error) {
     const lee_course *course = l->course;
     const lee_wind_piece *piece = &l->span->piece;
-    const lee_level_series *pool = &course->problem->lake.still_water;
+    const lee_lake *lake = &course->problem->lake;
     const size_t room = 2 * (piece->end - piece->first) + course->time_count +
-                        (pool->n > 1 ? pool->n : 0) + 2;
+                        lake->still_water.n + lake->start.level.n +
+                        lake->end.level.n + 2;
     l->breaks = calloc(room, sizeof *l->breaks);
     if (l->breaks == NULL) {
         return lee_fail(error, LEE_ERR_MEMORY, "no room for %zu times", room);
@@ -94,9 +113,9 @@ static lee_status gather_breaks(leg *l, lee_error *error) {
     for (size_t i = 0; i < course->time_count; i++) {
         add_break(l, course->time[i]);
     }
-    for (size_t i = 0; pool->n > 1 && i < pool->n; i++) {
-        add_break(l, pool->time[i]);
-    }
+    add_bends(l, &lake->still_water);
+    add_bends(l, &lake->start.level);
+    add_bends(l, &lake->end.level);
     qsort(l->breaks, l->break_count, sizeof *l->breaks, by_time);
     size_t kept = 1;
     for (size_t i = 1; i < l->break_count; i++) {
@@ -108,10 +127,17 @@ static lee_status gather_breaks(leg *l, lee_error *error) {
     return LEE_OK;
 }
 
+/* Level of an end at a time; NaN at a wall. */
+static double held_level(const lee_end *end, double time) {
+    return end->is_held ? lee_level_at(&end->level, time) : NAN;
+}
+
 /* Levels of equilibrium with the wind at the begin of the span. */
 static lee_status steady_levels(leg *l, const lee_profile *profile,
                                 double level[], lee_error *error) {
     const lee_course *course = l->course;
+    const lee_lake *lake = &course->problem->lake;
+    const double begin = (double)l->span->from;
     double wind[2];
     lee_steady steady = {0};
     lee_drive_wind(&l->drive, 0.0, wind);
@@ -122,8 +148,8 @@ static lee_status steady_levels(leg *l, const lee_profile *profile,
         .water_density = course->setting->fluids.water_density,
         .gravity = course->setting->gravity,
         .dry_depth = course->problem->solver.dry_depth,
-        .start_level = course->setting->start_level,
-        .end_level = course->setting->end_level,
+        .start_level = held_level(&lake->start, begin),
+        .end_level = held_level(&lake->end, begin),
     };
     lee_drive_pull(&l->drive, wind, input.stress);
     const lee_status status = lee_steady_solve(&input, &steady, error);
@@ -203,13 +229,18 @@ static void audit(leg *l) {
     l->largest_set_up = fmax(l->largest_set_up, moved);
 }
 
-/* Looks at the stations at the engine's present time. */
+/* Looks at the stations at the engine's present time. Cells know the mean of
+ * their bed, a station knows its own: where the level stands no dry depth over
+ * it the station is dry. */
 static void look(leg *l) {
     const lee_course *course = l->course;
     const double time = (double)l->span->from + lee_transient_time(l->engine);
+    const double least = course->problem->solver.dry_depth;
+    course->watch->still_water = l->pool;
     for (size_t i = 0; i < course->watch->count; i++) {
-        l->at_stations[i] =
+        const double level =
             lee_transient_level_at(l->engine, course->watch->station[i].at);
+        l->at_stations[i] = level - l->bed_at[i] >= least ? level : NAN;
     }
     lee_watch_see(course->watch, time, l->at_stations,
                   time >= (double)l->span->judged_from);
@@ -247,32 +278,48 @@ static lee_status step_to(leg *l, double end, int shortened, lee_error *error) {
     return status;
 }
 
+static lee_status tell_progress(lee_progress *progress, lee_error *error) {
+    const lee_run_options *options = progress->options;
+    progress->told = progress->done;
+    if (options->keep_going != NULL &&
+        !options->keep_going(options->user,
+                             fmin(1.0, progress->done / progress->total))) {
+        return lee_fail(error, LEE_ERR_INTERRUPTED, "interrupted");
+    }
+    return LEE_OK;
+}
+
+/* Counts a step, and asks now and then whether to go on. */
+static lee_status count_step(leg *l, lee_error *error) {
+    lee_progress *progress = l->course->progress;
+    progress->done += (double)l->channel->nodes;
+    return progress->done - progress->told < work_between_questions
+               ? LEE_OK
+               : tell_progress(progress, error);
+}
+
 static lee_status go_to(leg *l, int64_t from, int64_t to, lee_error *error) {
     const double distance = (double)(to - from);
     const double wanted = ceil(distance / l->course->step - 1e-9);
+    if (!(wanted <= most_parts)) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "steps of %g s are too short for %g s", l->course->step,
+                        distance);
+    }
     const int64_t parts = wanted > 1.0 ? (int64_t)wanted : 1;
     const double end = (double)(to - l->span->from);
     for (int64_t k = 0; k < parts; k++) {
         const double now = lee_transient_time(l->engine);
         const double step = (end - now) / (double)(parts - k);
-        const lee_status status = step_to(l, now + step, 0, error);
+        lee_status status = step_to(l, now + step, 0, error);
+        if (status == LEE_OK) {
+            follow_pool(l);
+            look(l);
+            status = count_step(l, error);
+        }
         if (status != LEE_OK) {
             return status;
         }
-        follow_pool(l);
-        look(l);
-    }
-    l->course->progress->done += (double)parts * (double)l->channel->nodes;
-    return LEE_OK;
-}
-
-static lee_status tell_progress(const lee_progress *progress,
-                                lee_error *error) {
-    const lee_run_options *options = progress->options;
-    if (options->keep_going != NULL &&
-        !options->keep_going(options->user,
-                             fmin(1.0, progress->done / progress->total))) {
-        return lee_fail(error, LEE_ERR_INTERRUPTED, "interrupted");
     }
     return LEE_OK;
 }
@@ -286,17 +333,15 @@ static lee_status run_leg(leg *l, lee_error *error) {
     look(l);
     write_levels(l, l->span->from);
     for (size_t i = 1; i < l->break_count; i++) {
-        lee_status status = go_to(l, l->breaks[i - 1], l->breaks[i], error);
-        if (status == LEE_OK) {
-            status = tell_progress(l->course->progress, error);
-        }
+        const lee_status status =
+            go_to(l, l->breaks[i - 1], l->breaks[i], error);
         if (status != LEE_OK) {
             return status;
         }
         write_levels(l, l->breaks[i]);
     }
     audit(l);
-    return LEE_OK;
+    return tell_progress(l->course->progress, error);
 }
 
 static lee_transient_options engine_options(const lee_course *course) {
@@ -328,9 +373,13 @@ static lee_status prepare_leg(leg *l, const lee_profile *profile,
         .zero = l->span->from,
     };
     l->at_stations = calloc(course->watch->count + 1, sizeof(double));
+    l->bed_at = calloc(course->watch->count + 1, sizeof(double));
     l->poured = calloc(l->channel->nodes, sizeof *l->poured);
-    if (l->at_stations == NULL || l->poured == NULL) {
+    if (l->at_stations == NULL || l->bed_at == NULL || l->poured == NULL) {
         return lee_fail(error, LEE_ERR_MEMORY, "no room for stations");
+    }
+    for (size_t i = 0; i < course->watch->count; i++) {
+        l->bed_at[i] = lee_profile_bed(profile, course->watch->station[i].at);
     }
     lee_status status = lee_drive_init(l->channel, &l->drive, error);
     if (status == LEE_OK) {
@@ -359,6 +408,7 @@ static lee_status run_span(const lee_course *course, const lee_span *span,
     lee_drive_free(&l.drive);
     free(l.breaks);
     free(l.at_stations);
+    free(l.bed_at);
     free(l.poured);
     return status;
 }

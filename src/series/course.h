@@ -22,6 +22,7 @@ typedef struct lee_progress {
     const lee_run_options *options;
     double total; /* work of all courses, cell-steps */
     double done;
+    double told; /* what was done when it was told last */
 } lee_progress;
 
 /* What to run. Borrows everything. */

@@ -12,13 +12,15 @@ static const double table_spacing = 0.1;
 enum { TABLE_ROWS = 1001 };
 
 /* One given wind that begins at once, lasts, and is followed by calm: a
- * record of means, so that begin and end are sharp. */
+ * record of means, so that begin and end are sharp. Where whole seconds do
+ * not part the duration evenly some steps are a second shorter: a mean is
+ * held up to the next. */
 static lee_status given_record(const lee_given_wind *wind, int64_t start,
                                double calm, lee_run_wind *made,
                                lee_error *error) {
     const int64_t duration = (int64_t)llround(wind->duration);
     const int64_t parts = (duration + made_step - 1) / made_step;
-    const int64_t step = duration / parts;
+    const int64_t step = (duration + parts - 1) / parts;
     const int64_t after = (int64_t)ceil(calm / (double)step);
     const size_t n = (size_t)(parts + after);
     const lee_status status = lee_wind_record_init(&made->made, n, error);
@@ -27,9 +29,11 @@ static lee_status given_record(const lee_given_wind *wind, int64_t start,
     }
     made->made.stamp = LEE_STAMP_START;
     made->step = step;
-    for (size_t i = 0; i < n; i++) {
-        made->made.time[i] = start + (int64_t)i * step;
-        lee_wind_components((int64_t)i < parts ? wind->speed : 0.0, wind->from,
+    for (int64_t i = 0; i < parts + after; i++) {
+        made->made.time[i] =
+            start +
+            (i < parts ? i * duration / parts : duration + (i - parts) * step);
+        lee_wind_components(i < parts ? wind->speed : 0.0, wind->from,
                             &made->made.east[i], &made->made.north[i]);
     }
     return LEE_OK;

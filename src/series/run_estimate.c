@@ -33,8 +33,10 @@ typedef struct workshop {
     lee_pull_table table;
     lee_member member[LEE_MEMBERS];
     size_t member_count;
+    double strongest; /* wind as measured, m s-1; 0 in a calm */
     double residual_from;
     double residual_to;
+    double departure; /* largest from the still water of its time, m */
     lee_progress progress;
     lee_run_result *result;
 } workshop;
@@ -48,7 +50,7 @@ static bool is_in_spans(const lee_run_plan *plan, int64_t time) {
     return false;
 }
 
-/* When the wind has dropped after its strongest moment. */
+/* When the wind has dropped within the run after its strongest moment. */
 static void find_residual_window(workshop *shop) {
     const lee_run_plan *plan = &shop->plan;
     const lee_wind_record *record = plan->wind.record;
@@ -63,7 +65,8 @@ static void find_residual_window(workshop *shop) {
     shop->residual_from = NAN;
     shop->residual_to = NAN;
     for (size_t i = peak + 1; i < record->n && strongest > 0.0; i++) {
-        if (plan->pull[i] < dropped_share * strongest) {
+        if (plan->pull[i] < dropped_share * strongest &&
+            record->time[i] <= plan->span[plan->span_count - 1].to) {
             shop->residual_from = (double)record->time[i];
             shop->residual_to =
                 shop->residual_from + residual_periods * plan->first_period;
@@ -116,15 +119,55 @@ static void levels_free(double **level, size_t stations) {
     free(level);
 }
 
+/* The lower of two low ends; one that is dry (NaN) is the lowest there is. */
+static double lower(double low, double found) {
+    return isnan(low) || isnan(found) ? NAN : fmin(low, found);
+}
+
+/* Widens highest and lowest by what a member saw. */
 static void note_seen(lee_run_result *result, const lee_watch *watch) {
     for (size_t i = 0; i < watch->count; i++) {
         lee_station_series *station = &result->station[i];
         const lee_watched_station *seen = &watch->station[i];
-        station->max.low = fmin(station->max.low, seen->max);
+        station->max.low = lower(station->max.low, seen->max);
         station->max.high = fmax(station->max.high, seen->max);
-        station->min.low = fmin(station->min.low, seen->min);
+        station->min.low =
+            seen->was_dry ? NAN : lower(station->min.low, seen->min);
         station->min.high = fmax(station->min.high, seen->min);
     }
+}
+
+/* Why a station has no residual seiche. */
+static lee_residual residual_state(const workshop *shop,
+                                   const lee_watched_station *seen) {
+    if (!isnan(seen->residual)) {
+        return LEE_RESIDUAL_FOUND;
+    }
+    if (!(shop->strongest > 0.0)) {
+        return LEE_RESIDUAL_NO_WIND;
+    }
+    if (isnan(shop->residual_from)) {
+        return LEE_RESIDUAL_NO_DROP;
+    }
+    const bool is_dry = seen->was_dry_in_residual || isnan(seen->max);
+    return is_dry ? LEE_RESIDUAL_DRY : LEE_RESIDUAL_UNSEEN;
+}
+
+/* Takes what the estimate itself saw into the result. */
+static lee_status take_seen(workshop *shop, const lee_watch *watch,
+                            lee_error *error) {
+    lee_status status = LEE_OK;
+    for (size_t i = 0; i < watch->count && status == LEE_OK; i++) {
+        const lee_watched_station *seen = &watch->station[i];
+        lee_station_series *station = &shop->result->station[i];
+        status = lee_watch_tell(seen, station, error);
+        station->residual_state = residual_state(shop, seen);
+        shop->departure = fmax(shop->departure, seen->departure);
+        if (seen->was_dry && shop->options->has_range) {
+            station->min.low = NAN;
+        }
+    }
+    return status;
 }
 
 /* Takes the levels of the estimate itself into the result. */
@@ -135,12 +178,13 @@ static void take_levels(lee_run_result *result, double **level) {
     }
 }
 
-/* Widens the kept range by the levels of a member. */
+/* Widens the kept range by the levels of a member; a low end that is dry stays
+ * dry. */
 static void widen_range(lee_run_result *result, double **level) {
     for (size_t i = 0; i < result->station_count; i++) {
         lee_station_series *station = &result->station[i];
         for (size_t k = 0; k < result->n && station->low != NULL; k++) {
-            station->low[k] = fmin(station->low[k], level[i][k]);
+            station->low[k] = lower(station->low[k], level[i][k]);
             station->high[k] = fmax(station->high[k], level[i][k]);
         }
     }
@@ -168,7 +212,6 @@ static lee_status run_main(workshop *shop, lee_watch *watch, double **level,
     lee_course course = course_of(shop, &shop->member[0]);
     course.watch = watch;
     course.level = level;
-    watch->still_water = shop->plan.setting.still_water;
     watch->residual_from = shop->residual_from;
     watch->residual_to = shop->residual_to;
     lee_course_report report;
@@ -180,8 +223,8 @@ static lee_status run_main(workshop *shop, lee_watch *watch, double **level,
                                "sills: levels beside them are doubtful",
                                report.fastest);
     }
-    for (size_t i = 0; i < watch->count && status == LEE_OK; i++) {
-        status = lee_watch_tell(&watch->station[i], &result->station[i], error);
+    if (status == LEE_OK) {
+        status = take_seen(shop, watch, error);
     }
     if (status == LEE_OK) {
         take_levels(result, level);
@@ -253,13 +296,7 @@ static lee_status find_own_error(workshop *shop, lee_error *error) {
     result->numerical_error = own.total;
     result->numerical_error_time = own.time;
     result->numerical_error_space = own.space;
-    double largest = 0.0;
-    for (size_t i = 0; i < result->station_count; i++) {
-        const lee_station_series *station = &result->station[i];
-        largest = fmax(largest, station->max.value - result->still_water);
-        largest = fmax(largest, result->still_water - station->min.value);
-    }
-    if (own.total > fmax(error_least, error_share * largest)) {
+    if (own.total > fmax(error_least, error_share * shop->departure)) {
         return lee_notes_add(&result->warnings, error,
                              "own numerical error %.1f mm (%.1f from the step, "
                              "%.1f from the cells): a smaller solver.step or "
@@ -267,6 +304,44 @@ static lee_status find_own_error(workshop *shop, lee_error *error) {
                              1e3 * own.total, 1e3 * own.time, 1e3 * own.space);
     }
     return LEE_OK;
+}
+
+/* A wind may be the strongest so far; of equals the first is. */
+static void meet_wind(workshop *shop, int64_t time, const double wind[2]) {
+    lee_run_result *result = shop->result;
+    double speed;
+    double from;
+    lee_wind_speed_from(wind[0], wind[1], &speed, &from);
+    const bool is_earlier =
+        speed == shop->strongest && time < result->strongest_time;
+    if (speed > shop->strongest || (speed > 0.0 && is_earlier)) {
+        shop->strongest = speed;
+        result->strongest_from = from;
+        result->strongest_time = time;
+    }
+}
+
+/* The strongest wind within the run, of the record's own times. A run may
+ * begin or end between two of them; those that blow there are met at the
+ * output times. */
+static void find_strongest(workshop *shop) {
+    const lee_run_plan *plan = &shop->plan;
+    const lee_wind_record *record = plan->wind.record;
+    for (size_t s = 0; s < plan->span_count; s++) {
+        const lee_span *span = &plan->span[s];
+        for (size_t i = span->piece.first; i < span->piece.end; i++) {
+            const int64_t time = record->time[i];
+            if (time >= span->from && time <= span->to) {
+                meet_wind(shop, time,
+                          (double[2]){record->east[i], record->north[i]});
+            }
+        }
+    }
+    lee_run_result *result = shop->result;
+    result->strongest =
+        shop->strongest > 0.0
+            ? lee_setting_speed(shop->problem, &plan->setting, shop->strongest)
+            : 0.0;
 }
 
 /* Wind of the output times. */
@@ -290,26 +365,19 @@ static lee_status tell_wind(workshop *shop, lee_error *error) {
         lee_wind_at(plan->wind.record, &plan->span[s].piece, plan->wind.step,
                     (double)result->time[i], wind, &hint);
         lee_wind_speed_from(wind[0], wind[1], &measured, &result->from[i]);
+        meet_wind(shop, result->time[i], wind);
         result->speed[i] =
             lee_setting_speed(shop->problem, &plan->setting, measured);
     }
+    find_strongest(shop);
     return LEE_OK;
-}
-
-static double fastest_of(const lee_wind_record *record) {
-    double fastest = 0.0;
-    for (size_t i = 0; i < record->n; i++) {
-        fastest = fmax(fastest, hypot(record->east[i], record->north[i]));
-    }
-    return fastest;
 }
 
 static lee_status tell_method(workshop *shop, lee_error *error) {
     const lee_problem *problem = shop->problem;
     lee_run_result *result = shop->result;
-    const double fastest = fastest_of(shop->plan.wind.record);
-    lee_status status = lee_setting_tell(problem, &shop->plan.setting, fastest,
-                                         &result->method, error);
+    lee_status status = lee_setting_tell(
+        problem, &shop->plan.setting, shop->strongest, &result->method, error);
     if (status == LEE_OK && problem->wind.kind == LEE_WIND_RECORD) {
         lee_wind_check check = {0};
         status = lee_wind_check_record(&problem->wind.record,
@@ -321,8 +389,9 @@ static lee_status tell_method(workshop *shop, lee_error *error) {
         lee_wind_check_free(&check);
     }
     return status == LEE_OK
-               ? lee_setting_warn_of_drag(problem, &shop->plan.setting, fastest,
-                                          &result->warnings, error)
+               ? lee_setting_warn_of_drag(problem, &shop->plan.setting,
+                                          shop->strongest, &result->warnings,
+                                          error)
                : status;
 }
 
@@ -358,10 +427,10 @@ static lee_status open_result(workshop *shop, lee_error *error) {
 static lee_status estimate(workshop *shop, lee_error *error) {
     lee_status status = open_result(shop, error);
     if (status == LEE_OK) {
-        status = tell_method(shop, error);
+        status = tell_wind(shop, error);
     }
     if (status == LEE_OK) {
-        status = tell_wind(shop, error);
+        status = tell_method(shop, error);
     }
     if (status == LEE_OK) {
         status = lee_pull_table_init(shop->problem, &shop->plan.setting,

@@ -18,6 +18,10 @@ static const double steps_after_a_jump = 400.0;
 static const double shortest_step = 10.0; /* s */
 static const double longest_step = 600.0; /* s */
 
+/* Shortest step that may be asked for, s: over 1000 m of water a wave runs 1 m
+ * in it, less than any cell needs (design choice). */
+static const double least_step = 0.01;
+
 /* Cells: four in the shortest distance of profile rows, within these. */
 enum { FEWEST_CELLS = 100, MOST_CELLS = 400 };
 
@@ -55,8 +59,15 @@ static lee_status find_period(const lee_problem *problem, lee_run_plan *plan,
     return status;
 }
 
-static void choose_cells_and_step(const lee_problem *problem,
-                                  lee_run_plan *plan) {
+static int64_t output_step(const lee_problem *problem,
+                           const lee_run_plan *plan) {
+    if (problem->run.every > 0) {
+        return problem->run.every;
+    }
+    return plan->wind.step < 600 ? 600 : plan->wind.step;
+}
+
+static void choose_cells(const lee_problem *problem, lee_run_plan *plan) {
     const lee_profile *profile = &problem->lake.profile;
     const double length =
         profile->chainage[profile->n - 1] - profile->chainage[0];
@@ -70,16 +81,41 @@ static void choose_cells_and_step(const lee_problem *problem,
     if (plan->cells == 0) {
         plan->cells = (size_t)fmin(fmax(wanted, FEWEST_CELLS), MOST_CELLS);
     }
-    plan->step = problem->solver.step;
-    if (!(plan->step > 0.0)) {
-        const double parts = problem->wind.kind == LEE_WIND_GIVEN
-                                 ? steps_after_a_jump
-                                 : steps_in_period;
-        const double wanted_step = plan->first_period / parts;
-        plan->step = isnan(wanted_step)
-                         ? longest_step
-                         : fmin(fmax(wanted_step, shortest_step), longest_step);
+}
+
+static double automatic_step(const lee_problem *problem,
+                             const lee_run_plan *plan) {
+    const double parts = problem->wind.kind == LEE_WIND_GIVEN
+                             ? steps_after_a_jump
+                             : steps_in_period;
+    const double wanted = plan->first_period / parts;
+    return isnan(wanted) ? longest_step
+                         : fmin(fmax(wanted, shortest_step), longest_step);
+}
+
+/* Times of the record and of the output are hit, so no step is longer than
+ * theirs. A plan that said otherwise would have the own error compare runs
+ * whose steps are all cut to the same. */
+static lee_status choose_step(const lee_problem *problem, lee_run_plan *plan,
+                              lee_notes *warnings, lee_error *error) {
+    const double asked = problem->solver.step;
+    const int64_t record = plan->wind.step;
+    const int64_t output = output_step(problem, plan);
+    const double most = (double)(record < output ? record : output);
+    if (asked != 0.0 && !(asked >= least_step)) {
+        return lee_fail(error, LEE_ERR_DATA,
+                        "a solver.step of %g s is below %g s", asked,
+                        least_step);
     }
+    plan->step =
+        fmin(asked > 0.0 ? asked : automatic_step(problem, plan), most);
+    if (!(asked > most)) {
+        return LEE_OK;
+    }
+    return lee_notes_add(warnings, error,
+                         "solver.step of %g s is cut to %g s, the step of the "
+                         "%s: every time of it is met",
+                         asked, most, record <= output ? "wind" : "output");
 }
 
 static lee_status fail_outside(const char *what, int64_t time, int64_t from,
@@ -202,14 +238,6 @@ static lee_status find_spans(const lee_problem *problem, lee_run_plan *plan,
     return status;
 }
 
-static int64_t output_step(const lee_problem *problem,
-                           const lee_run_plan *plan) {
-    if (problem->run.every > 0) {
-        return problem->run.every;
-    }
-    return plan->wind.step < 600 ? 600 : plan->wind.step;
-}
-
 static lee_status find_times(const lee_problem *problem, lee_run_plan *plan,
                              lee_error *error) {
     const int64_t every = output_step(problem, plan);
@@ -329,7 +357,10 @@ static lee_status make_plan(const lee_problem *problem, lee_run_plan *plan,
         status = find_pull(problem, plan, error);
     }
     if (status == LEE_OK) {
-        choose_cells_and_step(problem, plan);
+        choose_cells(problem, plan);
+        status = choose_step(problem, plan, warnings, error);
+    }
+    if (status == LEE_OK) {
         status = find_times(problem, plan, error);
     }
     return status;

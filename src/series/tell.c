@@ -66,6 +66,12 @@ static lee_status tell_relations(const lee_problem *problem,
                 !(speed >= relation->speed_min && speed <= relation->speed_max);
         }
     }
+    if (!(speed > 0.0)) { /* a calm needs no relation */
+        return lee_notes_add(notes, error,
+                             "drag: %zu published relations, one a paper, and "
+                             "the one used",
+                             count);
+    }
     return lee_notes_add(notes, error,
                          "drag: %zu published relations, one a paper, and the "
                          "one used; %zu of them extrapolate at %.1f m/s",
@@ -149,6 +155,9 @@ lee_status lee_setting_warn_of_drag(const lee_problem *problem,
     const lee_drag_relation *relation = problem->drag.relation;
     lee_drag_input in = setting->fluids;
     in.speed = lee_setting_speed(problem, setting, measured);
+    if (!(in.speed > 0.0)) {
+        return LEE_OK; /* a calm has no drag */
+    }
     bool extrapolated = false;
     bool capped = false;
     (void)lee_drag_coefficient(&setting->drag, &in, &extrapolated, &capped);

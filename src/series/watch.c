@@ -71,7 +71,7 @@ static void enter(lee_watched_threshold *watched, double time) {
     }
 }
 
-/* Ends an occasion that the record cuts off: counted, but not a return. */
+/* Ends an occasion that the record cuts off: counted, but no return yet. */
 static void cut(lee_watched_threshold *watched, double time) {
     if (watched->is_inside) {
         leave(watched, time);
@@ -117,6 +117,10 @@ static void see_threshold(lee_watched_threshold *watched, const double time[2],
               is_first ? time[1] : crossing(time[0], time[1], before, after));
     } else if (!(after > 0.0) && watched->is_inside) {
         leave(watched, crossing(time[0], time[1], before, after));
+    } else if (!(after > 0.0) && watched->is_reached &&
+               !watched->has_returned) {
+        watched->has_returned = true; /* unseen, in a gap */
+        watched->returned = time[1];
     }
 }
 
@@ -135,11 +139,16 @@ static void see_extremes(lee_watched_station *station, double time,
     }
 }
 
-static void see_residual(const lee_watch *watch, lee_watched_station *station,
-                         double time, double level) {
+/* How far from the still water of that time. */
+static void see_departure(const lee_watch *watch, lee_watched_station *station,
+                          double time, double level) {
     const double size = fabs(level - watch->still_water);
-    if (time >= watch->residual_from && time <= watch->residual_to &&
-        !isnan(size) && !(size <= station->residual)) {
+    station->departure = fmax(station->departure, size);
+    if (!(time >= watch->residual_from && time <= watch->residual_to)) {
+        return;
+    }
+    station->was_dry_in_residual = station->was_dry_in_residual || isnan(level);
+    if (!isnan(size) && !(size <= station->residual)) {
         station->residual = size;
         station->residual_time = time;
     }
@@ -152,7 +161,8 @@ void lee_watch_see(lee_watch *watch, double time, const double level[],
         const double times[2] = {watch->time, time};
         const double levels[2] = {station->level, level[i]};
         see_extremes(station, time, level[i]);
-        see_residual(watch, station, time, level[i]);
+        see_departure(watch, station, time, level[i]);
+        station->was_dry = station->was_dry || isnan(level[i]);
         if (isnan(level[i]) && !isnan(watch->time)) {
             station->dry_time += time - watch->time;
         }

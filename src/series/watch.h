@@ -26,9 +26,12 @@ typedef struct lee_watched_station {
     double max_time;
     double min;
     double min_time;
+    bool was_dry; /* when something was judged */
     double dry_time;
+    double departure; /* largest |level - still water| */
     double residual;
     double residual_time;
+    bool was_dry_in_residual;
     size_t count;
     lee_watched_threshold *threshold;
 } lee_watched_station;
@@ -36,7 +39,7 @@ typedef struct lee_watched_station {
 typedef struct lee_watch {
     size_t count;
     lee_watched_station *station; /* [count] */
-    double still_water;
+    double still_water;   /* at the time of the next sight, m above the datum */
     double residual_from; /* s since 1970; NaN: never */
     double residual_to;
     double time; /* of the last levels seen; NaN: none in this piece */

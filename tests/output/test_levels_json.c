@@ -170,6 +170,33 @@ static void an_own_error_that_was_left_out_is_null_with_a_reason(void **state) {
     json_decref(root);
 }
 
+static void a_residual_that_is_not_there_has_its_true_reason(void **state) {
+    (void)state;
+    static const struct {
+        lee_residual state;
+        const char *reason;
+    } rows[] = {
+        {LEE_RESIDUAL_NO_WIND, "no wind blows in the run"                      },
+        {LEE_RESIDUAL_NO_DROP,
+         "the strongest wind does not drop within the run"                     },
+        {LEE_RESIDUAL_DRY,     "the station lies dry when the wind has dropped"},
+        {LEE_RESIDUAL_UNSEEN,
+         "a gap or a start at rest follows the strongest wind"                 },
+    };
+    hand_made made;
+    make(&made);
+    for (size_t i = 0; i < sizeof rows / sizeof rows[0]; i++) {
+        made.series[1].residual_state = rows[i].state;
+        json_t *root = run_of(&made);
+        json_t *there = item(root, "stations", 0);
+        json_t *none = item(root, "stations", 1);
+        assert_null(json_object_get(there, "residual_reason"));
+        assert_true(json_is_null(json_object_get(none, "residual_m")));
+        assert_string_equal(text(none, "residual_reason"), rows[i].reason);
+        json_decref(root);
+    }
+}
+
 static void names_that_are_not_utf8_still_give_valid_json(void **state) {
     (void)state;
     hand_made made;
@@ -238,6 +265,7 @@ int main(void) {
         cmocka_unit_test(a_threshold_that_was_reached_has_times),
         cmocka_unit_test(a_threshold_that_was_not_reached_has_none),
         cmocka_unit_test(an_own_error_that_was_left_out_is_null_with_a_reason),
+        cmocka_unit_test(a_residual_that_is_not_there_has_its_true_reason),
         cmocka_unit_test(names_that_are_not_utf8_still_give_valid_json),
         cmocka_unit_test(warnings_and_remarks_are_lists_of_sentences),
         cmocka_unit_test(a_level_that_may_fall_dry_gives_no_reason),

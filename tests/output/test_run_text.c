@@ -19,8 +19,32 @@ static void the_span_and_the_strongest_wind_are_told(void **state) {
     const char *text = printed(&out, &made, LEE_UNITS_SI);
     assert_contains(text,
                     "2031-01-14 00:00 UTC to 2031-01-14 00:20 UTC, 3 times\n");
-    assert_contains(text, "strongest wind 22.0 m/s from 242 degrees (10 m over "
-                          "water), 2031-01-14 00:20 UTC\n");
+    assert_contains(text, "strongest wind 23.0 m/s from 243 degrees (10 m over "
+                          "water), 2031-01-14 00:19 UTC\n");
+    capture_free(&out);
+}
+
+static void a_calm_names_no_strongest_wind(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    made.run.strongest = 0.0;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "\ncalm throughout\n");
+    assert_lacks(text, "strongest wind");
+    capture_free(&out);
+}
+
+static void a_low_end_that_falls_dry_is_told_as_dry(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    made.series[0].min.low = (double)NAN;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "lowest            101.000 m (dry to 101.050), "
+                          "2031-01-14 00:00 UTC\n");
     capture_free(&out);
 }
 
@@ -169,6 +193,8 @@ static void a_parted_record_tells_its_pieces(void **state) {
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(the_span_and_the_strongest_wind_are_told),
+        cmocka_unit_test(a_calm_names_no_strongest_wind),
+        cmocka_unit_test(a_low_end_that_falls_dry_is_told_as_dry),
         cmocka_unit_test(each_station_has_highest_and_lowest_with_their_times),
         cmocka_unit_test(a_station_with_a_bed_has_its_least_depth),
         cmocka_unit_test(a_threshold_tells_first_time_durations_and_return),

@@ -141,6 +141,56 @@ static void a_gap_parts_two_occasions(void **state) {
     lee_watch_free(&watch);
 }
 
+/* The level is first seen under it again after the gap. */
+static void what_is_left_within_a_gap_is_back_when_seen_again(void **state) {
+    (void)state;
+    const lee_station station = {
+        .at = 0.0, .threshold_count = 1, .threshold = &above_two};
+    lee_watch watch;
+    assert_int_equal(lee_watch_init(1, &station, &watch, NULL), LEE_OK);
+    const double high = 3.0;
+    const double low = 1.0;
+    lee_watch_see(&watch, 0.0, &high, true);
+    lee_watch_see(&watch, 600.0, &high, true);
+    lee_watch_break(&watch);
+    lee_watch_see(&watch, 90000.0, &low, false); /* spin-up */
+    lee_watch_see(&watch, 90600.0, &low, true);
+    lee_watch_see(&watch, 91200.0, &low, true);
+    lee_watch_break(&watch);
+    const lee_watched_threshold *seen = &watch.station[0].threshold[0];
+    assert_true(seen->has_returned);
+    assert_near(seen->returned, 90600.0, 0.0);
+    assert_near(seen->total, 600.0, 1e-9);
+    lee_watch_free(&watch);
+}
+
+static void a_threshold_never_reached_has_no_return(void **state) {
+    (void)state;
+    lee_watch watch;
+    lee_threshold above_nine = {.level = 9.0};
+    see_all(&watch, &above_nine, rise_and_fall);
+    assert_false(watch.station[0].threshold[0].has_returned);
+    lee_watch_free(&watch);
+}
+
+/* A level that follows its pool has not departed from it. */
+static void the_residual_counts_from_the_still_water_of_its_time(void **state) {
+    (void)state;
+    const lee_station station = {.at = 0.0};
+    lee_watch watch;
+    assert_int_equal(lee_watch_init(1, &station, &watch, NULL), LEE_OK);
+    watch.residual_from = 0.0;
+    watch.residual_to = 600.0;
+    const double level[] = {1.25, 5.0};
+    watch.still_water = 1.0;
+    lee_watch_see(&watch, 0.0, &level[0], true);
+    watch.still_water = 5.0;
+    lee_watch_see(&watch, 600.0, &level[1], true);
+    assert_near(watch.station[0].residual, 0.25, 0.0);
+    assert_near(watch.station[0].departure, 0.25, 0.0);
+    lee_watch_free(&watch);
+}
+
 static void the_residual_is_looked_for_in_its_window_only(void **state) {
     (void)state;
     const lee_station station = {.at = 0.0};
@@ -223,6 +273,9 @@ int main(void) {
         cmocka_unit_test(highest_and_lowest_carry_their_times),
         cmocka_unit_test(a_spin_up_is_judged_by_nothing),
         cmocka_unit_test(a_gap_parts_two_occasions),
+        cmocka_unit_test(what_is_left_within_a_gap_is_back_when_seen_again),
+        cmocka_unit_test(a_threshold_never_reached_has_no_return),
+        cmocka_unit_test(the_residual_counts_from_the_still_water_of_its_time),
         cmocka_unit_test(the_residual_is_looked_for_in_its_window_only),
         cmocka_unit_test(a_highest_level_that_lasts_is_told_with_its_begin),
         cmocka_unit_test(a_spin_up_is_no_dry_time),

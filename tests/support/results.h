@@ -200,6 +200,7 @@ static inline void make_series(hand_made *made) {
         .min_time = made_day + 60,
         .dry_time = 600.0,
         .residual = unknown,
+        .residual_state = LEE_RESIDUAL_DRY,
         .exceedance_count = 2,
         .exceedance = made->exceedance
     };
@@ -214,6 +215,9 @@ static inline void make_run(hand_made *made) {
                                  .speed = made->speed,
                                  .from = made->wind_from,
                                  .is_spin_up = made->spin_up,
+                                 .strongest = 23.0,
+                                 .strongest_from = degrees(243.0),
+                                 .strongest_time = made_day + 1140,
                                  .station_count = 2,
                                  .station = made->series,
                                  .cells = 200,
