@@ -17,11 +17,18 @@ static const double nothing = 1e-9;
 double lee_richardson_error(double coarse, double middle, double fine) {
     const double first = fabs(coarse - middle);
     const double second = fabs(middle - fine);
-    if (isnan(first) || isnan(second) || second < nothing) {
+    if (isnan(middle) || (isnan(first) && isnan(second))) {
         return 0.0;
     }
-    /* A coarse mesh that could not be coarser says nothing: order 1. */
-    const double observed = first < nothing ? 1.0 : log2(first / second);
+    if (isnan(second)) {
+        return first;
+    }
+    if (second < nothing) {
+        return 0.0;
+    }
+    /* A coarse mesh that could not be coarser, or was dry, says nothing: order
+     * 1. */
+    const double observed = first >= nothing ? log2(first / second) : 1.0;
     const double order = fmin(fmax(observed, 1.0), 2.0);
     return second / (1.0 - exp2(-order));
 }

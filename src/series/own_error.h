@@ -25,7 +25,9 @@ lee_status lee_own_error_find(const lee_problem *problem,
                               lee_own_error *own, lee_error *error);
 
 /* Error of the middle of three numbers whose mesh halves from one to the next:
- * coarse, middle, fine. */
+ * coarse, middle, fine. NaN is a dry place: with one of the outer numbers the
+ * order is 1; without both, or without the middle one, there is nothing to
+ * judge and the error is 0. */
 double lee_richardson_error(double coarse, double middle, double fine);
 
 /* Work of lee_own_error_find, cell-steps. */

@@ -42,6 +42,25 @@ static void a_mesh_that_could_not_be_coarser_counts_as_order_one(void **state) {
     assert_near(lee_richardson_error(1.01, 1.01, 1.005), 0.01, 1e-14);
 }
 
+/* Of order 1 the error of the middle mesh is twice its distance to the fine
+ * one. */
+static void a_coarse_mesh_that_is_dry_counts_as_order_one(void **state) {
+    (void)state;
+    assert_near(lee_richardson_error(NAN, 1.01, 1.005), 0.01, 1e-14);
+}
+
+/* ... and the distance of the coarse one to it. */
+static void a_fine_mesh_that_is_dry_counts_as_order_one(void **state) {
+    (void)state;
+    assert_near(lee_richardson_error(1.03, 1.01, NAN), 0.02, 1e-14);
+}
+
+static void a_place_dry_in_the_run_itself_has_no_error(void **state) {
+    (void)state;
+    assert_near(lee_richardson_error(1.0, NAN, 2.0), 0.0, 0.0);
+    assert_near(lee_richardson_error(NAN, 1.0, NAN), 0.0, 0.0);
+}
+
 static void equal_numbers_have_no_error(void **state) {
     (void)state;
     assert_near(lee_richardson_error(1.0, 1.0, 1.0), 0.0, 0.0);
@@ -54,6 +73,9 @@ int main(void) {
         cmocka_unit_test(an_order_above_two_is_taken_as_two),
         cmocka_unit_test(an_order_below_one_is_taken_as_one),
         cmocka_unit_test(a_mesh_that_could_not_be_coarser_counts_as_order_one),
+        cmocka_unit_test(a_coarse_mesh_that_is_dry_counts_as_order_one),
+        cmocka_unit_test(a_fine_mesh_that_is_dry_counts_as_order_one),
+        cmocka_unit_test(a_place_dry_in_the_run_itself_has_no_error),
         cmocka_unit_test(equal_numbers_have_no_error),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
