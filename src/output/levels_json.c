@@ -133,7 +133,7 @@ static const char *residual_reason(lee_residual state) {
     case LEE_RESIDUAL_NO_DROP:
         return "the strongest wind does not drop within the run";
     case LEE_RESIDUAL_DRY:
-        return "the station lies dry when the wind has dropped";
+        return "the station lies dry once the wind drops";
     case LEE_RESIDUAL_UNSEEN:
         return "a gap or a start at rest follows the strongest wind";
     case LEE_RESIDUAL_FOUND:

@@ -176,12 +176,12 @@ static void a_residual_that_is_not_there_has_its_true_reason(void **state) {
         lee_residual state;
         const char *reason;
     } rows[] = {
-        {LEE_RESIDUAL_NO_WIND, "no wind blows in the run"                      },
+        {LEE_RESIDUAL_NO_WIND, "no wind blows in the run"                },
         {LEE_RESIDUAL_NO_DROP,
-         "the strongest wind does not drop within the run"                     },
-        {LEE_RESIDUAL_DRY,     "the station lies dry when the wind has dropped"},
+         "the strongest wind does not drop within the run"               },
+        {LEE_RESIDUAL_DRY,     "the station lies dry once the wind drops"},
         {LEE_RESIDUAL_UNSEEN,
-         "a gap or a start at rest follows the strongest wind"                 },
+         "a gap or a start at rest follows the strongest wind"           },
     };
     hand_made made;
     make(&made);
