@@ -20,6 +20,8 @@ typedef struct lee_level_series {
     double *level; /* [n] m above the datum                                */
 } lee_level_series;
 
+/* A series of one level, m above the datum. What it held before is not freed.
+ * Errors: LEE_ERR_MEMORY; the series is then empty. */
 lee_status lee_level_constant(double level, lee_level_series *series,
                               lee_error *error);
 void lee_level_series_free(lee_level_series *series);
@@ -45,6 +47,8 @@ typedef struct lee_profile {
     double *bearing;  /* [n] rad; each holds to the next row                */
 } lee_profile;
 
+/* Gives a profile room for n rows, all 0. What it held before is not freed.
+ * Errors: LEE_ERR_MEMORY; the profile is then empty. */
 lee_status lee_profile_init(lee_profile *profile, size_t n, lee_error *error);
 void lee_profile_free(lee_profile *profile);
 

@@ -11,6 +11,14 @@
 #include "leewater/status.h"
 #include "leewater/stress.h"
 
+/* Heights of an anemometer that are believed, m. The logarithmic profile holds
+ * in the lowest tenth of the boundary layer, some 100 m in strong winds
+ * (common practice); twice that admits tall masts, whose correction to 10 m is
+ * then rough, and still catches feet or centimetres written as metres. Macros,
+ * as they stand in constant tables. */
+#define LEE_LOWEST_MAST  0.5
+#define LEE_HIGHEST_MAST 200.0
+
 typedef enum lee_height_method {
     LEE_HEIGHT_LOG,   /* neutral logarithmic profile of the surface         */
     LEE_HEIGHT_POWER, /* (10/z)^(1/7), EM 1110-2-1100 eq. II-2-9            */
@@ -35,9 +43,9 @@ typedef struct lee_exposure {
 /* 10 m over water, averaging not stated, nothing to correct. */
 lee_exposure lee_exposure_default(void);
 
-/* Ranges and combinations: height 0.5 to 200 m, factors 0.2 to 5, averaging
- * of a maximum 1 to 36000 s, the land's roughness below the anemometer and
- * below 10 m where the logarithmic profile asks for it.
+/* Ranges and combinations: height LEE_LOWEST_MAST to LEE_HIGHEST_MAST, factors
+ * 0.2 to 5, averaging of a maximum 1 to 36000 s, the land's roughness below the
+ * anemometer and below 10 m where the logarithmic profile asks for it.
  * Errors: LEE_ERR_ARGUMENT. */
 lee_status lee_exposure_check(const lee_exposure *exposure, lee_error *error);
 
@@ -157,11 +165,13 @@ double lee_neutral_ratio(const lee_stability_functions *set, double height,
  * [resiovincent1977] (from memory). */
 double lee_air_water_ratio(double difference);
 
-/* U10/Uz by the neutral logarithmic profile: ln(10/z0)/ln(z/z0). NaN unless
- * the roughness z0 is above 0 and below both heights. */
+/* U10/Uz by the neutral logarithmic profile: ln(10/z0)/ln(z/z0), heights in m.
+ * NaN unless the roughness z0 is above 0 and below both heights.
+ * Source: law of the wall without stability (common practice). */
 double lee_log_profile_ratio(double height, double roughness);
 
-/* U10/Uz = (10/z)^(1/7). */
+/* U10/Uz = (10/z)^(1/7), z in m; NaN unless it is above 0.
+ * Source: EM 1110-2-1100 eq. II-2-9 [cem2002]. */
 double lee_power_profile_ratio(double height);
 
 #endif

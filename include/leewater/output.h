@@ -12,7 +12,10 @@
 
 typedef enum lee_unit_system { LEE_UNITS_SI, LEE_UNITS_US } lee_unit_system;
 
-/* Text made for reading: aligned, few decimals, both ends named. */
+/* Text made for reading: aligned, few decimals, both ends named; notes in the
+ * same units. Each function writes all it can, flushes, and then looks.
+ * Errors: LEE_ERR_FILE when the stream could not be written to the end;
+ * LEE_ERR_MEMORY. */
 lee_status lee_print_steady(FILE *stream, const lee_case *from,
                             const lee_steady_result *result,
                             lee_unit_system units, lee_error *error);
@@ -30,21 +33,25 @@ lee_status lee_print_estimate(FILE *stream, const lee_case *from,
                               const lee_steady_result *result,
                               lee_unit_system units, lee_error *error);
 
-/* Drag relations side by side. Borrows its lists. */
+/* Drag relations side by side, as published, without a cap. Borrows its
+ * lists. */
 typedef struct lee_drag_table {
     size_t speeds;
     const double *speed; /* [speeds] m s-1 at 10 m over water */
     size_t relations;
     const lee_drag_relation *const *relation; /* [relations] */
     double air_density;                       /* kg m-3 */
-    double water_density;                     /* kg m-3 */
-    bool has_sources; /* text: name the source of each */
+    bool has_given_air;   /* the density was asked for, not the usual one */
+    double water_density; /* kg m-3 */
+    bool has_sources;     /* text: name the source of each */
 } lee_drag_table;
 lee_status lee_print_drag(FILE *stream, const lee_drag_table *table,
                           lee_unit_system units, lee_error *error);
 
 /* JSON summaries of docs/formats.md; always SI. A number that there is none of
- * is null. */
+ * is null.
+ * Errors: LEE_ERR_FILE when the stream could not be written to the end;
+ * LEE_ERR_MEMORY, and nothing is written. */
 lee_status lee_json_steady(FILE *stream, const lee_case *from,
                            const lee_steady_result *result, lee_error *error);
 lee_status lee_json_run(FILE *stream, const lee_case *from,

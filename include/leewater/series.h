@@ -131,6 +131,7 @@ typedef struct lee_method {
     double reference_height; /* 10 m */
     lee_notes range_members; /* what the range is made of */
     lee_notes record;        /* what the record check found and did */
+    lee_notes not_used;      /* what was read and takes no part yet */
 } lee_method;
 void lee_method_free(lee_method *method);
 
@@ -279,7 +280,8 @@ typedef struct lee_run_result {
                             of the output */
     double first_period; /* s, of the longest water */
     double volume_defect;
-    double numerical_error; /* m, over the strongest events; NaN if not run */
+    double numerical_error; /* m, over the strongest events; NaN if not run, or
+                               if every station lay dry */
     double numerical_error_time;  /* its part from the step, m  */
     double numerical_error_space; /* its part from the cells, m */
     size_t pieces;

@@ -37,8 +37,14 @@ typedef struct lee_return_flow {
     double value;     /* >= 1                                               */
 } lee_return_flow;
 
-/* lambda for a mean depth; C_f = 0 gives 1. `forced_to_one` for relations
- * fitted on set-up itself and for lakes with a held end when computed. */
+/* lambda for a mean depth (m, > 0) by the rule:
+ *
+ *     lambda = 1 + sqrt(C_f)/0.40, at most 1.5
+ *
+ * C_f = 0 gives 1. `forced_to_one` for relations fitted on set-up itself and
+ * for lakes with a held end when computed.
+ * Source: exact for the parabolic eddy viscosity; 3/2 is that of a constant
+ * one over a bed without slip (both derived; docs/theory.md). */
 double lee_return_flow_factor(const lee_return_flow *rule,
                               const lee_bed_law *bed, double depth,
                               double gravity, bool forced_to_one);
@@ -65,7 +71,9 @@ double lee_open_uniform(double a, double length, double depth);
 
 /* Open end, depth falling evenly from h0 to 0 over L: level at the shore.
  * x/L = (1 - H/h0) - A ln[(H/h0 - A)/(1 - A)], A = a L/h0^2 < 1
- * Dean & Dalrymple (1991) [dean1991]. */
+ * NaN for A outside [0, 1).
+ * Source: Dean & Dalrymple (1991) [dean1991] (from memory, derived again;
+ * docs/theory.md). */
 double lee_open_slope(double a, double length, double depth);
 
 /* What a handbook's number stands for. */
@@ -95,7 +103,8 @@ typedef struct lee_steady_input {
     const lee_profile *profile;
     double still_water;   /* m above the datum */
     double stress[2];     /* east, north, Pa */
-    double return_flow;   /* lambda, >= 1 */
+    double return_flow;   /* lambda, >= 1; the estimates of series.h fold it
+                             into the stress and give 1 here */
     double water_density; /* kg m-3 */
     double gravity;       /* m s-2 */
     double dry_depth;     /* m, 0.01 by default: thinner water counts as dry */
@@ -190,7 +199,9 @@ typedef struct lee_transient_options {
     double gravity;
     double water_density;
     double return_flow; /* lambda >= 1: bed acts as
-                            rho C_f |u| u - (lambda - 1) tau_s */
+                            rho C_f |u| u - (lambda - 1) tau_s; the estimates
+                            of series.h fold it into the stress, lambda tau_s,
+                            which is the same, and give 1 here */
     lee_bed_law bed;
     double theta;       /* 0.52 by default */
     double dry_depth;   /* m, 0.01 by default */

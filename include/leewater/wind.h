@@ -223,6 +223,15 @@ lee_status lee_wind_check_record(const lee_wind_record *record,
                                  lee_wind_check *check, lee_error *error);
 void lee_wind_check_free(lee_wind_check *check);
 
+/* Finds the longest gaps of a check, of equals the earlier.
+ *
+ *   room   the most that is wanted
+ *   index  [room] out: places in check->gap, in order of time
+ *
+ * Returns how many there are: the lesser of room and gap_count. */
+size_t lee_wind_longest_gaps(const lee_wind_check *check, size_t room,
+                             size_t index[]);
+
 /* One unbroken stretch of a record after the gap rule: indices [first, end)
  * of samples; missing ones inside are to be bridged. */
 typedef struct lee_wind_piece {

@@ -8,6 +8,9 @@
 #include "leewater/output.h"
 #include "leewater/stress.h"
 
+/* Of the standard atmosphere at sea level, 15 degC (ISO 2533:1975). */
+static const double usual_air = 1.225; /* kg m-3 */
+
 enum { MOST_SPEEDS = 400, MOST_RELATIONS = 64 };
 
 /* The winds asked for: `from`, `from` + `by` ... up to `to`. */
@@ -63,7 +66,7 @@ static lee_status named_relations(const option_list *names,
 
 lee_status cmd_drag(int argc, char *argv[], lee_error *error) {
     speeds winds = {.from = 5.0, .to = 30.0, .by = 5.0};
-    lee_drag_table table = {.air_density = 1.225, .water_density = 1000.0};
+    lee_drag_table table = {.air_density = NAN, .water_density = 1000.0};
     const lee_drag_relation *chosen[MOST_RELATIONS];
     option_list names = {0};
     const option options[] = {
@@ -80,10 +83,15 @@ lee_status cmd_drag(int argc, char *argv[], lee_error *error) {
     };
     request asked = {.command = "drag",
                      .summary = "compare the drag relations",
+                     .has_levels = true,
                      .options = options};
     lee_status status = options_parse(&asked, argc, argv, error);
     if (status != LEE_OK || asked.is_done) {
         return status;
+    }
+    table.has_given_air = !isnan(table.air_density);
+    if (!table.has_given_air) {
+        table.air_density = usual_air;
     }
     status = fill_speeds(&winds, error);
     if (status == LEE_OK) {

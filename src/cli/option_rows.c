@@ -1,10 +1,11 @@
 /* option_rows.c - the rows that tables of options are made of. */
 #include "cli/options.h"
+#include "leewater/exposure.h"
 
 const quantity quantity_speed = {"SPEED", "m s-1", 120.0};
 const quantity quantity_fetch = {"LENGTH", "m", 2e6};
 const quantity quantity_depth = {"DEPTH", "m", 2e3};
-const quantity quantity_height = {"HEIGHT", "m", 500.0};
+const quantity quantity_height = {"HEIGHT", "m", LEE_HIGHEST_MAST};
 const quantity quantity_roughness = {"LENGTH", "m", 5.0};
 const quantity quantity_duration = {"TIME", "s", 3.2e9};
 const quantity quantity_direction = {"ANGLE", "radian", 0.0};

@@ -5,10 +5,8 @@
 
 #include "base/constants.h"
 
-/* Bounds of what can be a mast and a correction of its wind. A factor beyond
- * these is a slip of the pen, not an exposure (own judgement). */
-static const double lowest_mast = 0.5;    /* m */
-static const double highest_mast = 200.0; /* m */
+/* Bounds of what can be a correction of a wind. A factor beyond these is a
+ * slip of the pen, not an exposure (own judgement). */
 static const double least_factor = 0.2;
 static const double greatest_factor = 5.0;
 
@@ -57,10 +55,10 @@ static lee_status check_averaging(const lee_exposure *exposure,
 
 static lee_status check_height(const lee_exposure *exposure, lee_error *error) {
     const double z = exposure->height;
-    if (!(z >= lowest_mast && z <= highest_mast)) {
+    if (!(z >= LEE_LOWEST_MAST && z <= LEE_HIGHEST_MAST)) {
         return lee_fail(error, LEE_ERR_ARGUMENT,
                         "anemometer height is %g m, expected %g to %g m", z,
-                        lowest_mast, highest_mast);
+                        LEE_LOWEST_MAST, LEE_HIGHEST_MAST);
     }
     if (exposure->height_method == LEE_HEIGHT_FACTOR &&
         !is_factor(exposure->height_factor)) {

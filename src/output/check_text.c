@@ -128,16 +128,19 @@ static void print_stations(const lee_printer *to, const lee_case *from,
 
 static void print_gaps(const lee_printer *to, const lee_wind_check *record) {
     enum { SHOWN = 5 };
-    for (size_t i = 0; i < record->gap_count && i < SHOWN; i++) {
-        const lee_wind_gap *gap = &record->gap[i];
+    size_t longest[SHOWN];
+    const size_t shown = lee_wind_longest_gaps(record, SHOWN, longest);
+    for (size_t i = 0; i < shown; i++) {
+        const lee_wind_gap *gap = &record->gap[longest[i]];
         lee_print_row(
             to, i == 0 ? "gaps" : "", "%s after %s, %s",
             lee_show_duration((double)(gap->before - gap->after)).text,
             lee_show_time(gap->after).text,
             gap->is_long ? "beyond the rule" : "bridged");
     }
-    if (record->gap_count > SHOWN) {
-        lee_print_row(to, "", "and %zu more", record->gap_count - SHOWN);
+    if (record->gap_count > shown) {
+        lee_print_row(to, "", "and %zu more, none longer",
+                      record->gap_count - shown);
     }
     if (record->gap_count == 0) {
         lee_print_row(to, "gaps", "none");
@@ -166,9 +169,8 @@ static void print_doubts(const lee_printer *to, const lee_wind_check *record) {
         }
     }
     if (record->beyond_belief > 0) {
-        lee_print_row(to, "beyond belief",
-                      "%zu winds faster than 75 m/s, the first %s",
-                      record->beyond_belief,
+        lee_print_row(to, "beyond belief", "%zu, faster than %s, the first %s",
+                      record->beyond_belief, lee_show_speed(to, 75.0).text,
                       lee_show_time(record->beyond_belief_time).text);
     }
     if (record->spikes > 0) {

@@ -1,7 +1,10 @@
 /* drag.c - drag relations side by side, as text and as JSON. */
+#include <math.h>
 #include <stdbool.h>
+#include <stdio.h>
 #include <string.h>
 
+#include "base/constants.h"
 #include "output/json_parts.h"
 #include "output/print.h"
 
@@ -25,6 +28,22 @@ static double stress_of(const lee_drag_table *table,
                         const lee_drag_relation *relation, double speed) {
     return 1e-3 * thousandfold(table, relation, speed) * table->air_density *
            speed * speed;
+}
+
+/* What of a method a table has: no lake, no correction, no range. */
+static lee_method method_of(const lee_drag_table *table) {
+    lee_method method = {.air_density_value = table->air_density,
+                         .water_density_value = table->water_density,
+                         .gravity = NAN,
+                         .return_flow = NAN,
+                         .correction_speed = NAN,
+                         .reference_height = lee_reference_height};
+    (void)snprintf(method.drag, sizeof method.drag,
+                   "each relation as published, no cap");
+    (void)snprintf(method.air_density, sizeof method.air_density, "%s",
+                   table->has_given_air ? "given"
+                                        : "standard, sea level, 15.0 degC");
+    return method;
 }
 
 static bool is_fitted(const lee_drag_relation *relation, double speed) {
@@ -106,21 +125,33 @@ static void print_sources(const lee_printer *to, const lee_drag_table *table) {
     }
 }
 
+static void print_method(const lee_printer *to, const lee_drag_table *table) {
+    const lee_method method = method_of(table);
+    (void)fputs("\nMethod\n", to->stream);
+    lee_print_row(to, "case", "none: winds taken as they are");
+    lee_print_row(to, "drag", "%s", method.drag);
+    lee_cell air;
+    (void)snprintf(air.text, sizeof air.text, "%.3f kg/m3, ",
+                   method.air_density_value);
+    lee_print_note_row(to, "air", air.text, method.air_density);
+    lee_print_row(to, "water", "%.1f kg/m3", method.water_density_value);
+}
+
 lee_status lee_print_drag(FILE *stream, const lee_drag_table *table,
                           lee_unit_system units, lee_error *error) {
     const lee_printer to = {stream, units};
     (void)fprintf(stream, "Drag relations by the wind at 10 m over water\n");
     print_all(&to, table, "Drag coefficient, 1000 C10", thousandfold);
     print_all(&to, table, "Wind stress, Pa", stress_of);
-    (void)fprintf(stream, "\n  air %.3f kg/m3, water %.1f kg/m3; no cap\n",
-                  table->air_density, table->water_density);
     if (has_unfitted(table)) {
-        (void)fputs("  * outside the speeds the relation was fitted on\n",
+        (void)fputs("\n  * outside the speeds the relation was fitted on\n",
                     stream);
     }
     if (table->has_sources) {
         print_sources(&to, table);
     }
+    print_method(&to, table);
+    lee_print_caution(&to);
     return lee_print_end(&to, error);
 }
 
@@ -152,9 +183,12 @@ static void put_relation(lee_json *json, const lee_drag_table *table,
 
 lee_status lee_json_drag(FILE *stream, const lee_drag_table *table,
                          lee_error *error) {
+    const lee_case none = {0};
+    const lee_method method = method_of(table);
     lee_json json = {0};
     lee_json_begin(&json, "drag");
-    lee_json_put_number(&json, "reference_height_m", 10.0);
+    lee_json_put_case(&json, &none, NAN);
+    lee_json_put_number(&json, "reference_height_m", lee_reference_height);
     lee_json_put_number(&json, "air_density_kg_m3", table->air_density);
     lee_json_put_number(&json, "water_density_kg_m3", table->water_density);
     lee_json_open_list(&json, "relations");
@@ -162,5 +196,8 @@ lee_status lee_json_drag(FILE *stream, const lee_drag_table *table,
         put_relation(&json, table, table->relation[i]);
     }
     lee_json_close(&json);
+    lee_json_put_notes(&json, "warnings", &none.notes);
+    lee_json_put_method(&json, &method);
+    lee_json_put_caution(&json);
     return lee_json_write(&json, stream, error);
 }

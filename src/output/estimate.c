@@ -110,7 +110,7 @@ lee_status lee_print_estimate(FILE *stream, const lee_case *from,
 static void put_question(lee_json *json, const lee_case *from,
                          const lee_steady_result *result) {
     const lee_exposure *exposure = &from->problem.exposure;
-    lee_json_put_text(json, "case", NULL);
+    lee_json_put_case(json, from, result->still_water);
     lee_json_put_number(json, "fetch_m", fetch_of(from));
     lee_json_put_number(json, "depth_m", depth_of(from, result->still_water));
     lee_json_put_number(json, "measured_at_m", exposure->height);

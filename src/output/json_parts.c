@@ -22,6 +22,14 @@ void lee_json_put_notes(lee_json *json, const char *name,
     lee_json_close(json);
 }
 
+static void put_about(lee_json *json, const lee_case *from) {
+    lee_json_open_object(json, "about");
+    lee_json_put_text(json, "institution", from->institution);
+    lee_json_put_text(json, "creator", from->creator);
+    lee_json_put_text(json, "license", from->license);
+    lee_json_close(json);
+}
+
 void lee_json_put_case(lee_json *json, const lee_case *from,
                        double still_water) {
     lee_json_put_text(json, "case", from->path);
@@ -29,6 +37,7 @@ void lee_json_put_case(lee_json *json, const lee_case *from,
     lee_json_put_text(json, "lake", from->problem.lake.name);
     lee_json_put_text(json, "datum", from->problem.lake.datum);
     lee_json_put_number(json, "still_water_m", still_water);
+    put_about(json, from);
     lee_json_put_notes(json, "remarks", &from->notes);
 }
 
@@ -47,6 +56,11 @@ static void put_corrections(lee_json *json, const lee_method *method) {
     lee_json_put_number(json, "factors_at_m_s", method->correction_speed);
 }
 
+/* null for what a method has none of. */
+static void put_known(lee_json *json, const char *name, const char *text) {
+    lee_json_put_text(json, name, text[0] != '\0' ? text : NULL);
+}
+
 void lee_json_put_method(lee_json *json, const lee_method *method) {
     lee_json_open_object(json, "method");
     lee_json_put_text(json, "drag", method->drag);
@@ -57,11 +71,12 @@ void lee_json_put_method(lee_json *json, const lee_method *method) {
     lee_json_put_number(json, "water_density_kg_m3",
                         method->water_density_value);
     lee_json_put_number(json, "gravity_m_s2", method->gravity);
-    lee_json_put_text(json, "bed", method->bed);
+    put_known(json, "bed", method->bed);
     lee_json_put_number(json, "return_flow", method->return_flow);
-    lee_json_put_text(json, "return_flow_from", method->return_flow_how);
+    put_known(json, "return_flow_from", method->return_flow_how);
     lee_json_put_notes(json, "range_members", &method->range_members);
     lee_json_put_notes(json, "record", &method->record);
+    lee_json_put_notes(json, "read_not_used", &method->not_used);
     lee_json_close(json);
 }
 

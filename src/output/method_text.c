@@ -14,7 +14,7 @@ void lee_print_head(const lee_printer *to, const lee_case *from,
                        lee_show_length(to, still_water).text,
                        lee_datum_of(from));
     for (size_t i = 0; i < from->notes.n; i++) {
-        lee_print_wrapped(to, 4, "! ", from->notes.text[i]);
+        lee_print_note(to, "! ", "", from->notes.text[i]);
     }
 }
 
@@ -32,17 +32,29 @@ static void print_corrections(const lee_printer *to, const lee_method *method) {
     }
 }
 
+static void print_not_used(const lee_printer *to, const lee_notes *not_used) {
+    for (size_t i = 0; i < not_used->n; i++) {
+        lee_print_row(to, i == 0 ? "read, not used" : "", "%s",
+                      not_used->text[i]);
+    }
+}
+
 void lee_print_method(const lee_printer *to, const lee_method *method) {
     (void)fputs("\nMethod\n", to->stream);
     lee_print_row(to, "drag", "%s", method->drag);
     print_corrections(to, method);
-    lee_print_row(to, "air", "%.3f kg/m3, %s", method->air_density_value,
-                  method->air_density);
+    lee_cell air;
+    (void)snprintf(air.text, sizeof air.text, "%.3f kg/m3, ",
+                   method->air_density_value);
+    lee_print_note_row(to, "air", air.text, method->air_density);
     lee_print_row(to, "water", "%.1f kg/m3, gravity %.5g m/s2",
                   method->water_density_value, method->gravity);
-    lee_print_row(to, "bed", "%s", method->bed);
-    lee_print_row(to, "return flow", "%.3f, %s", method->return_flow,
-                  method->return_flow_how);
+    lee_print_note_row(to, "bed", "", method->bed);
+    lee_cell factor;
+    (void)snprintf(factor.text, sizeof factor.text, "%.3f, ",
+                   method->return_flow);
+    lee_print_note_row(to, "return flow", factor.text, method->return_flow_how);
+    print_not_used(to, &method->not_used);
     lee_print_notes(to, "The range holds", &method->range_members);
     lee_print_notes(to, "Record", &method->record);
 }

@@ -8,6 +8,8 @@
 #include <string.h>
 
 #include "base/constants.h"
+#include "output/note_units.h"
+
 #include "leewater/calendar.h"
 
 enum { LINE_WIDTH = 80, LABEL_WIDTH = 16 };
@@ -70,7 +72,10 @@ lee_cell lee_show_height(const lee_printer *to, double metres) {
 lee_cell lee_show_small(const lee_printer *to, double metres) {
     lee_cell cell;
     if (is_us(to)) {
-        (void)snprintf(cell.text, sizeof cell.text, "%.4f ft", metres / foot);
+        (void)snprintf(cell.text, sizeof cell.text, "%.*f ft",
+                       metres < 0.1 ? 4 : 2, metres / foot);
+    } else if (metres >= 0.1) {
+        (void)snprintf(cell.text, sizeof cell.text, "%.2f m", metres);
     } else {
         (void)snprintf(cell.text, sizeof cell.text, "%.1f mm", 1e3 * metres);
     }
@@ -307,6 +312,20 @@ void lee_print_row(const lee_printer *to, const char *label, const char *format,
     put_lines(to, LABEL_WIDTH + 4, text);
 }
 
+void lee_print_note(const lee_printer *to, const char *mark, const char *lead,
+                    const char *note) {
+    char text[LONGEST_TEXT];
+    lee_print_sentence(to, 4, mark, "%s%s", lead,
+                       lee_note_in_units(note, to->units, sizeof text, text));
+}
+
+void lee_print_note_row(const lee_printer *to, const char *label,
+                        const char *lead, const char *note) {
+    char text[LONGEST_TEXT];
+    lee_print_row(to, label, "%s%s", lead,
+                  lee_note_in_units(note, to->units, sizeof text, text));
+}
+
 void lee_print_notes(const lee_printer *to, const char *heading,
                      const lee_notes *notes) {
     if (notes->n == 0) {
@@ -314,7 +333,7 @@ void lee_print_notes(const lee_printer *to, const char *heading,
     }
     (void)fprintf(to->stream, "\n%s\n", heading);
     for (size_t i = 0; i < notes->n; i++) {
-        lee_print_wrapped(to, 4, "- ", notes->text[i]);
+        lee_print_note(to, "- ", "", notes->text[i]);
     }
 }
 

@@ -38,7 +38,8 @@ const char *lee_length_unit(const lee_printer *to);
  * end: "10 m", "4.25 m", "13.12 ft". */
 lee_cell lee_show_height(const lee_printer *to, double metres);
 
-/* Errors of computation: "0.5 mm", "0.0017 ft". */
+/* Errors of computation: "0.5 mm", "0.0017 ft"; from 0.1 m on "0.35 m",
+ * "1.15 ft". */
 lee_cell lee_show_small(const lee_printer *to, double metres);
 
 /* Chainage, fetch, width: "11.80 km", "7.33 mi"; the bare number; the unit. */
@@ -86,6 +87,15 @@ void lee_print_wrapped(const lee_printer *to, size_t indent, const char *mark,
 /* The same of a formatted text. Both take no memory that could run out. */
 void lee_print_sentence(const lee_printer *to, size_t indent, const char *mark,
                         const char *format, ...) LEE_PRINTF(4, 5);
+
+/* A note as an item marked "- " or the like, `lead` in front of its text; its
+ * quantities in the units of the text, as in the next two. */
+void lee_print_note(const lee_printer *to, const char *mark, const char *lead,
+                    const char *note);
+
+/* A row that tells a note. */
+void lee_print_note_row(const lee_printer *to, const char *label,
+                        const char *lead, const char *note);
 
 /* A heading and its notes, or nothing when there are none. */
 void lee_print_notes(const lee_printer *to, const char *heading,

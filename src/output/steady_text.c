@@ -139,7 +139,7 @@ static void print_block(const lee_printer *to, const lee_case *from,
         if (i == 0) {
             (void)fputc('\n', to->stream);
         }
-        lee_print_wrapped(to, 4, "! ", wind->warnings.text[i]);
+        lee_print_note(to, "! ", "", wind->warnings.text[i]);
     }
 }
 
@@ -310,11 +310,14 @@ static void print_shared(const lee_printer *to, const shared_warning *seen) {
     lee_cell more = {{0}};
     if (seen->count > 1) {
         (void)snprintf(more.text, sizeof more.text,
-                       ", and %zu more winds alike", seen->count - 1);
+                       ", and %zu more wind%s alike", seen->count - 1,
+                       seen->count > 2 ? "s" : "");
     }
-    lee_print_sentence(to, 4, "- ", "from %s%s: %s",
-                       lee_show_direction(seen->from).text, more.text,
-                       seen->text);
+    lee_cell lead;
+    (void)snprintf(lead.text, sizeof lead.text,
+                   "from %.20s%.36s: ", lee_show_direction(seen->from).text,
+                   more.text);
+    lee_print_note(to, "- ", lead.text, seen->text);
 }
 
 static void print_warnings(const lee_printer *to,

@@ -20,17 +20,22 @@ static void comment(FILE *out, const char *label, const char *text) {
     (void)fputc('\n', out);
 }
 
+static void comment_if_given(FILE *out, const char *label, const char *text) {
+    if (text != NULL) {
+        comment(out, label, text);
+    }
+}
+
 static void write_head(FILE *out, const lee_case *from,
                        const lee_method *method, double still_water) {
     const lee_lake *lake = &from->problem.lake;
     (void)fprintf(out, "# leewater %s\n", lee_version());
     comment(out, "case", from->path != NULL ? from->path : "none");
-    if (from->title != NULL) {
-        comment(out, "title", from->title);
-    }
-    if (lake->name != NULL) {
-        comment(out, "lake", lake->name);
-    }
+    comment_if_given(out, "title", from->title);
+    comment_if_given(out, "institution", from->institution);
+    comment_if_given(out, "creator", from->creator);
+    comment_if_given(out, "license", from->license);
+    comment_if_given(out, "lake", lake->name);
     comment(out, "levels above",
             lake->datum != NULL ? lake->datum : "datum not named");
     (void)fprintf(out, "# still water: %.3f m\n", still_water);
@@ -56,6 +61,9 @@ static void write_head(FILE *out, const lee_case *from,
     }
     for (size_t i = 0; i < method->record.n; i++) {
         comment(out, "record", method->record.text[i]);
+    }
+    for (size_t i = 0; i < method->not_used.n; i++) {
+        comment(out, "read, not used", method->not_used.text[i]);
     }
 }
 

@@ -2,6 +2,7 @@
 #include <math.h>
 
 #include "leewater/series.h"
+#include "series/run_plan.h"
 #include "series/setting.h"
 
 /* The speed that corrections are shown for: the fastest there is. */
@@ -18,6 +19,26 @@ static double shown_speed(const lee_problem *problem,
     return fastest;
 }
 
+/* Asks the plan of a run what it thinks of the record: too short, too coarse,
+ * elsewhere in time. */
+static lee_status warn_of_refusal(const lee_problem *problem,
+                                  lee_problem_check *check, lee_error *error) {
+    lee_run_plan plan;
+    lee_notes ignored = {0};
+    lee_error why = {0};
+    lee_status status = lee_run_plan_init(problem, &plan, &ignored, &why);
+    lee_run_plan_free(&plan);
+    lee_notes_free(&ignored);
+    if (status == LEE_OK) {
+        return LEE_OK;
+    }
+    if (status == LEE_ERR_MEMORY) {
+        return lee_fail(error, status, "%s", why.message);
+    }
+    return lee_notes_add(&check->warnings, error,
+                         "`run` will refuse this case: %s", why.message);
+}
+
 static lee_status check_record(const lee_problem *problem,
                                lee_problem_check *check, lee_error *error) {
     const lee_wind_source *source = &problem->wind;
@@ -32,13 +53,14 @@ static lee_status check_record(const lee_problem *problem,
         check->pieces += check->record.gap[i].is_long;
     }
     if (check->pieces > 1 && !source->gap.split) {
+        const bool is_one = check->pieces == 2;
         return lee_notes_add(&check->warnings, error,
-                             "%zu gaps are longer than largest_gap allows: "
+                             "%zu gap%s longer than largest_gap allows: "
                              "`run` will refuse this record unless `gaps: "
                              "split` is set",
-                             check->pieces - 1);
+                             check->pieces - 1, is_one ? " is" : "s are");
     }
-    return LEE_OK;
+    return warn_of_refusal(problem, check, error);
 }
 
 lee_status lee_check_problem(const lee_problem *problem,
@@ -66,8 +88,9 @@ lee_status lee_check_problem(const lee_problem *problem,
                              &check->method, error);
     }
     if (status == LEE_OK && check->has_record) {
-        status = lee_record_tell(&check->record, &problem->wind.gap,
-                                 &check->method.record, error);
+        status =
+            lee_record_tell(&check->record, &problem->wind.gap,
+                            &check->method.record, &check->warnings, error);
     }
     lee_setting_free(&setting);
     if (status != LEE_OK) {

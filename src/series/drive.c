@@ -89,7 +89,8 @@ lee_status lee_run_wind_init(const lee_problem *problem, double calm,
     case LEE_WIND_SCAN:
         status = lee_fail(error, LEE_ERR_DATA,
                           "a run needs a wind record, a storm, or one given "
-                          "wind with a duration");
+                          "wind with a duration; lists and scans of winds are "
+                          "for 'steady'");
         break;
     }
     if (status == LEE_OK) {

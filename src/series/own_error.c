@@ -18,7 +18,7 @@ double lee_richardson_error(double coarse, double middle, double fine) {
     const double first = fabs(coarse - middle);
     const double second = fabs(middle - fine);
     if (isnan(middle) || (isnan(first) && isnan(second))) {
-        return 0.0;
+        return NAN;
     }
     if (isnan(second)) {
         return first;
@@ -176,10 +176,15 @@ static lee_status run_pass(const lee_problem *problem, lee_course *course,
     return status;
 }
 
+/* Of two parts, and of two places: what is not known leaves the other. */
+static double sum_of_known(double time, double space) {
+    return isnan(time) ? space : time + (isnan(space) ? 0.0 : space);
+}
+
 static void raise_to(lee_own_error *own, double time, double space) {
     own->time = fmax(own->time, time);
     own->space = fmax(own->space, space);
-    own->total = fmax(own->total, time + space);
+    own->total = fmax(own->total, sum_of_known(time, space));
 }
 
 static void compare(const lee_watch watch[PASSES], lee_own_error *own) {
@@ -224,6 +229,9 @@ lee_status lee_own_error_find(const lee_problem *problem,
     const size_t count = find_events(plan, event);
     lee_status status = LEE_OK;
     *own = (lee_own_error){0};
+    if (count > 0) {
+        *own = (lee_own_error){NAN, NAN, NAN};
+    }
     for (size_t i = 0; i < count && status == LEE_OK; i++) {
         status = judge_event(problem, plan, &event[i], progress, own, error);
     }

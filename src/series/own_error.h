@@ -9,7 +9,9 @@
 enum { LEE_EVENTS = 3 };
 
 /* Parts of the error, m: the largest over stations (both ends of the axis
- * when there are none), events, highest and lowest level. */
+ * when there are none), events, highest and lowest level. A place that is dry
+ * in the run itself has none; NaN where no place has one. All 0 when no wind
+ * blows. */
 typedef struct lee_own_error {
     double total;
     double time;
@@ -27,7 +29,7 @@ lee_status lee_own_error_find(const lee_problem *problem,
 /* Error of the middle of three numbers whose mesh halves from one to the next:
  * coarse, middle, fine. NaN is a dry place: with one of the outer numbers the
  * order is 1; without both, or without the middle one, there is nothing to
- * judge and the error is 0. */
+ * judge: NaN. */
 double lee_richardson_error(double coarse, double middle, double fine);
 
 /* Work of lee_own_error_find, cell-steps. */

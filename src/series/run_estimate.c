@@ -1,5 +1,6 @@
 /* run_estimate.c - levels in time with their range for a wind record. */
 #include <math.h>
+#include <stdio.h>
 #include <stdlib.h>
 
 #include "leewater/calendar.h"
@@ -285,6 +286,27 @@ static void count_work(workshop *shop) {
     }
 }
 
+/* "3.2 mm"; from 0.1 m on "0.35 m". */
+static const char *show_error(double metres, size_t size, char text[]) {
+    const bool is_small = metres < 0.1;
+    (void)snprintf(text, size, "%.*f %s", is_small ? 1 : 2,
+                   is_small ? 1e3 * metres : metres, is_small ? "mm" : "m");
+    return text;
+}
+
+static lee_status warn_of_error(const lee_own_error *own, lee_notes *warnings,
+                                lee_error *error) {
+    char text[3][48];
+    const size_t size = sizeof text[0];
+    return lee_notes_add(warnings, error,
+                         "own numerical error %s (%s from the step, %s from "
+                         "the cells): a smaller solver.step or more "
+                         "solver.cells lower it",
+                         show_error(own->total, size, text[0]),
+                         show_error(own->time, size, text[1]),
+                         show_error(own->space, size, text[2]));
+}
+
 static lee_status find_own_error(workshop *shop, lee_error *error) {
     lee_run_result *result = shop->result;
     lee_own_error own;
@@ -297,11 +319,7 @@ static lee_status find_own_error(workshop *shop, lee_error *error) {
     result->numerical_error_time = own.time;
     result->numerical_error_space = own.space;
     if (own.total > fmax(error_least, error_share * shop->departure)) {
-        return lee_notes_add(&result->warnings, error,
-                             "own numerical error %.1f mm (%.1f from the step, "
-                             "%.1f from the cells): a smaller solver.step or "
-                             "more solver.cells lower it",
-                             1e3 * own.total, 1e3 * own.time, 1e3 * own.space);
+        return warn_of_error(&own, &result->warnings, error);
     }
     return LEE_OK;
 }
@@ -384,7 +402,8 @@ static lee_status tell_method(workshop *shop, lee_error *error) {
                                        &problem->wind.gap, &check, error);
         if (status == LEE_OK) {
             status = lee_record_tell(&check, &problem->wind.gap,
-                                     &result->method.record, error);
+                                     &result->method.record, &result->warnings,
+                                     error);
         }
         lee_wind_check_free(&check);
     }

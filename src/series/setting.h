@@ -67,9 +67,14 @@ lee_status lee_setting_tell(const lee_problem *problem,
                             const lee_setting *setting, double measured,
                             lee_method *method, lee_error *error);
 
-/* Tells what a record holds. Errors: LEE_ERR_MEMORY. */
+/* Tells what a record holds; what in it is hard to believe goes to `warnings`
+ * as well, for it drives the water. Errors: LEE_ERR_MEMORY. */
 lee_status lee_record_tell(const lee_wind_check *check,
                            const lee_gap_rule *rule, lee_notes *notes,
+                           lee_notes *warnings, lee_error *error);
+
+/* Tells what of a problem was read and is not used. Errors: LEE_ERR_MEMORY. */
+lee_status lee_unused_tell(const lee_problem *problem, lee_notes *unused,
                            lee_error *error);
 
 #endif

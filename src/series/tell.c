@@ -9,6 +9,7 @@
 void lee_method_free(lee_method *method) {
     lee_notes_free(&method->range_members);
     lee_notes_free(&method->record);
+    lee_notes_free(&method->not_used);
     *method = (lee_method){0};
 }
 
@@ -145,8 +146,11 @@ lee_status lee_setting_tell(const lee_problem *problem,
     method->correction_count =
         lee_exposure_chain(&problem->exposure, &setting->drag, &setting->fluids,
                            measured, method->correction);
-    return tell_range(problem, setting, measured, &method->range_members,
-                      error);
+    const lee_status status =
+        lee_unused_tell(problem, &method->not_used, error);
+    return status == LEE_OK ? tell_range(problem, setting, measured,
+                                         &method->range_members, error)
+                            : status;
 }
 
 lee_status lee_setting_warn_of_drag(const lee_problem *problem,
@@ -188,18 +192,37 @@ static lee_status tell_gap(const lee_wind_gap *gap, const lee_gap_rule *rule,
                                      : "longer than the gap rule allows");
 }
 
+/* Long gaps: the longest, then how many more. */
+static lee_status tell_long_gaps(const lee_wind_check *check,
+                                 const lee_gap_rule *rule, size_t count,
+                                 lee_notes *notes, lee_error *error) {
+    enum { TOLD = 3 };
+    size_t longest[TOLD];
+    const size_t told = lee_wind_longest_gaps(check, TOLD, longest);
+    lee_status status = LEE_OK;
+    for (size_t i = 0; i < told && status == LEE_OK; i++) {
+        const lee_wind_gap *gap = &check->gap[longest[i]];
+        if (gap->is_long) {
+            status = tell_gap(gap, rule, notes, error);
+        }
+    }
+    if (status == LEE_OK && count > told) {
+        status = lee_notes_add(notes, error,
+                               "gaps like these, none of them longer: %zu more",
+                               count - told);
+    }
+    return status;
+}
+
 static lee_status tell_gaps(const lee_wind_check *check,
                             const lee_gap_rule *rule, lee_notes *notes,
                             lee_error *error) {
-    lee_status status = LEE_OK;
-    size_t bridged = 0;
-    for (size_t i = 0; i < check->gap_count && status == LEE_OK; i++) {
-        if (check->gap[i].is_long) {
-            status = tell_gap(&check->gap[i], rule, notes, error);
-        } else {
-            bridged++;
-        }
+    size_t count = 0;
+    for (size_t i = 0; i < check->gap_count; i++) {
+        count += check->gap[i].is_long;
     }
+    const size_t bridged = check->gap_count - count;
+    lee_status status = tell_long_gaps(check, rule, count, notes, error);
     if (status == LEE_OK && bridged > 0) {
         status = lee_notes_add(notes, error,
                                "gaps bridged: %zu, each at most %.3g h beyond "
@@ -239,9 +262,39 @@ static lee_status tell_oddities(const lee_wind_check *check, lee_notes *notes,
     return status;
 }
 
+/* Nothing is changed for being hard to believe, so it drives the water. */
+static lee_status warn_of_doubts(const lee_wind_check *check,
+                                 lee_notes *warnings, lee_error *error) {
+    const struct {
+        size_t count;
+        int64_t first;
+        const char *what;
+    } doubts[] = {
+        {check->beyond_belief, check->beyond_belief_time,
+         "winds beyond belief, faster than 75 m/s"                 },
+        {check->spikes,        check->spike_time,
+         "spikes, winds far above those just before and after them"},
+    };
+    lee_status status = LEE_OK;
+    for (size_t i = 0; i < sizeof doubts / sizeof doubts[0] && status == LEE_OK;
+         i++) {
+        char first[LEE_TIME_TEXT];
+        if (doubts[i].count > 0) {
+            status = lee_notes_add(
+                warnings, error,
+                "%s: %zu in the record%s %s, kept unchanged: levels may "
+                "follow a faulty reading",
+                doubts[i].what, doubts[i].count,
+                doubts[i].count > 1 ? ", the first on" : ", on",
+                lee_time_format_short(doubts[i].first, first));
+        }
+    }
+    return status;
+}
+
 lee_status lee_record_tell(const lee_wind_check *check,
                            const lee_gap_rule *rule, lee_notes *notes,
-                           lee_error *error) {
+                           lee_notes *warnings, lee_error *error) {
     char first[LEE_TIME_TEXT];
     char last[LEE_TIME_TEXT];
     lee_status status = lee_notes_add(
@@ -251,5 +304,8 @@ lee_status lee_record_tell(const lee_wind_check *check,
     if (status == LEE_OK) {
         status = tell_oddities(check, notes, error);
     }
-    return status == LEE_OK ? tell_gaps(check, rule, notes, error) : status;
+    if (status == LEE_OK) {
+        status = tell_gaps(check, rule, notes, error);
+    }
+    return status == LEE_OK ? warn_of_doubts(check, warnings, error) : status;
 }

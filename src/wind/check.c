@@ -154,6 +154,45 @@ lee_status lee_wind_check_record(const lee_wind_record *record,
     return list_gaps(record, rule, check, error);
 }
 
+static int64_t length_of(const lee_wind_gap *gap) {
+    return gap->before - gap->after;
+}
+
+/* Puts a gap before the shorter ones of index[count], which has `room`. */
+static void keep_if_long(const lee_wind_check *check, size_t gap, size_t room,
+                         size_t count, size_t index[]) {
+    size_t i = count;
+    while (i > 0 &&
+           length_of(&check->gap[index[i - 1]]) < length_of(&check->gap[gap])) {
+        if (i < room) {
+            index[i] = index[i - 1];
+        }
+        i--;
+    }
+    if (i < room) {
+        index[i] = gap;
+    }
+}
+
+static int compare_places(const void *left, const void *right) {
+    const size_t a = *(const size_t *)left;
+    const size_t b = *(const size_t *)right;
+    return (a > b) - (a < b);
+}
+
+size_t lee_wind_longest_gaps(const lee_wind_check *check, size_t room,
+                             size_t index[]) {
+    size_t count = 0;
+    for (size_t i = 0; i < check->gap_count; i++) {
+        keep_if_long(check, i, room, count, index);
+        count += count < room ? 1 : 0;
+    }
+    if (count > 0) {
+        qsort(index, count, sizeof *index, compare_places);
+    }
+    return count;
+}
+
 void lee_wind_check_free(lee_wind_check *check) {
     free(check->gap);
     *check = (lee_wind_check){0};

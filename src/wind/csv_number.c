@@ -76,6 +76,38 @@ static lee_status refuse_range(const lee_wind_layout *layout,
         blank, unit, facts->low, facts->high);
 }
 
+static bool has_letter_first(const lee_csv_field *field) {
+    const char c = field->length > 0 ? field->bytes[0] : '\0';
+    return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z');
+}
+
+/* Refuses what is no number; of a word it says what the case may call it. */
+static lee_status refuse_text(const lee_wind_layout *layout,
+                              const lee_csv_field *field,
+                              lee_wind_column column, lee_error *error) {
+    double ignored;
+    if (!has_letter_first(field)) {
+        return lee_csv_number(layout->csv, field, &ignored, error);
+    }
+    char name[LEE_SHOWN];
+    char shown[LEE_SHOWN];
+    const char *header =
+        lee_csv_header_at(layout->csv, layout->index[column])->name;
+    (void)lee_text_show(strlen(header), header, name);
+    (void)lee_text_show(field->length, field->bytes, shown);
+    if (column == LEE_WIND_FROM && layout->variable.text == NULL) {
+        return lee_csv_fail(layout->csv, field, error,
+                            "'%s' is '%s'; expected a number; should it mean "
+                            "that the direction varies, write 'variable: %s' "
+                            "in the case's wind",
+                            name, shown, shown);
+    }
+    return lee_csv_fail(layout->csv, field, error,
+                        "'%s' is '%s'; expected a number; should it mean "
+                        "missing, list it under 'missing'",
+                        name, shown);
+}
+
 lee_status lee_wind_layout_number(const lee_wind_layout *layout,
                                   const lee_csv_field fields[],
                                   lee_wind_column column, double *value,
@@ -88,7 +120,7 @@ lee_status lee_wind_layout_number(const lee_wind_layout *layout,
         !isfinite(raw)) {
         return is_missing_text(layout, field)
                    ? LEE_OK
-                   : lee_csv_number(layout->csv, field, &raw, error);
+                   : refuse_text(layout, field, column, error);
     }
     if (is_missing_number(layout, raw)) {
         return LEE_OK;

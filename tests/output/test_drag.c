@@ -92,6 +92,22 @@ static void sources_are_told_on_request_only(void **state) {
     capture_free(&out);
 }
 
+static void a_table_carries_its_method_and_the_caution(void **state) {
+    (void)state;
+    captured out;
+    const lee_drag_table table = table_of(1, speeds);
+    capture_begin(&out);
+    assert_int_equal(lee_print_drag(out.stream, &table, LEE_UNITS_SI, NULL),
+                     LEE_OK);
+    const char *text = capture_end(&out);
+    assert_contains(text, "\nMethod\n  case              none: winds taken as "
+                          "they are\n");
+    assert_contains(text, "each relation as published, no cap\n");
+    assert_contains(text, "1.250 kg/m3, standard, sea level, 15.0 degC\n");
+    assert_contains(text, "\nPlanning estimates. Flood warnings and decisions");
+    capture_free(&out);
+}
+
 static void json_has_every_value_and_its_mark(void **state) {
     (void)state;
     captured out;
@@ -123,6 +139,7 @@ int main(void) {
         cmocka_unit_test(stress_is_density_times_drag_times_speed_squared),
         cmocka_unit_test(many_speeds_go_on_in_a_second_block),
         cmocka_unit_test(sources_are_told_on_request_only),
+        cmocka_unit_test(a_table_carries_its_method_and_the_caution),
         cmocka_unit_test(json_has_every_value_and_its_mark),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);

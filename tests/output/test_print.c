@@ -70,6 +70,13 @@ errors_are_shown_in_millimetres_or_small_parts_of_feet(void **state) {
     assert_string_equal(lee_show_small(&us, 5.1e-4).text, "0.0017 ft");
 }
 
+/* 153.7289 m are 504.36 ft. */
+static void a_large_error_is_no_crowd_of_millimetres(void **state) {
+    (void)state;
+    assert_string_equal(lee_show_small(&si, 153.7289).text, "153.73 m");
+    assert_string_equal(lee_show_small(&us, 153.7289).text, "504.36 ft");
+}
+
 /* 1 mile is 1609.344 m. */
 static void chainage_is_shown_in_kilometres_or_miles(void **state) {
     (void)state;
@@ -250,6 +257,7 @@ int main(void) {
         cmocka_unit_test(heights_have_no_zeros_at_the_end),
         cmocka_unit_test(
             errors_are_shown_in_millimetres_or_small_parts_of_feet),
+        cmocka_unit_test(a_large_error_is_no_crowd_of_millimetres),
         cmocka_unit_test(chainage_is_shown_in_kilometres_or_miles),
         cmocka_unit_test(areas_and_volumes_take_the_units_of_the_trade),
         cmocka_unit_test(speed_is_shown_in_metres_per_second_or_miles_per_hour),

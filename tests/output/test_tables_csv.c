@@ -68,6 +68,27 @@ static void the_head_says_case_datum_method_and_caution(void **state) {
 }
 
 /* The second station is dry at the last time, the first time is spin-up. */
+static void
+the_head_says_whom_the_case_is_about_and_what_is_not_used(void **state) {
+    (void)state;
+    hand_made made;
+    place here;
+    char text[8192];
+    char office[] = "Marrow harbour office";
+    char ice[] = "ice of the record";
+    char *not_used[] = {ice};
+    make(&made);
+    made.from.institution = office;
+    made.run.method.not_used = (lee_notes){.n = 1, .text = not_used};
+    place_open(&here);
+    write_run(&here, &made, false);
+    read_back(&here, sizeof text, text);
+    assert_non_null(strstr(text, "# institution: Marrow harbour office\n"));
+    assert_null(strstr(text, "# license"));
+    assert_non_null(strstr(text, "# read, not used: ice of the record\n"));
+    place_close(&here);
+}
+
 static void a_series_has_a_column_a_station_and_dry_is_empty(void **state) {
     (void)state;
     hand_made made;
@@ -282,6 +303,8 @@ static void an_ending_alone_is_no_name(void **state) {
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(the_head_says_case_datum_method_and_caution),
+        cmocka_unit_test(
+            the_head_says_whom_the_case_is_about_and_what_is_not_used),
         cmocka_unit_test(a_series_has_a_column_a_station_and_dry_is_empty),
         cmocka_unit_test(low_and_high_stand_beside_a_level_when_kept),
         cmocka_unit_test(the_wind_stands_in_front_on_request),

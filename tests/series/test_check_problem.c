@@ -39,7 +39,7 @@ static void a_record_that_no_run_takes_is_warned_of(void **state) {
     lee_problem problem = broken_record(false);
     lee_problem_check found = check(&problem);
     assert_int_equal(found.warnings.n, 1);
-    assert_non_null(strstr(found.warnings.text[0], "1 gaps are longer"));
+    assert_non_null(strstr(found.warnings.text[0], "1 gap is longer"));
     lee_problem_check_free(&found);
     lee_problem_free(&problem);
 }

@@ -354,6 +354,52 @@ static void an_empty_record_can_be_checked(void **state) {
     assert_int_equal(check.gap_count, 0);
 }
 
+/* A check of gaps of these lengths, s, one behind the other. */
+static lee_wind_check gaps_like(size_t n, const int64_t length[],
+                                lee_wind_gap gap[]) {
+    int64_t t = 0;
+    for (size_t i = 0; i < n; i++) {
+        gap[i] = (lee_wind_gap){.after = t, .before = t + length[i]};
+        t += length[i] + 60;
+    }
+    return (lee_wind_check){.gap_count = n, .gap = gap};
+}
+
+static void the_longest_gaps_are_found_in_order_of_time(void **state) {
+    (void)state;
+    const int64_t length[] = {5, 9, 7, 6, 8, 5};
+    lee_wind_gap gap[6];
+    size_t index[3];
+    const lee_wind_check check = gaps_like(6, length, gap);
+    assert_int_equal(lee_wind_longest_gaps(&check, 3, index), 3);
+    assert_int_equal(index[0], 1);
+    assert_int_equal(index[1], 2);
+    assert_int_equal(index[2], 4);
+}
+
+static void of_equal_gaps_the_earlier_is_longest(void **state) {
+    (void)state;
+    const int64_t length[] = {5, 7, 7, 7};
+    lee_wind_gap gap[4];
+    size_t index[2];
+    const lee_wind_check check = gaps_like(4, length, gap);
+    assert_int_equal(lee_wind_longest_gaps(&check, 2, index), 2);
+    assert_int_equal(index[0], 1);
+    assert_int_equal(index[1], 2);
+}
+
+static void where_all_gaps_find_room_all_are_longest(void **state) {
+    (void)state;
+    const int64_t length[] = {5, 7};
+    lee_wind_gap gap[2];
+    size_t index[3];
+    const lee_wind_check check = gaps_like(2, length, gap);
+    assert_int_equal(lee_wind_longest_gaps(&check, 3, index), 2);
+    assert_int_equal(index[0], 0);
+    assert_int_equal(index[1], 1);
+    assert_int_equal(lee_wind_longest_gaps(&check, 0, index), 0);
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         cmocka_unit_test(a_check_tells_first_last_and_count),
@@ -381,6 +427,9 @@ int main(void) {
         cmocka_unit_test(a_rotated_record_has_the_same_check_but_for_direction),
         cmocka_unit_test(a_freed_check_is_empty),
         cmocka_unit_test(an_empty_record_can_be_checked),
+        cmocka_unit_test(the_longest_gaps_are_found_in_order_of_time),
+        cmocka_unit_test(of_equal_gaps_the_earlier_is_longest),
+        cmocka_unit_test(where_all_gaps_find_room_all_are_longest),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }
