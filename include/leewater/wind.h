@@ -61,7 +61,8 @@ void lee_wind_components(double speed, double from, double *east,
 void lee_wind_speed_from(double east, double north, double *speed,
                          double *from);
 
-/* Columns a CSV record may have. */
+/* Columns a CSV record may have; variables of a NetCDF file, where the time is
+ * LEE_WIND_TIME alone. */
 typedef enum lee_wind_column {
     LEE_WIND_TIME, /* ISO 8601 date and time                                */
     LEE_WIND_DATE, /* ISO date; with LEE_WIND_CLOCK                         */
@@ -163,6 +164,75 @@ typedef struct lee_wind_part {
 lee_status lee_wind_join(size_t count, const lee_wind_part part[],
                          lee_wind_record *joined, lee_notes *remarks,
                          lee_error *error);
+
+/* Which of the points of a grid speak for a position. */
+typedef enum lee_grid_method {
+    LEE_GRID_NEAREST, /* the nearest one                                    */
+    LEE_GRID_BILINEAR /* the four around it; missing where a needed one is  */
+} lee_grid_method;
+
+/* How a NetCDF file is to be read. Borrows its texts. {0} is enough for a file
+ * that follows the CF conventions and holds one series: the wind is then found
+ * by standard names (eastward_wind and northward_wind, or else wind_speed and
+ * wind_from_direction or wind_to_direction). */
+typedef struct lee_wind_netcdf {
+    struct {
+        const char *name; /* of the variable, "group/name" inside a group. NULL:
+                             by standard name (time and wind), or not read    */
+        const char *unit; /* when the file has none; of LEE_WIND_TIME "hours
+                             since 1996-01-05 00:00"; NULL otherwise          */
+        const char *path; /* of another file that holds it; NULL: the same    */
+    } column[LEE_WIND_COLUMNS];
+    const char *calendar; /* when the file has none; NULL: the standard one */
+    const char *station;  /* its name in the file, or "#3" for the third; NULL
+                             when there is only one                         */
+    bool has_position;    /* of one point of a grid, or of the station nearest
+                             to it                                          */
+    double longitude;     /* degrees east, -180 to 360                      */
+    double latitude;      /* degrees north                                  */
+    lee_grid_method method;
+    bool has_utc_offset;
+    int64_t utc_offset; /* s east of UTC of a reference date without a zone;
+                           UTC when not given, as the conventions say      */
+    size_t missing_count;
+    const double *missing; /* [missing_count] stored values that mean
+                              "missing", beside what the file says itself   */
+    lee_stamp stamp;
+    bool is_apart; /* read in a child process with limits on time and memory:
+                      damaged NetCDF-4 files can crash the NetCDF library or
+                      keep it for ever. The child is forked: ask for it before
+                      any thread starts. Without it the file is read in the
+                      caller's process, and should be one that is trusted   */
+} lee_wind_netcdf;
+
+/* Reads a wind record out of NetCDF: a time series; one station of several
+ * (orthogonal, incomplete, contiguous or indexed ragged arrays of the CF
+ * conventions, chapter 9); or one point of a grid over time, latitude and
+ * longitude, either way round and with longitudes of either kind. Other
+ * dimensions have to be of length 1. The file is a regular one; a classic file
+ * that is shorter than its header says is refused.
+ *
+ * Packed values are unpacked; what the file marks as missing is. Times in any
+ * calendar of the conventions become UTC: real days are counted, dates of
+ * model calendars (noleap, all_leap, 360_day) are taken by name. Rows follow
+ * the rules of lee_wind_read_csv: duplicates, order, ranges, calm. Refused
+ * are winds along the axes of a grid as eastward and northward, months as
+ * time, pressure reduced to sea level, and positions off the grid.
+ *
+ *   path    a regular file
+ *   how     how to read it
+ *   record  out: freed with lee_wind_record_free
+ *   told    adds what was read: variables, calendar, station, grid point with
+ *           its distance; may be NULL
+ *
+ * Not thread-safe: no two threads may read NetCDF at once.
+ * Errors: LEE_ERR_FILE, LEE_ERR_FORMAT (file, variable, index), LEE_ERR_DATA
+ * when no sample has a wind, LEE_ERR_ARGUMENT for a position that makes no
+ * sense, LEE_ERR_MEMORY.
+ * Source: CF Conventions 1.8 [cfconventions]. */
+lee_status lee_wind_read_netcdf(const char *path, const lee_wind_netcdf *how,
+                                lee_wind_record *record, lee_notes *told,
+                                lee_error *error);
 
 /* What to do where the record has no wind. */
 typedef struct lee_gap_rule {

@@ -96,7 +96,8 @@ find_rooms() {
         stdlib.h | string.h | time.h) rooms=any ;;
     locale.h | pthread.h) rooms=base ;;
     fcntl.h | unistd.h | sys/*.h) rooms='base formats cli' ;;
-    signal.h | getopt.h) rooms=cli ;;
+    signal.h) rooms='formats cli' ;;
+    getopt.h) rooms=cli ;;
     emmintrin.h) rooms=formats ;;
     *) rooms=nobody ;;
     esac
