@@ -303,6 +303,7 @@ typedef struct lee_problem_check {
     double still_water;
     bool has_record;
     lee_wind_check record;
+    lee_wind_summary summary; /* of the record; empty without one */
     size_t pieces;
     lee_notes warnings;
 } lee_problem_check;

@@ -309,6 +309,96 @@ typedef struct lee_wind_piece {
     size_t end;
 } lee_wind_piece;
 
+/* One of the strongest storms of a record: a wind faster than all of the 48 h
+ * before it and not slower than all of the 48 h after it, so that two of them
+ * are parted by more than that. */
+typedef struct lee_wind_storm {
+    int64_t time;    /* of the fastest wind, s since 1970                  */
+    double speed;    /* m s-1                                              */
+    double from;     /* radians                                            */
+    double duration; /* s around it at three quarters of its speed or more */
+    bool is_cut;     /* the record does not show its begin or its end: the
+                        duration is the least                              */
+    bool is_spike;   /* the record check takes its wind for a spike        */
+} lee_wind_storm;
+
+enum {
+    LEE_WIND_STORMS = 10,        /* at most listed                   */
+    LEE_ROSE_DIRECTIONS = 16,    /* centred on north, then clockwise */
+    LEE_ROSE_CLASSES = 6,        /* of speed                         */
+    LEE_WIND_PERCENTILES = 6,    /* of speed                         */
+    LEE_STORM_PARTED = 48 * 3600 /* s, least time between storms     */
+};
+
+/* The LEE_WIND_STORMS strongest storms, the strongest first, of equals the
+ * earlier. Durations follow the wind between the samples: instants are
+ * linear, means hold over their step. A sample that is missing, or more than
+ * one and a half steps away, cuts a storm.
+ *
+ *   step   the record's usual step, s (lee_wind_check)
+ *   count  out: how many there are
+ *   storm  [LEE_WIND_STORMS] out
+ *
+ * Errors: LEE_ERR_MEMORY. Source: a separation of 48 h is common practice for
+ * independent storms; the duration is our own choice, a little above half of
+ * the greatest stress. */
+lee_status lee_wind_storms(const lee_wind_record *record, int64_t step,
+                           size_t *count, lee_wind_storm storm[],
+                           lee_error *error);
+
+/* What a calendar month of a record holds. */
+typedef struct lee_wind_month {
+    int year;
+    int month;        /* 1 to 12 */
+    size_t samples;   /* whose step begins in it */
+    size_t with_wind; /* of them */
+    double coverage;  /* share of the month, 0 to 1; NaN when the record has
+                         one sample and therefore no step */
+} lee_wind_month;
+
+/* Sums over a record, nothing filled in. A sample with wind stands for the
+ * time up to the next sample (END: from the one before it), at most for the
+ * usual step. {0} is valid. Owns `month`. */
+typedef struct lee_wind_summary {
+    size_t samples;
+    size_t with_wind;
+    double coverage; /* share of the time from the begin of the first to the
+                        end of the last step that has wind; NaN for one sample*/
+    size_t month_count;
+    lee_wind_month *month; /* [month_count] from the first to the last, those
+                              without samples among them */
+
+    /* Shares of the time with wind, together 1; NaN without any wind. Where
+     * all directions are whole tens of degrees (of a hundred winds at least),
+     * each is spread over the ten degrees around it: else the sectors that
+     * hold three tens would outweigh those that hold two. */
+    double calm;
+    double rose[LEE_ROSE_DIRECTIONS][LEE_ROSE_CLASSES];
+    bool is_spread;
+
+    /* Speeds that these shares of the samples with wind do not exceed, m s-1:
+     * the inverse of the empirical distribution. */
+    double percentile[LEE_WIND_PERCENTILES];
+
+    size_t storm_count;
+    lee_wind_storm storm[LEE_WIND_STORMS];
+} lee_wind_summary;
+
+/* Lowest speed of a class of the rose, m s-1 (0 for the first, which holds no
+ * calm), and a percentile as a number from 0 to 100. */
+double lee_rose_class_from(size_t index);
+double lee_wind_percent(size_t index);
+
+/* Sums up a record.
+ *
+ *   step  the record's usual step, s (lee_wind_check)
+ *
+ * Errors: LEE_ERR_MEMORY. Sources: percentiles by Hyndman and Fan (1996),
+ * definition 1 [hyndmanfan1996]; classes of our own. */
+lee_status lee_wind_summarise(const lee_wind_record *record, int64_t step,
+                              lee_wind_summary *summary, lee_error *error);
+void lee_wind_summary_free(lee_wind_summary *summary);
+
 /* Parts a record into pieces. One piece when nothing is beyond the rule.
  * A piece begins and ends with a sample that has a wind (one and the same
  * when it stands alone): missing ones at its ends belong to no piece.

@@ -64,6 +64,77 @@ static void put_gaps(lee_json *json, const lee_wind_check *record) {
     lee_json_close(json);
 }
 
+static void put_months(lee_json *json, const lee_wind_summary *summary) {
+    lee_json_open_list(json, "months");
+    for (size_t i = 0; i < summary->month_count; i++) {
+        const lee_wind_month *month = &summary->month[i];
+        lee_json_open_object(json, NULL);
+        lee_json_put_count(json, "year", (size_t)month->year);
+        lee_json_put_count(json, "month", (size_t)month->month);
+        lee_json_put_count(json, "samples", month->samples);
+        lee_json_put_count(json, "with_wind", month->with_wind);
+        lee_json_put_number(json, "coverage", month->coverage);
+        lee_json_close(json);
+    }
+    lee_json_close(json);
+}
+
+static void put_rose(lee_json *json, const lee_wind_summary *summary) {
+    lee_json_open_object(json, "rose");
+    lee_json_open_list(json, "class_from_m_s");
+    for (size_t k = 0; k < LEE_ROSE_CLASSES; k++) {
+        lee_json_put_number(json, NULL, lee_rose_class_from(k));
+    }
+    lee_json_close(json);
+    lee_json_put_flag(json, "tens_are_spread", summary->is_spread);
+    lee_json_put_number(json, "calm_share", summary->calm);
+    lee_json_open_list(json, "sectors");
+    for (size_t i = 0; i < LEE_ROSE_DIRECTIONS; i++) {
+        lee_json_open_object(json, NULL);
+        lee_json_put_number(json, "from_degree",
+                            360.0 / LEE_ROSE_DIRECTIONS * (double)i);
+        lee_json_open_list(json, "class_shares");
+        for (size_t k = 0; k < LEE_ROSE_CLASSES; k++) {
+            lee_json_put_number(json, NULL, summary->rose[i][k]);
+        }
+        lee_json_close(json);
+        lee_json_close(json);
+    }
+    lee_json_close(json);
+    lee_json_close(json);
+}
+
+static void put_storms(lee_json *json, const lee_wind_summary *summary) {
+    lee_json_open_list(json, "storms");
+    for (size_t i = 0; i < summary->storm_count; i++) {
+        const lee_wind_storm *storm = &summary->storm[i];
+        lee_json_open_object(json, NULL);
+        lee_json_put_time(json, "time", true, storm->time);
+        lee_json_put_number(json, "speed_m_s", storm->speed);
+        lee_json_put_degrees(json, "from_degree", storm->from);
+        lee_json_put_number(json, "duration_s", storm->duration);
+        lee_json_put_flag(json, "is_cut", storm->is_cut);
+        lee_json_put_flag(json, "is_spike", storm->is_spike);
+        lee_json_close(json);
+    }
+    lee_json_close(json);
+}
+
+static void put_summary(lee_json *json, const lee_wind_summary *summary) {
+    lee_json_put_number(json, "coverage", summary->coverage);
+    put_months(json, summary);
+    put_rose(json, summary);
+    lee_json_open_list(json, "percentiles");
+    for (size_t i = 0; i < LEE_WIND_PERCENTILES; i++) {
+        lee_json_open_object(json, NULL);
+        lee_json_put_number(json, "percent", lee_wind_percent(i));
+        lee_json_put_number(json, "speed_m_s", summary->percentile[i]);
+        lee_json_close(json);
+    }
+    lee_json_close(json);
+    put_storms(json, summary);
+}
+
 static void put_record(lee_json *json, const lee_case *from,
                        const lee_problem_check *check) {
     const lee_wind_check *record = &check->record;
@@ -94,6 +165,7 @@ static void put_record(lee_json *json, const lee_case *from,
     lee_json_put_degrees(json, "fastest_from_degree", record->fastest_from);
     lee_json_put_time(json, "fastest_time", true, record->fastest_time);
     put_gaps(json, record);
+    put_summary(json, &check->summary);
 }
 
 static void put_stations(lee_json *json, const lee_problem *problem) {

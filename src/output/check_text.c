@@ -4,6 +4,7 @@
 #include <string.h>
 
 #include "output/print.h"
+#include "output/record_picture.h"
 
 #include "base/constants.h"
 #include "leewater/output.h"
@@ -282,6 +283,7 @@ lee_status lee_print_check(FILE *stream, const lee_case *from,
     print_lake(&to, from, check);
     print_stations(&to, from, check->still_water);
     print_wind(&to, from, check);
+    lee_print_record_picture(&to, check);
     lee_print_notes(&to, "Warnings", &check->warnings);
     lee_print_method(&to, &method);
     lee_print_caution(&to);

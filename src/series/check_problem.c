@@ -47,6 +47,11 @@ static lee_status check_record(const lee_problem *problem,
     if (status != LEE_OK) {
         return status;
     }
+    status = lee_wind_summarise(&source->record, check->record.step,
+                                &check->summary, error);
+    if (status != LEE_OK) {
+        return status;
+    }
     check->has_record = true;
     check->pieces = 1;
     for (size_t i = 0; i < check->record.gap_count; i++) {
@@ -101,6 +106,7 @@ lee_status lee_check_problem(const lee_problem *problem,
 
 void lee_problem_check_free(lee_problem_check *check) {
     lee_wind_check_free(&check->record);
+    lee_wind_summary_free(&check->summary);
     lee_method_free(&check->method);
     lee_notes_free(&check->warnings);
     *check = (lee_problem_check){0};

@@ -74,14 +74,20 @@ static void count_winds(const lee_wind_record *record, lee_wind_check *check) {
     check->mean_speed = count > 0 ? lee_sum_value(&sum) / (double)count : NAN;
 }
 
+bool lee_wind_is_spike(const lee_wind_record *record, int64_t step,
+                       size_t before, size_t here, size_t after) {
+    return stands_out(record, step, here, before) &&
+           stands_out(record, step, here, after);
+}
+
 static void count_spikes(const lee_wind_record *record, lee_wind_check *check) {
     const size_t n = record->n;
     size_t before = lee_wind_seek(record, 0, n);
     size_t here = lee_wind_seek(record, before + 1, n);
     while (here < n) {
         const size_t after = lee_wind_seek(record, here + 1, n);
-        if (after < n && stands_out(record, check->step, here, before) &&
-            stands_out(record, check->step, here, after) &&
+        if (after < n &&
+            lee_wind_is_spike(record, check->step, before, here, after) &&
             check->spikes++ == 0) {
             check->spike_time = record->time[here];
         }

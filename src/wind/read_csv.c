@@ -8,7 +8,7 @@
 #include "formats/csv.h"
 #include "leewater/calendar.h"
 #include "wind/columns.h"
-#include "wind/csv_layout.h"
+#include "wind/csv/csv_layout.h"
 
 /* A wind of no direction below this speed is calm (common practice). */
 static const double variable_calm_speed = 3.0; /* m s-1 */

@@ -25,6 +25,11 @@ static inline size_t lee_wind_seek(const lee_wind_record *record, size_t index,
     return index;
 }
 
+/* Is the wind at `here` a spike between those before and after it? All three
+ * are samples with wind. (check.c) */
+bool lee_wind_is_spike(const lee_wind_record *record, int64_t step,
+                       size_t before, size_t here, size_t after);
+
 /* Are two successive samples with wind, this many seconds apart, further
  * apart than the gap rule bridges? */
 static inline bool lee_wind_is_long_gap(const lee_gap_rule *rule, int64_t step,

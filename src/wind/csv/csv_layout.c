@@ -1,5 +1,5 @@
 /* csv_layout.c - finds the columns of a CSV record and reads their numbers. */
-#include "wind/csv_layout.h"
+#include "wind/csv/csv_layout.h"
 
 #include <math.h>
 #include <stdlib.h>

@@ -1,5 +1,5 @@
 /* csv_time.c - the time of a row of a CSV record. */
-#include "wind/csv_layout.h"
+#include "wind/csv/csv_layout.h"
 
 #include <string.h>
 

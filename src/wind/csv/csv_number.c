@@ -1,5 +1,5 @@
 /* csv_number.c - numbers of a CSV record: missing, converted, in range. */
-#include "wind/csv_layout.h"
+#include "wind/csv/csv_layout.h"
 
 #include <math.h>
 #include <string.h>
