@@ -142,11 +142,42 @@ def write_wind(folder):
                           % (stamp, speed, round(come_from) % 360))
 
 
+def air_at(hour):
+    """Mild air ahead of the front, cold behind it, degC."""
+    if hour <= 121:
+        return 3.0 + 5.0 * hour / 121.0
+    return max(-4.0, 8.0 - 1.5 * (hour - 121)) + hour / 100.0
+
+
+def write_airfield(folder):
+    """The same weather as an airfield 6 m mast tells it: gusts in whole
+    knots, the vane set to magnetic north, 3 degrees east of true here."""
+    with open(os.path.join(folder, "marrow_airfield.csv"), "w",
+              newline="\n") as out:
+        out.write(
+            "# The invented weather of marrow_wind.csv at an airfield: 3 s\n"
+            "# gusts of the last 10 min, 6 m over grass, directions from\n"
+            "# magnetic north. Nothing was measured. CC0. Made by\n"
+            "# make_demo.py.\n"
+            "time,gust [knots],from [degree],air [degC],water [degC]\n")
+        for hour in range(241):
+            when = START + datetime.timedelta(hours=hour)
+            speed, come_from = weather_at(hour)
+            gust = round(speed / 1.2 * 1.6 / 0.514444)
+            direction = "" if gust == 0 else "%d" % (
+                round((come_from - 3) / 10.0) * 10 % 360)
+            water = "" if 60 <= hour < 66 else "%.1f" % (4.6 - hour / 400.0)
+            out.write("%s,%d,%s,%.1f,%s\n"
+                      % (when.strftime("%Y-%m-%dT%H:%MZ"), gust, direction,
+                         air_at(hour), water))
+
+
 def main():
     here = os.path.dirname(os.path.abspath(__file__))
     folder = sys.argv[1] if len(sys.argv) > 1 else here
     write_axis(folder)
     write_wind(folder)
+    write_airfield(folder)
 
 
 if __name__ == "__main__":

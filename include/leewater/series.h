@@ -127,11 +127,12 @@ typedef struct lee_method {
     char bed[80];
     size_t correction_count;
     lee_correction correction[LEE_CORRECTIONS];
-    double correction_speed; /* measured speed the factors are shown for */
-    double reference_height; /* 10 m */
-    lee_notes range_members; /* what the range is made of */
-    lee_notes record;        /* what the record check found and did */
-    lee_notes not_used;      /* what was read and takes no part yet */
+    lee_exposure_sample corrected; /* measured wind the factors are shown for;
+                                      temperatures NaN where none is used */
+    double reference_height;       /* 10 m */
+    lee_notes range_members;       /* what the range is made of */
+    lee_notes record;              /* what the record check found and did */
+    lee_notes not_used;            /* what was read and takes no part yet */
 } lee_method;
 void lee_method_free(lee_method *method);
 

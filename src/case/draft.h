@@ -64,6 +64,8 @@ typedef struct lee_case_draft {
     lee_axis_draft axis;
     double water_temperature; /* K; NaN */
     lee_wind_draft wind;
+    const char *to_water_table;
+    int stability_functions; /* index of the set */
     const char *drag_table;
     double drag_cap; /* NaN when not given */
     lee_given_time from;
@@ -84,7 +86,10 @@ lee_key_read lee_key_from;        /* lee_case_draft: column or quantity */
 lee_key_read lee_key_record;      /* lee_wind_draft                     */
 lee_key_read lee_key_missing;     /* lee_wind_draft                     */
 lee_key_read lee_key_winds;       /* lee_wind_source                    */
-lee_key_read lee_key_over;        /* lee_exposure                       */
+lee_key_read lee_key_gust;        /* lee_case_draft                     */
+lee_key_read lee_key_over;        /* lee_case_draft                     */
+lee_key_read lee_key_to_water;    /* lee_case_draft                     */
+lee_key_read lee_key_stability;   /* lee_case_draft                     */
 lee_key_read lee_key_storm;       /* lee_case_draft                     */
 lee_key_read lee_key_drag;        /* lee_case_draft                     */
 lee_key_read lee_key_return_flow; /* lee_problem                        */
@@ -94,12 +99,14 @@ lee_key_read lee_key_thresholds;  /* lee_station                        */
 /* Second part: the parts put together, files read; problems gathered. */
 void lee_case_finish_lake(lee_case_reader *reader, lee_case_draft *draft);
 void lee_case_finish_wind(lee_case_reader *reader, lee_case_draft *draft);
+void lee_case_finish_exposure(lee_case_reader *reader, lee_case_draft *draft);
 void lee_case_finish_drag(lee_case_reader *reader, lee_case_draft *draft);
 void lee_case_finish_stations(lee_case_reader *reader, lee_case_draft *draft);
 
 /* Combinations that need no other file. */
 void lee_case_check_lake(lee_case_reader *reader, lee_case_draft *draft);
 void lee_case_check_wind(lee_case_reader *reader, lee_case_draft *draft);
+void lee_case_check_exposure(lee_case_reader *reader, lee_case_draft *draft);
 
 /* The node at a path of keys, "lake/axis/profile"; NULL when not there. */
 const lee_yaml_node *lee_case_node(const lee_case_draft *draft,

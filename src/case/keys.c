@@ -31,6 +31,9 @@
 /* A mapping whose keys read into what its own key was handed. */
 #define INSIDE(key, need, keys) \
     { (key), lee_key_section_of, need, .section = &(keys) }
+/* A key of the whole draft whose value may be a mapping of these keys. */
+#define OR_MAPPING(key, reader, keys, ...) \
+    { (key), (reader), .section = &(keys), __VA_ARGS__ }
 #define SECTION(rows, not_together, not_alone) \
     { (rows), sizeof(rows) / sizeof(rows)[0], (not_together), (not_alone) }
 
@@ -148,11 +151,38 @@ static const lee_key given_rows[] = {
 };
 static const lee_key_section given_keys = SECTION(given_rows, NULL, NULL);
 
+static const char *const gust_classes[] = {"in-land", "off-land", "off-sea",
+                                           "at-sea", NULL};
+
+static const lee_key gust_rows[] = {
+    KEY("duration", lee_key_quantity, lee_case_draft,
+        result.problem.exposure.gust_duration, REQUIRED,
+        BETWEEN("s", 1.0, 3600.0)),
+    KEY("period", lee_key_quantity, lee_case_draft,
+        result.problem.exposure.gust_period, REQUIRED,
+        BETWEEN("min", 1.0, 60.0), STORED("s")),
+    KEY("exposure", lee_key_choice, lee_case_draft,
+        result.problem.exposure.gust_class, REQUIRED, .words = gust_classes),
+};
+static const lee_key_section gust_keys = SECTION(gust_rows, NULL, NULL);
+
+static const lee_key to_water_rows[] = {
+    KEY("fetch", lee_key_quantity, lee_case_draft,
+        result.problem.exposure.to_water_fetch, OPTIONAL, ABOVE("m", 0.0, 2e6)),
+    KEY("table", lee_key_borrow, lee_case_draft, to_water_table, OPTIONAL),
+};
+static const lee_key_pair to_water_excluded[] = {
+    {"fetch", "table"},
+    {NULL,    NULL   },
+};
+static const lee_key_section to_water_keys =
+    SECTION(to_water_rows, to_water_excluded, NULL);
+
 static const lee_key land_rows[] = {
-    KEY("roughness_length", lee_key_quantity, lee_exposure, land_roughness,
-        REQUIRED, ABOVE("m", 0.0, 5.0)),
-    KEY("to_water", lee_key_quantity, lee_exposure, land_to_water, REQUIRED,
-        BETWEEN("1", 0.5, 3.0)),
+    KEY("roughness_length", lee_key_quantity, lee_case_draft,
+        result.problem.exposure.land_roughness, REQUIRED, ABOVE("m", 0.0, 5.0)),
+    OR_MAPPING("to_water", lee_key_to_water, to_water_keys, REQUIRED,
+               BETWEEN("1", 0.5, 3.0)),
 };
 static const lee_key_section land_keys = SECTION(land_rows, NULL, NULL);
 
@@ -160,6 +190,31 @@ static const lee_key over_rows[] = {
     INSIDE("land", REQUIRED, land_keys),
 };
 static const lee_key_section over_keys = SECTION(over_rows, NULL, NULL);
+
+/* In the order of lee_stability_method, and of lee_stability_functions_at. */
+static const char *const stability_methods[] = {"none", "monin-obukhov",
+                                                "air-water-ratio", NULL};
+static const char *const stability_sets[] = {"coare-3.5", "coare-3.0",
+                                             "businger-dyer", NULL};
+
+static const lee_key stability_rows[] = {
+    KEY("method", lee_key_choice, lee_case_draft,
+        result.problem.exposure.stability, REQUIRED,
+        .words = stability_methods),
+    KEY("air_temperature", lee_key_quantity, lee_case_draft,
+        result.problem.exposure.air_temperature, OPTIONAL,
+        BETWEEN("degC", -60.0, 60.0), STORED("K")),
+    KEY("water_temperature", lee_key_quantity, lee_case_draft,
+        result.problem.exposure.water_temperature, OPTIONAL,
+        BETWEEN("degC", -5.0, 45.0), STORED("K")),
+    KEY("temperature_height", lee_key_quantity, lee_case_draft,
+        result.problem.exposure.temperature_height, OPTIONAL,
+        BETWEEN("m", 0.5, 50.0)),
+    KEY("functions", lee_key_choice, lee_case_draft, stability_functions,
+        OPTIONAL, .words = stability_sets),
+};
+static const lee_key_section stability_keys =
+    SECTION(stability_rows, NULL, NULL);
 
 static const char *const stamps[] = {"instant", "start", "middle", "end", NULL};
 static const char *const height_methods[] = {"log", "power", "factor", NULL};
@@ -217,27 +272,35 @@ static const lee_key wind_rows[] = {
         result.problem.exposure.averaging, OPTIONAL, MINUTES),
     KEY("maximum", lee_key_flag, lee_case_draft,
         result.problem.exposure.is_maximum, OPTIONAL),
-    KEY("over", lee_key_over, lee_case_draft, result.problem.exposure, OPTIONAL,
-        .section = &over_keys),
+    KEY("direction_offset", lee_key_quantity, lee_case_draft,
+        result.problem.exposure.direction_offset, OPTIONAL,
+        BETWEEN("degree", -180.0, 180.0), STORED("rad")),
+    OR_MAPPING("gust", lee_key_gust, gust_keys, OPTIONAL),
+    OR_MAPPING("over", lee_key_over, over_keys, OPTIONAL),
+    OR_MAPPING("stability", lee_key_stability, stability_keys, OPTIONAL,
+               BETWEEN("1", 0.5, 2.0), .words = stability_methods),
 };
 static const lee_key_pair wind_excluded[] = {
-    {"record", "winds"     },
-    {"record", "directions"},
-    {"record", "duration"  },
-    {"winds",  "speed"     },
-    {"winds",  "from"      },
-    {"winds",  "directions"},
-    {"winds",  "duration"  },
-    {"from",   "directions"},
-    {"speed",  "eastward"  },
-    {"speed",  "northward" },
-    {"from",   "eastward"  },
-    {"from",   "northward" },
-    {"time",   "date"      },
-    {"time",   "year"      },
-    {"date",   "year"      },
-    {"clock",  "hour"      },
-    {NULL,     NULL        },
+    {"record",           "winds"     },
+    {"record",           "directions"},
+    {"record",           "duration"  },
+    {"winds",            "speed"     },
+    {"winds",            "from"      },
+    {"winds",            "directions"},
+    {"winds",            "duration"  },
+    {"from",             "directions"},
+    {"speed",            "eastward"  },
+    {"speed",            "northward" },
+    {"from",             "eastward"  },
+    {"from",             "northward" },
+    {"time",             "date"      },
+    {"time",             "year"      },
+    {"date",             "year"      },
+    {"clock",            "hour"      },
+    {"gust",             "averaging" },
+    {"gust",             "maximum"   },
+    {"direction_offset", "directions"},
+    {NULL,               NULL        },
 };
 static const lee_key_pair wind_needs[] = {
     {"time",              "record"       },

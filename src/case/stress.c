@@ -6,7 +6,7 @@
 #include "base/number.h"
 #include "base/text.h"
 #include "case/draft.h"
-#include "formats/csv_column.h"
+#include "case/table.h"
 
 #include "leewater/units.h"
 
@@ -68,91 +68,23 @@ void lee_key_return_flow(lee_case_reader *reader, const lee_yaml_node *node,
     }
 }
 
-/* The columns of a drag table. */
-typedef struct drag_columns {
-    lee_csv_column speed;
-    lee_csv_column coefficient;
-} drag_columns;
-
-static lee_status find_columns(const lee_csv *csv, drag_columns *columns,
-                               lee_error *error) {
-    const lee_status status =
-        lee_csv_find_column(csv, "speed", "m s-1", &columns->speed, error);
-    return status == LEE_OK ? lee_csv_find_column(csv, "coefficient", "1",
-                                                  &columns->coefficient, error)
-                            : status;
-}
-
-static lee_status add_row(lee_drag *drag, double speed, double coefficient,
-                          lee_error *error) {
-    const size_t n = drag->n + 1;
-    double *grown = realloc(drag->speed, n * sizeof *grown);
-    if (grown != NULL) {
-        drag->speed = grown;
-        grown = realloc(drag->coefficient, n * sizeof *grown);
-    }
-    if (grown == NULL) {
-        return lee_fail(error, LEE_ERR_MEMORY, "no room for a drag table");
-    }
-    drag->coefficient = grown;
-    drag->speed[drag->n] = speed;
-    drag->coefficient[drag->n] = coefficient;
-    drag->n = n;
-    return LEE_OK;
-}
-
-static lee_status take_row(const lee_csv *csv, const lee_csv_field *fields,
-                           const drag_columns *columns, lee_drag *drag,
-                           lee_error *error) {
-    double speed = 0.0;
-    double coefficient = 0.0;
-    lee_status status =
-        lee_csv_column_number(csv, fields, &columns->speed, &speed, error);
-    if (status == LEE_OK) {
-        status = lee_csv_column_number(csv, fields, &columns->coefficient,
-                                       &coefficient, error);
-    }
-    if (status != LEE_OK) {
-        return status;
-    }
-    const double last = drag->n == 0 ? -1.0 : drag->speed[drag->n - 1];
-    if (!(speed >= 0.0 && speed > last)) {
-        return lee_csv_fail(csv, &fields[columns->speed.index], error,
-                            "speed %g m/s does not grow from row to row, "
-                            "from 0 on",
-                            speed);
-    }
-    if (!(coefficient > 0.0 && coefficient <= 0.02)) {
-        return lee_csv_fail(csv, &fields[columns->coefficient.index], error,
-                            "drag coefficient %g; expected more than 0 and "
-                            "up to 0.02",
-                            coefficient);
-    }
-    return add_row(drag, speed, coefficient, error);
-}
+static const lee_speed_table_kind drag_table = {
+    .table = "a drag table",
+    .column = "coefficient",
+    .value = "drag coefficient",
+    .range = "more than 0 and up to 0.02",
+    .above = 0.0,
+    .highest = 0.02,
+};
 
 static lee_status read_table(const char *path, lee_drag *drag,
                              lee_error *error) {
-    lee_csv *csv = NULL;
-    drag_columns columns = {0};
-    lee_status status = lee_csv_open(path, &csv, error);
-    if (status == LEE_OK) {
-        status = find_columns(csv, &columns, error);
-    }
-    while (status == LEE_OK) {
-        const lee_csv_field *fields = NULL;
-        status = lee_csv_next(csv, &fields, error);
-        if (status != LEE_OK || fields == NULL) {
-            break;
-        }
-        status = take_row(csv, fields, &columns, drag, error);
-    }
-    lee_csv_close(csv);
-    if (status == LEE_OK && drag->n < 2) {
-        return lee_fail(error, LEE_ERR_DATA,
-                        "%s: a drag table needs two rows, this one has %zu",
-                        path, drag->n);
-    }
+    lee_speed_table table;
+    const lee_status status =
+        lee_speed_table_read(path, &drag_table, &table, error);
+    drag->n = table.n;
+    drag->speed = table.speed;
+    drag->coefficient = table.value;
     return status;
 }
 

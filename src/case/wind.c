@@ -137,22 +137,6 @@ void lee_key_winds(lee_case_reader *reader, const lee_yaml_node *node,
     }
 }
 
-void lee_key_over(lee_case_reader *reader, const lee_yaml_node *node,
-                  const lee_key *key, void *into) {
-    lee_exposure *exposure = (void *)((char *)into + key->offset);
-    if (node->kind == LEE_YAML_SCALAR && strcmp(node->text, "water") == 0) {
-        return;
-    }
-    if (node->kind != LEE_YAML_MAPPING) {
-        lee_key_problem(reader, node, key->name,
-                        "should be water, or {land: {roughness_length: "
-                        "0.03 m, to_water: 1.2}}");
-        return;
-    }
-    exposure->is_over_land = true;
-    lee_key_section_of(reader, node, key, into);
-}
-
 void lee_key_storm(lee_case_reader *reader, const lee_yaml_node *node,
                    const lee_key *key, void *into) {
     lee_case_draft *draft = into;
@@ -210,26 +194,6 @@ static void check_given(lee_case_reader *reader, const lee_case_draft *draft,
     }
 }
 
-static void check_exposure(lee_case_reader *reader, const lee_case_draft *draft,
-                           const lee_yaml_node *wind) {
-    const lee_exposure *exposure = &draft->result.problem.exposure;
-    const lee_yaml_node *method = lee_yaml_get(wind, "height_method");
-    const bool has_factor = lee_yaml_get(wind, "height_factor") != NULL;
-    if (method == NULL) {
-        return;
-    }
-    const bool is_factor = exposure->height_method == LEE_HEIGHT_FACTOR;
-    if (is_factor && !has_factor) {
-        lee_key_problem(reader, method, "wind.height_method",
-                        "is 'factor' and needs 'height_factor'");
-    }
-    if (!is_factor && has_factor) {
-        lee_key_problem(reader, method, "wind.height_method",
-                        "and 'height_factor' exclude each other unless the "
-                        "method is 'factor'");
-    }
-}
-
 void lee_case_check_wind(lee_case_reader *reader, lee_case_draft *draft) {
     const lee_yaml_node *wind = lee_case_node(draft, "wind");
     if (draft->wind.has_storm) {
@@ -238,7 +202,7 @@ void lee_case_check_wind(lee_case_reader *reader, lee_case_draft *draft) {
     if (wind == NULL || wind->kind != LEE_YAML_MAPPING) {
         return;
     }
-    check_exposure(reader, draft, wind);
+    lee_case_check_exposure(reader, draft);
     if (lee_yaml_get(wind, "record") == NULL) {
         check_given(reader, draft, wind);
     }
@@ -409,7 +373,6 @@ static void give_one(lee_case_reader *reader, lee_case_draft *draft) {
 
 void lee_case_finish_wind(lee_case_reader *reader, lee_case_draft *draft) {
     lee_wind_source *source = &draft->result.problem.wind;
-    const lee_yaml_node *wind = lee_case_node(draft, "wind");
     if (draft->wind.record_count > 0) {
         read_record(reader, draft);
     } else if (draft->wind.has_storm) {
@@ -419,10 +382,5 @@ void lee_case_finish_wind(lee_case_reader *reader, lee_case_draft *draft) {
     } else if (!isnan(draft->wind.given.speed)) {
         give_one(reader, draft);
     }
-    lee_error error = {0};
-    if (wind != NULL &&
-        lee_exposure_check(&draft->result.problem.exposure, &error) != LEE_OK) {
-        lee_key_problem(reader, wind, "wind", "cannot be used: %s",
-                        error.message);
-    }
+    lee_case_finish_exposure(reader, draft);
 }

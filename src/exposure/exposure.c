@@ -1,7 +1,8 @@
-/* exposure.c - the chain from the anemometer to 10 m over open water. */
+/* exposure.c - where and how a wind was measured, and whether that can be. */
 #include "leewater/exposure.h"
 
 #include <math.h>
+#include <stdlib.h>
 
 #include "base/constants.h"
 
@@ -9,24 +10,48 @@
  * slip of the pen, not an exposure (own judgement). */
 static const double least_factor = 0.2;
 static const double greatest_factor = 5.0;
+static const double highest_thermometer = 50.0; /* m */
 
-/* A factor this near to 1 corrects nothing. */
-static const double identity = 1e-12;
-
-/* Steps of the search for U10. Each second one halves what is left, so a
- * hundred pairs end any search that can end. */
-enum { MAX_STEPS = 200 };
-static const double speed_tolerance = 1e-10; /* share of U10 */
+/* What a record may hold, too (docs/formats.md, "Wind record"), K. */
+static const double coldest_air = 180.0;
+static const double warmest_air = 335.0;
+static const double coldest_water = 268.0;
+static const double warmest_water = 323.0;
 
 lee_exposure lee_exposure_default(void) {
     return (lee_exposure){
         .height = lee_reference_height,
         .averaging = NAN,
-        .land_roughness = NAN,
+        .gust_duration = NAN,
+        .gust_period = NAN,
         .height_method = LEE_HEIGHT_LOG,
         .height_factor = 1.0,
+        .land_roughness = NAN,
         .land_to_water = 1.0,
+        .to_water_fetch = NAN,
+        .functions = lee_stability_functions_at(0),
+        .stability_factor = NAN,
+        .temperature_height = 2.0,
+        .air_temperature = NAN,
+        .water_temperature = NAN,
     };
+}
+
+void lee_exposure_free(lee_exposure *exposure) {
+    free(exposure->to_water_table.speed);
+    free(exposure->to_water_table.ratio);
+    exposure->to_water_table = (lee_ratio_table){0};
+}
+
+static lee_status check_direction(const lee_exposure *exposure,
+                                  lee_error *error) {
+    const double offset = exposure->direction_offset;
+    if (!(fabs(offset) <= lee_pi)) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "direction offset is %g degrees, expected -180 to 180",
+                        offset * 180.0 / lee_pi);
+    }
+    return LEE_OK;
 }
 
 static bool is_factor(double factor) {
@@ -49,6 +74,31 @@ static lee_status check_averaging(const lee_exposure *exposure,
     if (!isnan(t) && !(t >= 0.0 && isfinite(t))) {
         return lee_fail(error, LEE_ERR_ARGUMENT,
                         "averaging time is %g s, expected 0 or more", t);
+    }
+    return LEE_OK;
+}
+
+static lee_status check_gust(const lee_exposure *exposure, lee_error *error) {
+    const double duration = exposure->gust_duration;
+    const double period = exposure->gust_period;
+    if (!exposure->is_gust) {
+        return LEE_OK;
+    }
+    if (exposure->is_maximum) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "a wind is either a gust or the maximum of an hour, "
+                        "not both");
+    }
+    if (!(period >= 60.0 && period <= 3600.0)) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "period of the gusts is %g s, expected 60 to 3600 s",
+                        period);
+    }
+    if (!(duration >= 1.0 && duration <= period)) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "duration of the gusts is %g s, expected 1 s to their "
+                        "period, %g s",
+                        duration, period);
     }
     return LEE_OK;
 }
@@ -90,17 +140,7 @@ static lee_status check_roughness(const lee_exposure *exposure,
     return LEE_OK;
 }
 
-static lee_status check_land_to_water(const lee_exposure *exposure,
-                                      lee_error *error) {
-    const double factor = exposure->land_to_water;
-    if (!exposure->is_over_land) {
-        return fabs(factor - 1.0) <= identity
-                   ? LEE_OK
-                   : lee_fail(error, LEE_ERR_ARGUMENT,
-                              "land-to-water factor is %g for a wind measured "
-                              "over water, expected 1",
-                              factor);
-    }
+static lee_status check_factor(double factor, lee_error *error) {
     if (isnan(factor)) {
         return lee_fail(error, LEE_ERR_ARGUMENT,
                         "a wind measured over land needs a land-to-water "
@@ -114,147 +154,126 @@ static lee_status check_land_to_water(const lee_exposure *exposure,
     return LEE_OK;
 }
 
-lee_status lee_exposure_check(const lee_exposure *exposure, lee_error *error) {
-    lee_status status = check_averaging(exposure, error);
-    if (status == LEE_OK) {
-        status = check_height(exposure, error);
+static lee_status check_table(const lee_ratio_table *table, lee_error *error) {
+    if (table->n == 0) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "the land-to-water table has no row");
     }
-    if (status == LEE_OK && exposure->is_over_land) {
-        status = check_roughness(exposure, error);
+    for (size_t i = 0; i < table->n; i++) {
+        const double before = i == 0 ? -1.0 : table->speed[i - 1];
+        if (!(table->speed[i] >= 0.0 && table->speed[i] > before)) {
+            return lee_fail(error, LEE_ERR_ARGUMENT,
+                            "speed %g m/s in row %zu of the land-to-water "
+                            "table does not grow from row to row, from 0 on",
+                            table->speed[i], i + 1);
+        }
+        if (!is_factor(table->ratio[i])) {
+            return lee_fail(error, LEE_ERR_ARGUMENT,
+                            "ratio %g in row %zu of the land-to-water table, "
+                            "expected %g to %g",
+                            table->ratio[i], i + 1, least_factor,
+                            greatest_factor);
+        }
     }
+    return LEE_OK;
+}
+
+static lee_status check_land_to_water(const lee_exposure *exposure,
+                                      lee_error *error) {
+    switch (exposure->to_water_method) {
+    case LEE_TO_WATER_FACTOR:
+        return check_factor(exposure->land_to_water, error);
+    case LEE_TO_WATER_RESERVOIR:
+        return exposure->to_water_fetch >= 0.0
+                   ? LEE_OK
+                   : lee_fail(error, LEE_ERR_ARGUMENT,
+                              "fetch of the land-to-water ratio is %g m, "
+                              "expected 0 or more",
+                              exposure->to_water_fetch);
+    case LEE_TO_WATER_TABLE:
+        return check_table(&exposure->to_water_table, error);
+    case LEE_TO_WATER_HSU_1980:
+    case LEE_TO_WATER_HSU_1981:
+        break;
+    }
+    return LEE_OK;
+}
+
+static lee_status check_over_water(const lee_exposure *exposure,
+                                   lee_error *error) {
+    const double factor = exposure->land_to_water;
+    if (exposure->to_water_method != LEE_TO_WATER_FACTOR) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "a wind measured over water is not brought from land "
+                        "to water");
+    }
+    if (!(fabs(factor - 1.0) <= 1e-12)) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "land-to-water factor is %g for a wind measured over "
+                        "water, expected 1",
+                        factor);
+    }
+    return LEE_OK;
+}
+
+static lee_status check_temperature(const char *what, double kelvin, double low,
+                                    double high, lee_error *error) {
+    if (!isnan(kelvin) && !(kelvin >= low && kelvin <= high)) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "%s temperature is %g K, expected %g to %g K", what,
+                        kelvin, low, high);
+    }
+    return LEE_OK;
+}
+
+static lee_status check_stability(const lee_exposure *exposure,
+                                  lee_error *error) {
+    if (exposure->stability == LEE_STABILITY_NONE) {
+        return LEE_OK;
+    }
+    if (exposure->stability == LEE_STABILITY_FACTOR) {
+        return is_factor(exposure->stability_factor)
+                   ? LEE_OK
+                   : lee_fail(error, LEE_ERR_ARGUMENT,
+                              "stability factor is %g, expected %g to %g",
+                              exposure->stability_factor, least_factor,
+                              greatest_factor);
+    }
+    if (exposure->stability == LEE_STABILITY_MONIN_OBUKHOV &&
+        !(exposure->temperature_height >= LEE_LOWEST_MAST &&
+          exposure->temperature_height <= highest_thermometer)) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "height of the thermometer is %g m, expected %g to "
+                        "%g m",
+                        exposure->temperature_height, LEE_LOWEST_MAST,
+                        highest_thermometer);
+    }
+    const lee_status status = check_temperature(
+        "air", exposure->air_temperature, coldest_air, warmest_air, error);
+    return status == LEE_OK
+               ? check_temperature("water", exposure->water_temperature,
+                                   coldest_water, warmest_water, error)
+               : status;
+}
+
+static lee_status check_surface(const lee_exposure *exposure,
+                                lee_error *error) {
+    if (!exposure->is_over_land) {
+        return check_over_water(exposure, error);
+    }
+    const lee_status status = check_roughness(exposure, error);
     return status == LEE_OK ? check_land_to_water(exposure, error) : status;
 }
 
-/* Speed at the anemometer as a share of U10 in the neutral logarithmic
- * profile over water. With z0 = 10 exp(-kappa/sqrt(C10)),
- *     ln(z/z0)/ln(10/z0) = 1 + sqrt(C10)/kappa ln(z/10),
- * not positive where the roughness reaches the anemometer. */
-static double share_at_mast(double height, const lee_drag *drag,
-                            const lee_drag_input *fluids, double u10) {
-    lee_drag_input in = *fluids;
-    in.speed = u10;
-    const double c10 = lee_drag_coefficient(drag, &in, NULL, NULL);
-    return 1.0 +
-           sqrt(c10) / lee_von_karman * log(height / lee_reference_height);
-}
-
-/* U10 whose own profile passes through the measured speed: U10 becomes
- * measured/share(U10) until it stays. The bounds catch what that would not:
- * a relation that jumps has no solution inside its jump, and there U10 is the
- * speed of the jump. NaN when the roughness reaches the anemometer. */
-static double over_water(double height, const lee_drag *drag,
-                         const lee_drag_input *fluids, double measured) {
-    double low = 0.0;
-    double high = INFINITY;
-    double u10 = measured;
-    for (int i = 0; i < MAX_STEPS; i++) {
-        const double share = share_at_mast(height, drag, fluids, u10);
-        double next = measured / share;
-        if (isnan(share) || fabs(next - u10) <= speed_tolerance * u10) {
-            return next;
-        }
-        if (share * u10 < measured) {
-            low = u10;
-        } else {
-            high = u10;
-        }
-        if (!(next > low && next < high)) {
-            next = isinf(high) ? 2.0 * low : 0.5 * (low + high);
-        }
-        if (high <= low * (1.0 + speed_tolerance)) {
-            return next;
-        }
-        u10 = next;
-    }
-    return NAN;
-}
-
-/* Factor that brings a speed at the anemometer to 10 m. */
-static double height_factor(const lee_exposure *exposure, const lee_drag *drag,
-                            const lee_drag_input *fluids, double speed) {
-    switch (exposure->height_method) {
-    case LEE_HEIGHT_POWER:
-        return lee_power_profile_ratio(exposure->height);
-    case LEE_HEIGHT_FACTOR:
-        return exposure->height_factor;
-    case LEE_HEIGHT_LOG:
-        break;
-    }
-    if (exposure->is_over_land) {
-        return lee_log_profile_ratio(exposure->height,
-                                     exposure->land_roughness);
-    }
-    if (speed > 0.0) {
-        return over_water(exposure->height, drag, fluids, speed) / speed;
-    }
-    return 1.0 / share_at_mast(exposure->height, drag, fluids, speed);
-}
-
-static const char *height_words(const lee_exposure *exposure,
-                                const char **source) {
-    *source = "common practice";
-    switch (exposure->height_method) {
-    case LEE_HEIGHT_POWER:
-        *source = "EM 1110-2-1100 eq. II-2-9";
-        return "1/7 power profile";
-    case LEE_HEIGHT_FACTOR:
-        *source = "given";
-        return "given factor";
-    case LEE_HEIGHT_LOG:
-        break;
-    }
-    return exposure->is_over_land
-               ? "neutral log profile, roughness of the land"
-               : "neutral log profile, roughness of the drag relation";
-}
-
-enum { LINKS = 3 };
-
-/* Every link in order, identities too. */
-static void all_links(const lee_exposure *exposure, const lee_drag *drag,
-                      const lee_drag_input *fluids, double measured,
-                      lee_correction link[LINKS]) {
-    link[0] = (lee_correction){
-        .name = "averaging",
-        .method = "highest mean to hourly mean",
-        .source = "EM 1110-2-1100 fig. II-2-1",
-        .factor = exposure->is_maximum
-                      ? 1.0 / lee_averaging_ratio(exposure->averaging)
-                      : 1.0,
+lee_status lee_exposure_check(const lee_exposure *exposure, lee_error *error) {
+    static lee_status (*const checks[])(const lee_exposure *, lee_error *) = {
+        check_direction, check_averaging, check_gust,
+        check_height,    check_surface,   check_stability,
     };
-    link[1] = (lee_correction){.name = "height"};
-    link[1].method = height_words(exposure, &link[1].source);
-    link[1].factor =
-        height_factor(exposure, drag, fluids, measured * link[0].factor);
-    link[2] = (lee_correction){
-        .name = "land to water",
-        .method = "given factor",
-        .source = "given",
-        .factor = exposure->is_over_land ? exposure->land_to_water : 1.0,
-    };
-}
-
-double lee_exposure_speed(const lee_exposure *exposure, const lee_drag *drag,
-                          const lee_drag_input *fluids, double measured) {
-    lee_correction link[LINKS];
-    all_links(exposure, drag, fluids, measured, link);
-    double speed = measured;
-    for (size_t i = 0; i < LINKS && !(speed <= 0.0); i++) {
-        speed *= link[i].factor;
+    lee_status status = LEE_OK;
+    for (size_t i = 0; i < sizeof checks / sizeof checks[0] && status == LEE_OK;
+         i++) {
+        status = checks[i](exposure, error);
     }
-    return speed;
-}
-
-size_t lee_exposure_chain(const lee_exposure *exposure, const lee_drag *drag,
-                          const lee_drag_input *fluids, double measured,
-                          lee_correction chain[LEE_CORRECTIONS]) {
-    lee_correction link[LINKS];
-    all_links(exposure, drag, fluids, measured, link);
-    size_t count = 0;
-    for (size_t i = 0; i < LINKS; i++) {
-        if (!(fabs(link[i].factor - 1.0) <= identity)) {
-            chain[count++] = link[i];
-        }
-    }
-    return count;
+    return status;
 }

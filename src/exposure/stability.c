@@ -53,7 +53,7 @@ static double fading(double zeta) {
     return exp(-fmin(50.0, 0.35 * zeta));
 }
 
-static double coare_35_momentum(double zeta) {
+static double coare_35(double zeta) {
     if (zeta < 0.0) {
         return coare_unstable_momentum(zeta);
     }
@@ -75,7 +75,7 @@ static double coare_heat(double zeta) {
 
 /* The constants as the code of Fairall et al. (2003) rounds them: -2.4e-4 and
  * not 0 just above neutral. */
-static double coare_30_momentum(double zeta) {
+static double coare_30(double zeta) {
     if (zeta < 0.0) {
         return coare_unstable_momentum(zeta);
     }
@@ -85,7 +85,7 @@ static double coare_30_momentum(double zeta) {
     return -(1.0 + zeta + 0.667 * (zeta - 14.28) * fading(zeta) + 8.525);
 }
 
-static double dyer_momentum(double zeta) {
+static double dyer(double zeta) {
     return zeta < 0.0 ? paulson_momentum(16.0, zeta) : -5.0 * zeta;
 }
 
@@ -94,9 +94,21 @@ static double dyer_heat(double zeta) {
 }
 
 static const lee_stability_functions functions[] = {
-    {"coare-3.5",     "edson2013",   coare_35_momentum, coare_heat},
-    {"coare-3.0",     "fairall2003", coare_30_momentum, coare_heat},
-    {"businger-dyer", "dyer1974",    dyer_momentum,     dyer_heat },
+    {.name = "coare-3.5",
+     .paper = "edson2013",
+     .source = "Edson et al. (2013)",
+     .momentum = coare_35,
+     .heat = coare_heat},
+    {.name = "coare-3.0",
+     .paper = "fairall2003",
+     .source = "Fairall et al. (2003)",
+     .momentum = coare_30,
+     .heat = coare_heat},
+    {.name = "businger-dyer",
+     .paper = "dyer1974",
+     .source = "Paulson (1970), Dyer (1974)",
+     .momentum = dyer,
+     .heat = dyer_heat },
 };
 
 const lee_stability_functions *lee_stability_functions_at(size_t index) {

@@ -250,6 +250,18 @@ static void print_given(const lee_printer *to, const lee_wind_source *wind) {
     }
 }
 
+/* What the speeds are, up to the duration that follows. */
+static const char *what_speeds_are(const lee_exposure *exposure) {
+    if (exposure->is_gust) {
+        return ", gusts";
+    }
+    if (isnan(exposure->averaging)) {
+        return "";
+    }
+    return exposure->is_maximum ? ", highest of the hour over "
+                                : ", means over ";
+}
+
 static void print_wind(const lee_printer *to, const lee_case *from,
                        const lee_problem_check *check) {
     const lee_wind_source *wind = &from->problem.wind;
@@ -267,8 +279,8 @@ static void print_wind(const lee_printer *to, const lee_case *from,
     lee_print_row(to, "measured", "at %s over %s%s%s",
                   lee_show_height(to, exposure->height).text,
                   exposure->is_over_land ? "land" : "water",
-                  isnan(exposure->averaging) ? "" : ", means over ",
-                  isnan(exposure->averaging)
+                  what_speeds_are(exposure),
+                  exposure->is_gust || isnan(exposure->averaging)
                       ? ""
                       : lee_show_duration(exposure->averaging).text);
 }

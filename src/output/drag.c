@@ -32,12 +32,14 @@ static double stress_of(const lee_drag_table *table,
 
 /* What of a method a table has: no lake, no correction, no range. */
 static lee_method method_of(const lee_drag_table *table) {
-    lee_method method = {.air_density_value = table->air_density,
-                         .water_density_value = table->water_density,
-                         .gravity = NAN,
-                         .return_flow = NAN,
-                         .correction_speed = NAN,
-                         .reference_height = lee_reference_height};
+    lee_method method = {
+        .air_density_value = table->air_density,
+        .water_density_value = table->water_density,
+        .gravity = NAN,
+        .return_flow = NAN,
+        .corrected = {NAN, NAN, NAN},
+        .reference_height = lee_reference_height
+    };
     (void)snprintf(method.drag, sizeof method.drag,
                    "each relation as published, no cap");
     (void)snprintf(method.air_density, sizeof method.air_density, "%s",

@@ -41,6 +41,25 @@ void lee_json_put_case(lee_json *json, const lee_case *from,
     lee_json_put_notes(json, "remarks", &from->notes);
 }
 
+/* What a link does to the wind it is shown for, and did to a record. */
+static void put_effect(lee_json *json, const lee_correction *link) {
+    const lee_link_spread *spread = &link->spread;
+    lee_json_put_number(json, "turn_degree", link->turn * 180.0 / lee_pi);
+    lee_json_put_number(json, "factor", link->factor);
+    lee_json_put_flag(json, "is_extrapolated", link->is_extrapolated);
+    lee_json_put_flag(json, "lacks_temperature", link->is_missing);
+    if (!link->has_spread) {
+        return;
+    }
+    lee_json_open_object(json, "over_the_record");
+    lee_json_put_number(json, "least", spread->least);
+    lee_json_put_number(json, "median", spread->median);
+    lee_json_put_number(json, "greatest", spread->greatest);
+    lee_json_put_count(json, "extrapolated", spread->extrapolated);
+    lee_json_put_count(json, "lack_temperature", spread->missing);
+    lee_json_close(json);
+}
+
 static void put_corrections(lee_json *json, const lee_method *method) {
     lee_json_open_list(json, "corrections");
     for (size_t i = 0; i < method->correction_count; i++) {
@@ -49,11 +68,15 @@ static void put_corrections(lee_json *json, const lee_method *method) {
         lee_json_put_text(json, "name", link->name);
         lee_json_put_text(json, "method", link->method);
         lee_json_put_text(json, "source", link->source);
-        lee_json_put_number(json, "factor", link->factor);
+        put_effect(json, link);
         lee_json_close(json);
     }
     lee_json_close(json);
-    lee_json_put_number(json, "factors_at_m_s", method->correction_speed);
+    lee_json_put_number(json, "factors_at_m_s", method->corrected.speed);
+    lee_json_put_number(json, "factors_at_air_K",
+                        method->corrected.air_temperature);
+    lee_json_put_number(json, "factors_at_water_K",
+                        method->corrected.water_temperature);
 }
 
 /* null for what a method has none of. */

@@ -3,6 +3,8 @@
 
 #include <math.h>
 
+#include "base/constants.h"
+
 void lee_print_head(const lee_printer *to, const lee_case *from,
                     double still_water) {
     const lee_lake *lake = &from->problem.lake;
@@ -18,17 +20,58 @@ void lee_print_head(const lee_printer *to, const lee_case *from,
     }
 }
 
+/* Spreads narrower than the digits shown say nothing. */
+static const double shown_spread = 5e-4;
+
+static void print_link(const lee_printer *to, const char *label,
+                       const lee_correction *link) {
+    lee_print_row(to, label, "%s: %s%s%s", lee_show_link(link, 3).text,
+                  link->method, link->is_extrapolated ? ", extrapolated" : "",
+                  link->is_missing ? ", a temperature is missing" : "");
+}
+
+static void print_spread(const lee_printer *to, const lee_correction *link) {
+    const lee_link_spread *spread = &link->spread;
+    if (spread->greatest - spread->least > shown_spread) {
+        lee_print_row(to, "", "    over the record %.3f to %.3f, median %.3f",
+                      spread->least, spread->greatest, spread->median);
+    }
+    if (spread->extrapolated > 0) {
+        lee_print_row(to, "", "    extrapolated in %zu winds",
+                      spread->extrapolated);
+    }
+    if (spread->missing > 0) {
+        lee_print_row(to, "",
+                      "    not corrected in %zu winds that lack a "
+                      "temperature",
+                      spread->missing);
+    }
+}
+
+static void print_shown_for(const lee_printer *to,
+                            const lee_exposure_sample *shown) {
+    char warmth[64] = "";
+    if (!isnan(shown->air_temperature) && !isnan(shown->water_temperature)) {
+        (void)snprintf(warmth, sizeof warmth, ", air %.1f, water %.1f degC",
+                       shown->air_temperature - lee_celsius_zero,
+                       shown->water_temperature - lee_celsius_zero);
+    }
+    lee_print_row(to, "", "(factors at a measured %s%s)",
+                  lee_show_speed(to, shown->speed).text, warmth);
+}
+
 static void print_corrections(const lee_printer *to, const lee_method *method) {
     for (size_t i = 0; i < method->correction_count; i++) {
         const lee_correction *link = &method->correction[i];
-        lee_print_row(to, i == 0 ? "corrections" : "", "%s x %.3f: %s",
-                      link->name, link->factor, link->method);
+        print_link(to, i == 0 ? "corrections" : "", link);
+        if (link->has_spread) {
+            print_spread(to, link);
+        }
     }
     if (method->correction_count == 0) {
         lee_print_row(to, "corrections", "none");
-    } else if (!isnan(method->correction_speed)) {
-        lee_print_row(to, "", "(factors at a measured %s)",
-                      lee_show_speed(to, method->correction_speed).text);
+    } else if (!isnan(method->corrected.speed)) {
+        print_shown_for(to, &method->corrected);
     }
 }
 

@@ -163,6 +163,18 @@ double lee_whole_degrees(double radians) {
     return (degrees < 0.0 ? degrees + 360.0 : degrees) + 0.0;
 }
 
+lee_cell lee_show_link(const lee_correction *link, int decimals) {
+    lee_cell cell;
+    if (link->turn != 0.0) {
+        (void)snprintf(cell.text, sizeof cell.text, "%s %+.1f degrees",
+                       link->name, link->turn * 180.0 / lee_pi);
+    } else {
+        (void)snprintf(cell.text, sizeof cell.text, "%s x %.*f", link->name,
+                       decimals, link->factor);
+    }
+    return cell;
+}
+
 lee_cell lee_show_direction(double radians) {
     lee_cell cell;
     (void)snprintf(cell.text, sizeof cell.text, "%.0f degrees",

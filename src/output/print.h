@@ -52,6 +52,7 @@ lee_cell lee_show_area(const lee_printer *to, double area);
 lee_cell lee_show_volume(const lee_printer *to, double volume);
 
 /* "22.0 m/s", "49.2 mph"; the bare number; the unit. */
+lee_cell lee_show_link(const lee_correction *link, int decimals);
 lee_cell lee_show_speed(const lee_printer *to, double speed);
 lee_cell lee_show_bare_speed(const lee_printer *to, double speed);
 const char *lee_speed_unit(const lee_printer *to);

@@ -335,8 +335,7 @@ static void print_links(const lee_printer *to, const lee_method *method) {
     for (size_t i = 0; i < method->correction_count; i++) {
         const lee_correction *link = &method->correction[i];
         factor *= link->factor;
-        extend(&row, "%s%s x %.3f", i > 0 ? ", " : "", link->name,
-               link->factor);
+        extend(&row, "%s%s", i > 0 ? ", " : "", lee_show_link(link, 3).text);
     }
     lee_print_row(
         to, "speeds",

@@ -8,6 +8,8 @@
 #include "formats/atomic_file.h"
 #include "formats/regular_file.h"
 
+#include "output/print.h"
+
 #include "leewater/calendar.h"
 #include "leewater/output.h"
 
@@ -45,8 +47,16 @@ static void write_head(FILE *out, const lee_case *from,
     comment(out, "drag", method->drag);
     for (size_t i = 0; i < method->correction_count; i++) {
         const lee_correction *link = &method->correction[i];
-        (void)fprintf(out, "# correction: %s x %.4f, %s\n", link->name,
-                      link->factor, link->method);
+        (void)fprintf(out, "# correction: %s, %s\n",
+                      lee_show_link(link, 4).text, link->method);
+        if (link->has_spread) {
+            (void)fprintf(out,
+                          "# over the record: %.4f to %.4f, median %.4f; "
+                          "%zu winds extrapolated, %zu lack a temperature\n",
+                          link->spread.least, link->spread.greatest,
+                          link->spread.median, link->spread.extrapolated,
+                          link->spread.missing);
+        }
     }
     (void)fprintf(out,
                   "# air density: %.4f kg m-3; water density: %.2f kg m-3;"

@@ -5,18 +5,41 @@
 #include "series/run_plan.h"
 #include "series/setting.h"
 
-/* The speed that corrections are shown for: the fastest there is. */
-static double shown_speed(const lee_problem *problem,
-                          const lee_problem_check *check) {
+/* The wind that corrections are shown for when it is no record: the fastest
+ * there is. */
+static lee_exposure_sample shown_wind(const lee_problem *problem) {
     const lee_wind_source *source = &problem->wind;
-    double fastest = check->has_record ? check->record.fastest : 0.0;
+    double fastest = 0.0;
     for (size_t i = 0; i < source->given_count; i++) {
         fastest = fmax(fastest, source->given[i].speed);
     }
     if (source->kind == LEE_WIND_STORM) {
         fastest = source->storm.peak;
     }
-    return fastest;
+    return lee_measured(fastest);
+}
+
+static lee_status tell_corrections(const lee_problem *problem,
+                                   const lee_setting *setting,
+                                   lee_problem_check *check, lee_error *error) {
+    if (!check->has_record) {
+        const lee_exposure_sample shown = shown_wind(problem);
+        return lee_setting_tell(problem, setting, &shown, NULL, &check->method,
+                                error);
+    }
+    lee_corrections found = {0};
+    lee_status status =
+        lee_corrections_find(problem, setting, &problem->wind.record,
+                             check->record.step, &found, error);
+    if (status == LEE_OK) {
+        status = lee_corrections_warn(&found, &check->warnings, error);
+    }
+    if (status == LEE_OK) {
+        status = lee_setting_tell(problem, setting, &found.strongest,
+                                  &found.summary, &check->method, error);
+    }
+    lee_corrections_free(&found);
+    return status;
 }
 
 /* Asks the plan of a run what it thinks of the record: too short, too coarse,
@@ -88,9 +111,7 @@ lee_status lee_check_problem(const lee_problem *problem,
         status = check_record(problem, check, error);
     }
     if (status == LEE_OK) {
-        status =
-            lee_setting_tell(problem, &setting, shown_speed(problem, check),
-                             &check->method, error);
+        status = tell_corrections(problem, &setting, check, error);
     }
     if (status == LEE_OK && check->has_record) {
         status =

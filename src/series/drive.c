@@ -7,9 +7,10 @@
 /* Steps of made records, s (common practice: a 10 min mean). */
 static const int64_t made_step = 600;
 
-/* Rows of the pull tables each 0.1 m s-1, up to 100 m s-1. */
+/* Rows of the pull tables each 0.1 m s-1, up to 100 m s-1, and the measured
+ * speeds that are tried for them: up to the fastest a record may hold. */
 static const double table_spacing = 0.1;
-enum { TABLE_ROWS = 1001 };
+enum { TABLE_ROWS = 1001, MEASURED_ROWS = 3401 };
 
 /* One given wind that begins at once, lasts, and is followed by calm: a
  * record of means, so that begin and end are sharp. Where whole seconds do
@@ -59,21 +60,27 @@ static lee_status make_record(const lee_problem *problem, double calm,
     return given_record(&source->given[0], start, calm, wind, error);
 }
 
-static lee_status find_pieces(const lee_problem *problem, lee_run_wind *wind,
+static lee_status find_pieces(const lee_problem *problem,
+                              const lee_setting *setting, lee_run_wind *wind,
                               lee_error *error) {
     lee_wind_check check = {0};
     lee_status status =
         lee_wind_check_record(wind->record, &problem->wind.gap, &check, error);
     if (status == LEE_OK) {
         wind->step = wind->made.n > 0 ? wind->step : check.step;
-        status = lee_wind_pieces(wind->record, &problem->wind.gap, &wind->piece,
-                                 &wind->count, error);
+        status = lee_corrections_find(problem, setting, wind->record,
+                                      wind->step, &wind->corrections, error);
+    }
+    if (status == LEE_OK) {
+        status = lee_wind_pieces(&wind->corrections.water, &problem->wind.gap,
+                                 &wind->piece, &wind->count, error);
     }
     lee_wind_check_free(&check);
     return status;
 }
 
-lee_status lee_run_wind_init(const lee_problem *problem, double calm,
+lee_status lee_run_wind_init(const lee_problem *problem,
+                             const lee_setting *setting, double calm,
                              lee_run_wind *wind, lee_error *error) {
     *wind = (lee_run_wind){0};
     lee_status status = LEE_OK;
@@ -94,7 +101,7 @@ lee_status lee_run_wind_init(const lee_problem *problem, double calm,
         break;
     }
     if (status == LEE_OK) {
-        status = find_pieces(problem, wind, error);
+        status = find_pieces(problem, setting, wind, error);
     }
     if (status != LEE_OK) {
         lee_run_wind_free(wind);
@@ -104,8 +111,26 @@ lee_status lee_run_wind_init(const lee_problem *problem, double calm,
 
 void lee_run_wind_free(lee_run_wind *wind) {
     free(wind->piece);
+    lee_corrections_free(&wind->corrections);
     lee_wind_record_free(&wind->made);
     *wind = (lee_run_wind){0};
+}
+
+/* The measured speed whose 10 m speed is `wanted`: walks on from `row`, where
+ * the last one was found. A record's own temperatures take no part. */
+static double measured_for(const lee_pull_table *table, double wanted,
+                           size_t *row, double last[2]) {
+    while (last[1] < wanted && *row + 1 < MEASURED_ROWS) {
+        (*row)++;
+        const lee_exposure_sample next =
+            lee_measured((double)*row * table_spacing);
+        last[0] = last[1];
+        last[1] = lee_setting_speed(table->problem, table->setting, &next);
+    }
+    const double growth = last[1] - last[0];
+    const double share =
+        growth > 0.0 ? fmin(1.0, (wanted - last[0]) / growth) : 1.0;
+    return ((double)*row - 1.0 + share) * table_spacing;
 }
 
 lee_status lee_pull_table_init(const lee_problem *problem,
@@ -122,9 +147,14 @@ lee_status lee_pull_table_init(const lee_problem *problem,
         lee_pull_table_free(table);
         return lee_fail(error, LEE_ERR_MEMORY, "no room for the range");
     }
+    size_t row = 0;
+    double last[2] = {0.0, 0.0};
     for (size_t i = 1; i < TABLE_ROWS; i++) {
         const double speed = (double)i * table_spacing;
-        const lee_pull_range range = lee_setting_pull(problem, setting, speed);
+        const lee_exposure_sample measured =
+            lee_measured(measured_for(table, speed, &row, last));
+        const lee_pull_range range =
+            lee_setting_pull(problem, setting, &measured);
         table->low[i] = range.low / (speed * speed);
         table->high[i] = range.high / (speed * speed);
     }
@@ -164,8 +194,8 @@ void lee_drive_free(lee_drive *drive) {
 }
 
 void lee_drive_wind(lee_drive *drive, double t, double at[2]) {
-    lee_wind_at(drive->wind->record, &drive->piece, drive->wind->step,
-                (double)drive->zero + t, at, &drive->hint);
+    lee_wind_at(&drive->wind->corrections.water, &drive->piece,
+                drive->wind->step, (double)drive->zero + t, at, &drive->hint);
 }
 
 /* Pull over speed squared of a bound, Pa s2 m-2. */
@@ -184,11 +214,11 @@ void lee_drive_pull(const lee_drive *drive, const double wind[2],
     double per_speed = 0.0; /* pull over speed, Pa s m-1 */
     if (speed > 0.0 && drive->pull == LEE_PULL_MAIN) {
         lee_drag_input in = drive->setting->fluids;
-        in.speed = lee_setting_speed(drive->problem, drive->setting, speed);
+        in.speed = speed;
         per_speed =
             drive->setting->return_flow * in.air_density *
             lee_drag_coefficient(&drive->setting->drag, &in, NULL, NULL) *
-            in.speed * in.speed / speed;
+            speed;
     } else if (speed > 0.0) {
         const double *column = drive->pull == LEE_PULL_LOW ? drive->table->low
                                                            : drive->table->high;

@@ -7,25 +7,30 @@
 #include "series/setting.h"
 
 /* The wind of a run: the problem's own record, or one made from a storm or a
- * given wind. Owns `made` and `piece`. */
+ * given wind. Owns `made`, `corrections` and `piece`. */
 typedef struct lee_run_wind {
-    const lee_wind_record *record; /* the problem's, or &made */
+    const lee_wind_record *record; /* as measured: the problem's, or &made */
     lee_wind_record made;
-    int64_t step; /* usual step of the record, s */
+    lee_corrections corrections; /* with the record that drives the run */
+    int64_t step;                /* usual step of the record, s */
     size_t count;
     lee_wind_piece *piece; /* [count] */
     bool starts_calm;      /* made: rest is the true state at its begin */
 } lee_run_wind;
 
-/* Finds the record and its pieces. `calm` is how long (s) a made record goes
- * on after its wind.
+/* Finds the record, corrects it and parts it into its pieces. `calm` is how
+ * long (s) a made record goes on after its wind.
  * Errors: LEE_ERR_DATA, LEE_ERR_MEMORY. */
-lee_status lee_run_wind_init(const lee_problem *problem, double calm,
+lee_status lee_run_wind_init(const lee_problem *problem,
+                             const lee_setting *setting, double calm,
                              lee_run_wind *wind, lee_error *error);
 void lee_run_wind_free(lee_run_wind *wind);
 
-/* Pull by measured speed for the bounds of a range, as a share of speed
- * squared; tables by speed, linear between rows. Owns its table. */
+/* Pull by the 10 m speed over open water for the bounds of a range, as a share
+ * of speed squared; tables by speed, linear between rows. A bound corrects the
+ * measured speed behind a row by its own drag; where stability goes by
+ * temperatures of the record, its factor is that of the estimate. Owns its
+ * table. */
 typedef struct lee_pull_table {
     const lee_problem *problem;
     const lee_setting *setting;
@@ -56,10 +61,10 @@ lee_status lee_drive_init(const lee_channel *channel, lee_drive *drive,
                           lee_error *error);
 void lee_drive_free(lee_drive *drive);
 
-/* Measured wind (east, north) at engine time t. */
+/* Wind at 10 m over open water (east, north) at engine time t. */
 void lee_drive_wind(lee_drive *drive, double t, double at[2]);
 
-/* Pull vector (east, north), Pa, of a measured wind. */
+/* Pull vector (east, north), Pa, of a wind at 10 m over open water. */
 void lee_drive_pull(const lee_drive *drive, const double wind[2],
                     double pull[2]);
 

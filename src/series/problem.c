@@ -49,6 +49,7 @@ void lee_problem_free(lee_problem *problem) {
     }
     free(problem->wind.record_path);
     lee_wind_record_free(&problem->wind.record);
+    lee_exposure_free(&problem->exposure);
     lee_drag_free(&problem->drag);
     lee_lake_free(&problem->lake);
     *problem = (lee_problem){0};

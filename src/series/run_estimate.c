@@ -34,7 +34,8 @@ typedef struct workshop {
     lee_pull_table table;
     lee_member member[LEE_MEMBERS];
     size_t member_count;
-    double strongest; /* wind as measured, m s-1; 0 in a calm */
+    double strongest;          /* wind at 10 m over water, m s-1; 0 in a calm */
+    lee_exposure_sample shown; /* the wind that corrections are told for */
     double residual_from;
     double residual_to;
     double departure; /* largest from the still water of its time, m */
@@ -344,22 +345,27 @@ static void meet_wind(workshop *shop, int64_t time, const double wind[2]) {
  * output times. */
 static void find_strongest(workshop *shop) {
     const lee_run_plan *plan = &shop->plan;
-    const lee_wind_record *record = plan->wind.record;
+    const lee_wind_record *record = &plan->wind.corrections.water;
+    double before = 0.0;
+    shop->shown = plan->wind.corrections.strongest;
     for (size_t s = 0; s < plan->span_count; s++) {
         const lee_span *span = &plan->span[s];
         for (size_t i = span->piece.first; i < span->piece.end; i++) {
             const int64_t time = record->time[i];
-            if (time >= span->from && time <= span->to) {
-                meet_wind(shop, time,
-                          (double[2]){record->east[i], record->north[i]});
+            if (time < span->from || time > span->to) {
+                continue;
+            }
+            meet_wind(shop, time,
+                      (double[2]){record->east[i], record->north[i]});
+            if (hypot(record->east[i], record->north[i]) > before) {
+                before = hypot(record->east[i], record->north[i]);
+                shop->shown = lee_corrections_sample(shop->problem,
+                                                     &plan->wind.corrections,
+                                                     plan->wind.record, i);
             }
         }
     }
-    lee_run_result *result = shop->result;
-    result->strongest =
-        shop->strongest > 0.0
-            ? lee_setting_speed(shop->problem, &plan->setting, shop->strongest)
-            : 0.0;
+    shop->result->strongest = shop->strongest;
 }
 
 /* Wind of the output times. */
@@ -379,13 +385,11 @@ static lee_status tell_wind(workshop *shop, lee_error *error) {
             hint = 0;
         }
         double wind[2];
-        double measured;
-        lee_wind_at(plan->wind.record, &plan->span[s].piece, plan->wind.step,
-                    (double)result->time[i], wind, &hint);
-        lee_wind_speed_from(wind[0], wind[1], &measured, &result->from[i]);
+        lee_wind_at(&plan->wind.corrections.water, &plan->span[s].piece,
+                    plan->wind.step, (double)result->time[i], wind, &hint);
+        lee_wind_speed_from(wind[0], wind[1], &result->speed[i],
+                            &result->from[i]);
         meet_wind(shop, result->time[i], wind);
-        result->speed[i] =
-            lee_setting_speed(shop->problem, &plan->setting, measured);
     }
     find_strongest(shop);
     return LEE_OK;
@@ -394,8 +398,12 @@ static lee_status tell_wind(workshop *shop, lee_error *error) {
 static lee_status tell_method(workshop *shop, lee_error *error) {
     const lee_problem *problem = shop->problem;
     lee_run_result *result = shop->result;
-    lee_status status = lee_setting_tell(
-        problem, &shop->plan.setting, shop->strongest, &result->method, error);
+    lee_status status =
+        lee_setting_tell(problem, &shop->plan.setting, &shop->shown,
+                         problem->wind.kind == LEE_WIND_RECORD
+                             ? &shop->plan.wind.corrections.summary
+                             : NULL,
+                         &result->method, error);
     if (status == LEE_OK && problem->wind.kind == LEE_WIND_RECORD) {
         lee_wind_check check = {0};
         status = lee_wind_check_record(&problem->wind.record,

@@ -294,10 +294,10 @@ static lee_status judge_averaging(const lee_problem *problem,
     return LEE_OK;
 }
 
-/* How hard each sample of the record pulls. */
+/* How hard each sample of the corrected record pulls. */
 static lee_status find_pull(const lee_problem *problem, lee_run_plan *plan,
                             lee_error *error) {
-    const lee_wind_record *record = plan->wind.record;
+    const lee_wind_record *record = &plan->wind.corrections.water;
     const lee_drive drive = {
         .problem = problem, .setting = &plan->setting, .pull = LEE_PULL_MAIN};
     plan->pull = calloc(record->n, sizeof *plan->pull);
@@ -334,7 +334,7 @@ static lee_status make_plan(const lee_problem *problem, lee_run_plan *plan,
     if (status == LEE_OK) {
         const double period =
             isnan(plan->first_period) ? 0.0 : plan->first_period;
-        status = lee_run_wind_init(problem,
+        status = lee_run_wind_init(problem, &plan->setting,
                                    fmax(shortest_calm, calm_periods * period),
                                    &plan->wind, error);
     }
@@ -349,6 +349,9 @@ static lee_status make_plan(const lee_problem *problem, lee_run_plan *plan,
     }
     if (status == LEE_OK) {
         status = judge_averaging(problem, plan, warnings, error);
+    }
+    if (status == LEE_OK) {
+        status = lee_corrections_warn(&plan->wind.corrections, warnings, error);
     }
     if (status == LEE_OK) {
         status = find_spans(problem, plan, warnings, error);

@@ -143,7 +143,8 @@ void lee_setting_free(lee_setting *setting) {
 }
 
 static double stress_of(const lee_problem *problem, const lee_setting *setting,
-                        const lee_drag *drag, double measured) {
+                        const lee_drag *drag,
+                        const lee_exposure_sample *measured) {
     lee_drag_input in = setting->fluids;
     in.speed = lee_exposure_speed(&problem->exposure, drag, &setting->fluids,
                                   measured);
@@ -152,30 +153,33 @@ static double stress_of(const lee_problem *problem, const lee_setting *setting,
 }
 
 double lee_setting_speed(const lee_problem *problem, const lee_setting *setting,
-                         double measured) {
+                         const lee_exposure_sample *measured) {
     return lee_exposure_speed(&problem->exposure, &setting->drag,
                               &setting->fluids, measured);
 }
 
 /* Widens `range` by what one drag makes of the wind and its uncertainty. */
 static void widen(const lee_problem *problem, const lee_setting *setting,
-                  const lee_drag *drag, double measured,
+                  const lee_drag *drag, const lee_exposure_sample *measured,
                   lee_pull_range *range) {
     const double share =
         isnan(problem->uncertainty.wind) ? 0.0 : problem->uncertainty.wind;
     const bool holds_it =
         drag->relation != NULL && drag->relation->includes_return_flow;
-    const double least =
-        stress_of(problem, setting, drag, measured * fmax(0.0, 1.0 - share));
-    const double greatest =
-        stress_of(problem, setting, drag, measured * (1.0 + share));
+    lee_exposure_sample slower = *measured;
+    lee_exposure_sample faster = *measured;
+    slower.speed *= fmax(0.0, 1.0 - share);
+    faster.speed *= 1.0 + share;
+    const double least = stress_of(problem, setting, drag, &slower);
+    const double greatest = stress_of(problem, setting, drag, &faster);
     const double lambda = holds_it ? 1.0 : setting->return_flow_high;
     range->low = fmin(range->low, least / lee_lateral_depth_divisor);
     range->high = fmax(range->high, lambda * greatest);
 }
 
 lee_pull_range lee_setting_pull(const lee_problem *problem,
-                                const lee_setting *setting, double measured) {
+                                const lee_setting *setting,
+                                const lee_exposure_sample *measured) {
     lee_pull_range range = {.low = INFINITY, .high = 0.0};
     range.main = setting->return_flow *
                  stress_of(problem, setting, &setting->drag, measured);

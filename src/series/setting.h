@@ -2,6 +2,7 @@
 #ifndef LEEWATER_SERIES_SETTING_H
 #define LEEWATER_SERIES_SETTING_H
 
+#include <math.h>
 #include <stdbool.h>
 #include <stddef.h>
 
@@ -39,18 +40,50 @@ lee_status lee_setting_init(const lee_problem *problem, double time,
                             lee_setting *setting, lee_error *error);
 void lee_setting_free(lee_setting *setting);
 
-/* 10 m wind speed over open water from a measured speed, by the problem's
+/* A measured speed whose temperatures, if they matter, the problem itself
+ * gives. */
+static inline lee_exposure_sample lee_measured(double speed) {
+    return (lee_exposure_sample){speed, NAN, NAN};
+}
+
+/* 10 m wind speed over open water from a measured wind, by the problem's
  * exposure and drag. */
 double lee_setting_speed(const lee_problem *problem, const lee_setting *setting,
-                         double measured);
+                         const lee_exposure_sample *measured);
 
-/* Warns where the drag is extrapolated or capped at the strongest measured
- * speed of a wind. Errors: LEE_ERR_MEMORY. */
+/* A record corrected. Owns its record. */
+typedef struct lee_corrections {
+    lee_wind_record water; /* at 10 m over open water: times, stamp, winds */
+    lee_exposure_summary summary;
+    lee_exposure_sample strongest; /* wind of the record, as measured */
+    int64_t step;                  /* s */
+} lee_corrections;
+
+/* Sample `index` of the record as measured, with its temperatures. */
+lee_exposure_sample lee_corrections_sample(const lee_problem *problem,
+                                           const lee_corrections *corrections,
+                                           const lee_wind_record *record,
+                                           size_t index);
+
+/* Corrects a record whose usual step (s) is known, once: what is asked for
+ * between samples is then interpolated. Errors: LEE_ERR_MEMORY. */
+lee_status lee_corrections_find(const lee_problem *problem,
+                                const lee_setting *setting,
+                                const lee_wind_record *record, int64_t step,
+                                lee_corrections *found, lee_error *error);
+void lee_corrections_free(lee_corrections *corrections);
+
+/* Warns of winds that could not be corrected. Errors: LEE_ERR_MEMORY. */
+lee_status lee_corrections_warn(const lee_corrections *corrections,
+                                lee_notes *warnings, lee_error *error);
+
+/* Warns where the drag is extrapolated or capped at the strongest speed, at
+ * 10 m over open water, of a wind. Errors: LEE_ERR_MEMORY. */
 lee_status lee_setting_warn_of_drag(const lee_problem *problem,
-                                    const lee_setting *setting, double measured,
+                                    const lee_setting *setting, double speed,
                                     lee_notes *warnings, lee_error *error);
 
-/* Least and greatest pull lambda tau, Pa, of a measured wind speed on the
+/* Least and greatest pull lambda tau, Pa, of a measured wind on the
  * water: over one relation a paper, the stated wind uncertainty, lambda and
  * (low end) the hidden lateral depth. */
 typedef struct lee_pull_range {
@@ -59,12 +92,16 @@ typedef struct lee_pull_range {
     double high;
 } lee_pull_range;
 lee_pull_range lee_setting_pull(const lee_problem *problem,
-                                const lee_setting *setting, double measured);
+                                const lee_setting *setting,
+                                const lee_exposure_sample *measured);
 
-/* Tells in `method` what stands behind the numbers; `measured` is the speed
- * the corrections are shown for. Errors: LEE_ERR_MEMORY. */
+/* Tells in `method` what stands behind the numbers; `measured` is the wind
+ * the corrections are shown for, `summary` what they did to a record, or NULL.
+ * Errors: LEE_ERR_MEMORY. */
 lee_status lee_setting_tell(const lee_problem *problem,
-                            const lee_setting *setting, double measured,
+                            const lee_setting *setting,
+                            const lee_exposure_sample *measured,
+                            const lee_exposure_summary *summary,
                             lee_method *method, lee_error *error);
 
 /* Tells what a record holds; what in it is hard to believe goes to `warnings`

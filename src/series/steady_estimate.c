@@ -57,12 +57,13 @@ static lee_status solve_all(const lee_problem *problem,
                             lee_error *error) {
     lee_member member[LEE_MEMBERS];
     all->count = lee_members_list(problem, member);
-    const lee_pull_range range =
-        lee_setting_pull(problem, setting, wind->speed);
+    const lee_exposure_sample measured = lee_measured(wind->speed);
+    const lee_pull_range range = lee_setting_pull(problem, setting, &measured);
+    const double from = lee_exposure_from(&problem->exposure, wind->from);
     for (size_t i = 0; i < all->count; i++) {
         double pull[2];
-        lee_wind_components(lee_pull_of(&range, member[i].pull), wind->from,
-                            &pull[0], &pull[1]);
+        lee_wind_components(lee_pull_of(&range, member[i].pull), from, &pull[0],
+                            &pull[1]);
         const lee_status status = solve_member(problem, setting, &member[i],
                                                pull, &all->steady[i], error);
         if (status != LEE_OK) {
@@ -267,7 +268,8 @@ static lee_status tell_wind(const lee_problem *problem,
                             const lee_setting *setting, const solutions *all,
                             lee_wind_estimate *wind, lee_error *error) {
     const lee_steady *main = &all->steady[0];
-    wind->speed = lee_setting_speed(problem, setting, wind->wind.speed);
+    const lee_exposure_sample measured = lee_measured(wind->wind.speed);
+    wind->speed = lee_setting_speed(problem, setting, &measured);
     wind->along = main->along;
     wind->is_across = !(fabs(main->along) >= across_share);
     wind->return_flow = setting->return_flow;
@@ -280,8 +282,8 @@ static lee_status tell_wind(const lee_problem *problem,
     wind->coefficient = lee_drag_coefficient(&setting->drag, &in, NULL, NULL);
     wind->stress =
         in.air_density * wind->coefficient * wind->speed * wind->speed;
-    lee_status status = lee_setting_warn_of_drag(
-        problem, setting, wind->wind.speed, &wind->warnings, error);
+    lee_status status = lee_setting_warn_of_drag(problem, setting, wind->speed,
+                                                 &wind->warnings, error);
     if (status == LEE_OK) {
         status = tell_waters(all, wind, error);
     }
@@ -332,7 +334,9 @@ static lee_status estimate_winds(const lee_problem *problem,
         }
         fastest = fmax(fastest, given.speed);
     }
-    return lee_setting_tell(problem, setting, fastest, &result->method, error);
+    const lee_exposure_sample measured = lee_measured(fastest);
+    return lee_setting_tell(problem, setting, &measured, NULL, &result->method,
+                            error);
 }
 
 static lee_status warn_of_still_water(const lee_problem *problem,

@@ -54,7 +54,8 @@ static void tell_return_flow(const lee_problem *problem,
 
 /* How many relations take part, and how many of them extrapolate. */
 static lee_status tell_relations(const lee_problem *problem,
-                                 const lee_setting *setting, double measured,
+                                 const lee_setting *setting,
+                                 const lee_exposure_sample *measured,
                                  lee_notes *notes, lee_error *error) {
     const double speed = lee_setting_speed(problem, setting, measured);
     size_t count = 0;
@@ -98,7 +99,8 @@ static lee_status tell_depth(double depth, lee_notes *notes, lee_error *error) {
 }
 
 static lee_status tell_range(const lee_problem *problem,
-                             const lee_setting *setting, double measured,
+                             const lee_setting *setting,
+                             const lee_exposure_sample *measured,
                              lee_notes *notes, lee_error *error) {
     const lee_uncertainty *doubt = &problem->uncertainty;
     lee_status status =
@@ -127,14 +129,16 @@ static lee_status tell_range(const lee_problem *problem,
 }
 
 lee_status lee_setting_tell(const lee_problem *problem,
-                            const lee_setting *setting, double measured,
+                            const lee_setting *setting,
+                            const lee_exposure_sample *measured,
+                            const lee_exposure_summary *summary,
                             lee_method *method, lee_error *error) {
     *method = (lee_method){
         .air_density_value = setting->fluids.air_density,
         .water_density_value = setting->fluids.water_density,
         .gravity = setting->gravity,
         .return_flow = setting->return_flow,
-        .correction_speed = measured,
+        .corrected = lee_exposure_settled(&problem->exposure, measured),
         .reference_height = 10.0,
     };
     (void)lee_drag_describe(&problem->drag, sizeof method->drag, method->drag);
@@ -145,7 +149,7 @@ lee_status lee_setting_tell(const lee_problem *problem,
     tell_bed(&problem->bed, sizeof method->bed, method->bed);
     method->correction_count =
         lee_exposure_chain(&problem->exposure, &setting->drag, &setting->fluids,
-                           measured, method->correction);
+                           measured, summary, method->correction);
     const lee_status status =
         lee_unused_tell(problem, &method->not_used, error);
     return status == LEE_OK ? tell_range(problem, setting, measured,
@@ -154,11 +158,11 @@ lee_status lee_setting_tell(const lee_problem *problem,
 }
 
 lee_status lee_setting_warn_of_drag(const lee_problem *problem,
-                                    const lee_setting *setting, double measured,
+                                    const lee_setting *setting, double speed,
                                     lee_notes *warnings, lee_error *error) {
     const lee_drag_relation *relation = problem->drag.relation;
     lee_drag_input in = setting->fluids;
-    in.speed = lee_setting_speed(problem, setting, measured);
+    in.speed = speed;
     if (!(in.speed > 0.0)) {
         return LEE_OK; /* a calm has no drag */
     }

@@ -8,7 +8,7 @@
 #include <stddef.h>
 #include <string.h>
 
-/* Columns of a record that nothing reads. */
+/* Columns of a record that may take no part. */
 static const struct {
     const char *name;
     size_t offset;
@@ -35,6 +35,21 @@ static bool has_positions(const lee_problem *problem) {
     return false;
 }
 
+/* Temperatures of the record take part where stability goes by them. */
+static bool is_used(const lee_problem *problem, size_t offset) {
+    const lee_exposure *exposure = &problem->exposure;
+    const bool goes_by_them =
+        exposure->stability == LEE_STABILITY_MONIN_OBUKHOV ||
+        exposure->stability == LEE_STABILITY_RATIO;
+    if (offset == offsetof(lee_wind_record, air_temperature)) {
+        return goes_by_them && isnan(exposure->air_temperature);
+    }
+    if (offset == offsetof(lee_wind_record, water_temperature)) {
+        return goes_by_them && isnan(exposure->water_temperature);
+    }
+    return false;
+}
+
 lee_status lee_unused_tell(const lee_problem *problem, lee_notes *unused,
                            lee_error *error) {
     const bool has_record = problem->wind.kind == LEE_WIND_RECORD;
@@ -42,7 +57,8 @@ lee_status lee_unused_tell(const lee_problem *problem, lee_notes *unused,
     for (size_t i = 0; has_record && i < sizeof columns / sizeof columns[0] &&
                        status == LEE_OK;
          i++) {
-        if (has_column(&problem->wind.record, columns[i].offset)) {
+        if (has_column(&problem->wind.record, columns[i].offset) &&
+            !is_used(problem, columns[i].offset)) {
             status = lee_notes_add(unused, error, "%s of the record",
                                    columns[i].name);
         }

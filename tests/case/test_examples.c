@@ -61,6 +61,18 @@ static void the_research_record_falls_into_two_pieces(void **state) {
     lee_case_free(&c);
 }
 
+static void the_airfield_asks_for_every_link(void **state) {
+    (void)state;
+    lee_case c = read_example("airfield.yaml");
+    const lee_exposure *exposure = &c.problem.exposure;
+    assert_true(exposure->direction_offset > 0.0);
+    assert_true(exposure->is_gust && exposure->is_over_land);
+    assert_int_equal(exposure->to_water_method, LEE_TO_WATER_HSU_1980);
+    assert_int_equal(exposure->stability, LEE_STABILITY_MONIN_OBUKHOV);
+    assert_int_equal(c.problem.wind.record.n, 241);
+    lee_case_free(&c);
+}
+
 static void the_demo_record_holds_a_gale_a_calm_and_gaps(void **state) {
     (void)state;
     lee_case c = read_example("harbour.yaml");
@@ -96,6 +108,7 @@ int main(void) {
         cmocka_unit_test(the_planner_scans_all_directions),
         cmocka_unit_test(the_harbour_runs_ten_days_without_a_long_gap),
         cmocka_unit_test(the_research_record_falls_into_two_pieces),
+        cmocka_unit_test(the_airfield_asks_for_every_link),
         cmocka_unit_test(the_demo_record_holds_a_gale_a_calm_and_gaps),
         cmocka_unit_test(the_demo_lake_bends_and_shelves),
     };

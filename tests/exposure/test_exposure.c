@@ -28,7 +28,14 @@ static lee_drag by(const char *name) {
 
 static double speed_of(const lee_exposure *exposure, const lee_drag *drag,
                        double measured) {
-    return lee_exposure_speed(exposure, drag, &fluids, measured);
+    const lee_exposure_sample sample = {measured, NAN, NAN};
+    return lee_exposure_speed(exposure, drag, &fluids, &sample);
+}
+
+static size_t chain_of(const lee_exposure *exposure, const lee_drag *drag,
+                       double measured, lee_correction chain[LEE_CORRECTIONS]) {
+    const lee_exposure_sample sample = {measured, NAN, NAN};
+    return lee_exposure_chain(exposure, drag, &fluids, &sample, NULL, chain);
 }
 
 static double coefficient(const lee_drag *drag, double speed) {
@@ -93,8 +100,7 @@ static void ten_metres_over_water_change_nothing(void **state) {
     const lee_drag drag = lee_drag_default();
     lee_correction chain[LEE_CORRECTIONS];
     assert_near(speed_of(&exposure, &drag, 13.7), 13.7, 0.0);
-    assert_int_equal(lee_exposure_chain(&exposure, &drag, &fluids, 13.7, chain),
-                     0);
+    assert_int_equal(chain_of(&exposure, &drag, 13.7, chain), 0);
 }
 
 /* At 20 m the jump of Large and Pond leaves measured speeds that no U10
@@ -161,7 +167,8 @@ static void a_drag_that_is_missing_gives_no_speed(void **state) {
     const lee_drag drag = by("van-dorn-1953");
     const lee_exposure exposure = over_water(5.0);
     const lee_drag_input unknown = {0.0, NAN, 1000.0, 9.81, 1.5e-5};
-    assert_true(isnan(lee_exposure_speed(&exposure, &drag, &unknown, 10.0)));
+    const lee_exposure_sample sample = {10.0, NAN, NAN};
+    assert_true(isnan(lee_exposure_speed(&exposure, &drag, &unknown, &sample)));
 }
 
 /* C10 = 0.02 is z0 = 10 exp(-0.4/sqrt(0.02)) = 0.59 m. */
@@ -258,8 +265,7 @@ static void the_chain_lists_each_link_in_order(void **state) {
     exposure.averaging = 600.0;
     exposure.land_to_water = 1.2;
     lee_correction chain[LEE_CORRECTIONS];
-    assert_int_equal(lee_exposure_chain(&exposure, &drag, &fluids, 18.0, chain),
-                     3);
+    assert_int_equal(chain_of(&exposure, &drag, 18.0, chain), 3);
     assert_string_equal(chain[0].name, "averaging");
     assert_string_equal(chain[1].name, "height");
     assert_string_equal(chain[1].method,
@@ -275,8 +281,7 @@ static void the_chain_leaves_out_what_changes_nothing(void **state) {
     const lee_drag drag = lee_drag_default();
     const lee_exposure exposure = over_water(5.0);
     lee_correction chain[LEE_CORRECTIONS];
-    assert_int_equal(lee_exposure_chain(&exposure, &drag, &fluids, 18.0, chain),
-                     1);
+    assert_int_equal(chain_of(&exposure, &drag, 18.0, chain), 1);
     assert_string_equal(chain[0].name, "height");
     assert_string_equal(chain[0].method,
                         "neutral log profile, roughness of the drag relation");
@@ -290,8 +295,7 @@ static void the_chain_at_calm_gives_the_limit(void **state) {
     const lee_drag drag = lee_drag_default();
     const lee_exposure exposure = over_water(5.0);
     lee_correction chain[LEE_CORRECTIONS];
-    assert_int_equal(lee_exposure_chain(&exposure, &drag, &fluids, 0.0, chain),
-                     1);
+    assert_int_equal(chain_of(&exposure, &drag, 0.0, chain), 1);
     assert_near_share(chain[0].factor,
                       1.0 / (1.0 + sqrt(0.75e-3) / kappa * log(0.5)), 1e-15);
 }

@@ -34,6 +34,7 @@ static void the_reservoir_table_is_the_printed_one(void **state) {
 static void between_its_rows_the_reservoir_table_is_linear(void **state) {
     (void)state;
     assert_near(lee_reservoir_ratio(1.5 * mile), 1.17, rounding);
+    assert_near(lee_reservoir_ratio(1.9 * mile), 1.202, rounding);
     assert_near(lee_reservoir_ratio(4.25 * mile), 1.285, rounding);
 }
 

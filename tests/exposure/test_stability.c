@@ -112,6 +112,23 @@ static void unstable_functions_integrate_their_gradients(void **state) {
     assert_near(set("businger-dyer")->heat(-1.0), heat, 1e-6);
 }
 
+/* At zeta = -1 half of each: phi = (1 - 15 zeta)^(-1/2) near neutral,
+ * (1 - 34.15 zeta)^(-1/3) in convection, integrated as above. */
+static void unstable_heat_by_coare_blends_two_integrals(void **state) {
+    (void)state;
+    double neutral_side = 0.0;
+    double convective = 0.0;
+    const double width = 1.0 / 20000.0;
+    for (int i = 0; i < 20000; i++) {
+        const double zeta = -(i + 0.5) * width;
+        neutral_side += (1.0 - pow(1.0 - 15.0 * zeta, -0.5)) / -zeta * width;
+        convective +=
+            (1.0 - pow(1.0 - 34.15 * zeta, -1.0 / 3.0)) / -zeta * width;
+    }
+    assert_near(set("coare-3.5")->heat(-1.0), 0.5 * (neutral_side + convective),
+                1e-6);
+}
+
 /* Equivalent neutral wind by Businger and Dyer, worked to six digits. */
 static const struct {
     double height;
@@ -215,6 +232,7 @@ int main(void) {
         cmocka_unit_test(more_stable_air_always_lowers_the_functions),
         cmocka_unit_test(just_stable_air_follows_the_known_slopes),
         cmocka_unit_test(unstable_functions_integrate_their_gradients),
+        cmocka_unit_test(unstable_heat_by_coare_blends_two_integrals),
         cmocka_unit_test(the_neutral_wind_is_the_worked_one),
         cmocka_unit_test(an_infinite_length_is_the_logarithmic_profile),
         cmocka_unit_test(a_mast_inside_the_roughness_has_no_neutral_wind),

@@ -230,9 +230,9 @@ static void what_was_corrected_is_told(void **state) {
     all.record.merged = 3;
     all.check.method.correction_count = 2;
     all.check.method.correction[0] =
-        (lee_correction){"height", "a profile", "a source", 1.1};
+        (lee_correction){.name = "height", .factor = 1.1};
     all.check.method.correction[1] =
-        (lee_correction){"land to water", "a factor", "a source", 1.2};
+        (lee_correction){.name = "land to water", .factor = 1.2};
     const char *text = draw(&all, LEE_UNITS_SI);
     assert_contains(text, "repeated dropped 12, merged 3\n");
     assert_contains(text, "the fastest is taken x 1.320 over the water:\n");

@@ -61,7 +61,7 @@ static void corrections_are_shown_for_the_peak_of_a_storm(void **state) {
     problem.wind.storm = (lee_storm){
         .peak = 25.0, .rise = 3600.0, .fall = 3600.0, .before = 5.0};
     lee_problem_check found = check(&problem);
-    assert_near(found.method.correction_speed, 25.0, 0.0);
+    assert_near(found.method.corrected.speed, 25.0, 0.0);
     lee_problem_check_free(&found);
     lee_problem_free(&problem);
 }

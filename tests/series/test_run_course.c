@@ -131,7 +131,8 @@ static void the_residual_is_none_of_the_pools_rise(void **state) {
 static double given_speed_at(const lee_run_wind *wind, double t) {
     double at[2];
     size_t hint = 0;
-    lee_wind_at(wind->record, &wind->piece[0], wind->step, t, at, &hint);
+    lee_wind_at(&wind->corrections.water, &wind->piece[0], wind->step, t, at,
+                &hint);
     return hypot(at[0], at[1]);
 }
 
@@ -141,7 +142,10 @@ static void a_given_wind_blows_to_its_last_second(void **state) {
     lee_problem problem = even_lake(length, depth);
     lee_run_wind wind;
     blow(&problem, 10.0, from_west, 86399.0);
-    assert_int_equal(lee_run_wind_init(&problem, 7200.0, &wind, NULL), LEE_OK);
+    lee_setting setting;
+    assert_int_equal(lee_setting_init(&problem, 0.0, &setting, NULL), LEE_OK);
+    assert_int_equal(lee_run_wind_init(&problem, &setting, 7200.0, &wind, NULL),
+                     LEE_OK);
     for (double t = 0.25; t < 86399.0; t += 1.0) {
         assert_near(given_speed_at(&wind, t), 10.0, 1e-12);
     }
@@ -149,6 +153,7 @@ static void a_given_wind_blows_to_its_last_second(void **state) {
         assert_near(given_speed_at(&wind, t), 0.0, 0.0);
     }
     lee_run_wind_free(&wind);
+    lee_setting_free(&setting);
     lee_problem_free(&problem);
 }
 

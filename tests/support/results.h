@@ -90,7 +90,7 @@ static inline lee_method made_method(void) {
         .gravity = 9.80665,
         .return_flow = 1.072,
         .correction_count = 1,
-        .correction_speed = 22.0,
+        .corrected = {22.0, NAN, NAN},
         .reference_height = 10.0,
     };
     (void)snprintf(method.drag, sizeof method.drag, "garratt-linear-1977");
@@ -98,8 +98,10 @@ static inline lee_method made_method(void) {
     (void)snprintf(method.return_flow_how, sizeof method.return_flow_how,
                    "computed");
     (void)snprintf(method.bed, sizeof method.bed, "Manning n = 0.022");
-    method.correction[0] =
-        (lee_correction){"height", "neutral log profile", "a source", 1.094};
+    method.correction[0] = (lee_correction){.name = "height",
+                                            .method = "neutral log profile",
+                                            .source = "a source",
+                                            .factor = 1.094};
     return method;
 }
 
