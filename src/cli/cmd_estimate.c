@@ -2,6 +2,7 @@
 #include <math.h>
 #include <stdio.h>
 #include <stdlib.h>
+#include <string.h>
 
 #include "cli/commands.h"
 #include "cli/options.h"
@@ -23,8 +24,8 @@ typedef struct question {
     double height;
     const char *over; /* NULL: water */
     double roughness;
-    double land_to_water;
-    const char *drag; /* NULL: the usual relation */
+    const char *land_to_water; /* NULL: not given */
+    const char *drag;          /* NULL: the usual relation */
 } question;
 
 static lee_status need(const question *asked, lee_error *error) {
@@ -79,6 +80,33 @@ static lee_status fill_lake(const question *asked, lee_problem *problem,
     return LEE_OK;
 }
 
+/* The way from land to water: a relation by its name, or a factor. */
+static lee_status fill_way(const question *asked, lee_exposure *exposure,
+                           lee_error *error) {
+    static const struct {
+        const char *word;
+        lee_to_water_method method;
+    } ways[] = {
+        {"reservoir", LEE_TO_WATER_RESERVOIR},
+        {"hsu-1980",  LEE_TO_WATER_HSU_1980 },
+        {"hsu-1981",  LEE_TO_WATER_HSU_1981 },
+    };
+    for (size_t i = 0; i < sizeof ways / sizeof ways[0]; i++) {
+        if (strcmp(asked->land_to_water, ways[i].word) == 0) {
+            exposure->to_water_method = ways[i].method;
+            exposure->to_water_fetch = asked->fetch;
+            return LEE_OK;
+        }
+    }
+    if (lee_quantity_parse(asked->land_to_water, "1", &exposure->land_to_water,
+                           NULL) != LEE_OK) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "--land-to-water: expected a factor as 1.2, reservoir, "
+                        "hsu-1980 or hsu-1981");
+    }
+    return LEE_OK;
+}
+
 static lee_status fill_exposure(const question *asked, lee_problem *problem,
                                 lee_error *error) {
     lee_exposure *exposure = &problem->exposure;
@@ -91,9 +119,9 @@ static lee_status fill_exposure(const question *asked, lee_problem *problem,
     exposure->is_over_land = over == 1;
     exposure->height = isnan(asked->height) ? exposure->height : asked->height;
     const bool has_land =
-        !isnan(asked->roughness) || !isnan(asked->land_to_water);
+        !isnan(asked->roughness) || asked->land_to_water != NULL;
     if (exposure->is_over_land &&
-        (isnan(asked->roughness) || isnan(asked->land_to_water))) {
+        (isnan(asked->roughness) || asked->land_to_water == NULL)) {
         return lee_fail(error, LEE_ERR_ARGUMENT,
                         "a wind over land needs --roughness (as \"0.03 m\") "
                         "and --land-to-water (as 1.2)");
@@ -104,7 +132,7 @@ static lee_status fill_exposure(const question *asked, lee_problem *problem,
     }
     if (exposure->is_over_land) {
         exposure->land_roughness = asked->roughness;
-        exposure->land_to_water = asked->land_to_water;
+        return fill_way(asked, exposure, error);
     }
     return LEE_OK;
 }
@@ -145,7 +173,7 @@ static lee_status answer(const question *asked, const request *how,
 }
 
 lee_status cmd_estimate(int argc, char *argv[], lee_error *error) {
-    question asked = {NAN, NAN, NAN, NAN, NAN, NULL, NAN, NAN, NULL};
+    question asked = {NAN, NAN, NAN, NAN, NAN, NULL, NAN, NULL, NULL};
     const option options[] = {
         positive_option("fetch", &quantity_fetch,
                         "open water along the wind, as \"12 km\"",
@@ -162,9 +190,9 @@ lee_status cmd_estimate(int argc, char *argv[], lee_error *error) {
                     &asked.over),
         positive_option("roughness", &quantity_roughness,
                         "of that land, as \"0.03 m\"", &asked.roughness),
-        positive_option("land-to-water", &quantity_factor,
-                        "wind over water by wind over land",
-                        &asked.land_to_water),
+        text_option("land-to-water", "WAY",
+                    "a factor, or reservoir, hsu-1980, hsu-1981",
+                    &asked.land_to_water),
         text_option("drag", "NAME", "drag relation; 'leewater drag' lists them",
                     &asked.drag),
         end_of_options(),

@@ -10,7 +10,6 @@ const quantity quantity_roughness = {"LENGTH", "m", 5.0};
 const quantity quantity_duration = {"TIME", "s", 3.2e9};
 const quantity quantity_direction = {"ANGLE", "radian", 0.0};
 const quantity quantity_density = {"DENSITY", "kg m-3", 2.0};
-const quantity quantity_factor = {"FACTOR", "1", 5.0};
 
 option flag_option(const char *name, const char *help, bool *target) {
     return (option){

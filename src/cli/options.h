@@ -38,7 +38,6 @@ extern const quantity quantity_roughness;
 extern const quantity quantity_duration;
 extern const quantity quantity_direction;
 extern const quantity quantity_density;
-extern const quantity quantity_factor;
 
 typedef struct option {
     option_kind kind;
