@@ -132,7 +132,7 @@ typedef struct lee_steady_water {
                              of water, which a double cannot always place */
     double first_period;  /* s, of the water at rest in the still lake that
                              holds this stretch; NaN when it has no area */
-    bool was_parted;      /* a sill fell dry and cut it from its neighbour */
+    bool was_parted;      /* its still water fell apart under the wind */
 } lee_steady_water;
 
 /* Owns its arrays. */
@@ -148,9 +148,12 @@ typedef struct lee_steady {
                           water is at least half as deep as on average:
                           nearer the beaches it means nothing */
     double cross_tilt_at;
-    bool has_sill; /* waters parted, spilled or joined on the way */
-    double along;  /* area-mean of projected stress over full stress,
-                      -1 to 1; |along| < 0.01: wind across the axis */
+    bool has_sill;  /* waters stand apart, spilled or joined over a crest of
+                       the bed, other than at rest */
+    bool is_parted; /* waters stand apart that no crest of the bed parts: where
+                       a shoal or a bend fell dry, or up a gentle shore */
+    double along;   /* area-mean of projected stress over full stress,
+                       -1 to 1; |along| < 0.01: wind across the axis */
     struct lee_surface *surface; /* exact, for lee_steady_level_at */
 } lee_steady;
 

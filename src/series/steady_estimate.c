@@ -234,6 +234,12 @@ static lee_status warn_of_shores(const lee_steady *main,
                                "waters part or join over a sill: the levels "
                                "are those of a wind grown slowly from rest");
     }
+    if (status == LEE_OK && main->is_parted && !main->has_sill) {
+        status = lee_notes_add(&wind->warnings, error,
+                               "the wind parts the water where it falls dry: "
+                               "the levels are those of a wind grown slowly "
+                               "from rest");
+    }
     if (status == LEE_OK && wind->is_across && wind->stress > 0.0) {
         status = lee_notes_add(&wind->warnings, error,
                                "the wind blows across the axis: no end is "

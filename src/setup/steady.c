@@ -145,7 +145,7 @@ static lee_status solve_laid(const lee_steady_input *in, lee_pools *pools,
     pools->start_level = held - in->still_water;
     pools->partings = 0;
     pools->miss = 0.0;
-    pools->has_sill = false;
+    pools->spilled = 0.0;
     lee_status status = lee_pools_rest(pools, error);
     if (status == LEE_OK) {
         status = lee_pools_blow(pools, error);

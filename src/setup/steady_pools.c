@@ -121,12 +121,28 @@ static void append_water(lee_pools *pools, lee_pool p) {
     const size_t next = last != NULL ? last->last + 1 : 0;
     if (p.first < next) {
         absorb(last, &p);
-        pools->has_sill = true;
         return;
     }
     append_hollows(pools, next, p.first);
     p.start = within_room(pools, &p);
     append(pools, p);
+}
+
+static double bed_at_row(const lee_pools *pools, size_t row) {
+    const size_t n = pools->reach.n;
+    const lee_leg *leg = &pools->reach.leg[row < n ? row : n - 1];
+    return row < n ? leg->bed : leg->bed + leg->slope * leg->length;
+}
+
+/* Whether the bed between two rows rises above both and above the water at
+ * rest. */
+static bool has_land_between(const lee_pools *pools, size_t from, size_t to) {
+    double top = -INFINITY;
+    for (size_t row = from; row <= to; row++) {
+        top = fmax(top, bed_at_row(pools, row));
+    }
+    return top >= 0.0 && top > bed_at_row(pools, from) &&
+           top > bed_at_row(pools, to);
 }
 
 /* Takes the pools over into the catchments of a new wind: each water goes
@@ -155,7 +171,13 @@ static void carry_over(lee_pools *pools, double share) {
         p.first = p.is_held ? 0 : catchment_of(pools, p.first, false, from);
         p.last = catchment_of(pools, last_row, true, p.first);
         from = p.first;
+        const size_t before = pools->count;
         append_water(pools, p);
+        if (pools->count == before &&
+            has_land_between(pools, pools->kept[i - 1].last,
+                             pools->kept[i].first)) {
+            pools->spilled += fmin(pools->kept[i - 1].volume, p.volume);
+        }
     }
     const size_t next =
         pools->count > 0 ? pools->pool[pools->count - 1].last + 1 : 0;
@@ -167,7 +189,6 @@ static void join(lee_pools *pools, size_t i) {
     memmove(&pools->pool[i + 1], &pools->pool[i + 2],
             (pools->count - i - 2) * sizeof *pools->pool);
     pools->count--;
-    pools->has_sill = true;
 }
 
 /* Parts pool i behind catchment `last`, leaving it `volume`; of a boundless
@@ -189,7 +210,6 @@ static void part(lee_pools *pools, size_t i, size_t last, double volume) {
     left->last = last;
     left->is_full_right = false;
     left->is_settled = false;
-    pools->has_sill = true;
     pools->partings++;
 }
 
@@ -237,6 +257,24 @@ static void part_at_crest(lee_pools *pools, size_t i, const lee_fit *fit) {
     part(pools, i, last, fmin(fmax(volume, 0.0), pool->volume));
 }
 
+/* Lowest bed of a pool's catchments. */
+static double lowest_of(const lee_pools *pools, const lee_pool *pool) {
+    const size_t last = pools->crest[pool->last + 1];
+    double lowest = INFINITY;
+    for (size_t row = pools->crest[pool->first]; row <= last; row++) {
+        lowest = fmin(lowest, bed_at_row(pools, row));
+    }
+    return lowest;
+}
+
+/* Whether land at rest lies between a pool and the next: a crest of the bed,
+ * not only the foot of a gentle slope up which thin water runs. */
+static bool is_over_land(const lee_pools *pools, const lee_pool *left) {
+    const double crest = bed_at_row(pools, pools->crest[left->last + 1]);
+    return crest >= 0.0 && crest > lowest_of(pools, left) &&
+           crest > lowest_of(pools, left + 1);
+}
+
 /* Moves what pool i holds too much to its neighbour. */
 static void spill(lee_pools *pools, size_t i, bool goes_right,
                   const lee_fit *fit) {
@@ -249,7 +287,9 @@ static void spill(lee_pools *pools, size_t i, bool goes_right,
     if (isfinite(pool->volume)) {
         next->volume += pool->volume - fit->volume;
         next->is_settled = next->is_held;
-        pools->has_sill = true;
+        if (is_over_land(pools, goes_right ? pool : next)) {
+            pools->spilled += pool->volume - fit->volume;
+        }
     }
     pool->volume = fit->volume;
     pool->start = fit->start;
@@ -363,12 +403,6 @@ static double still_start(const lee_pools *pools, const lee_room *room) {
     return -((double)(i - room->left) + fmax(0.0, share));
 }
 
-static double bed_at_row(const lee_pools *pools, size_t row) {
-    const size_t n = pools->reach.n;
-    const lee_leg *leg = &pools->reach.leg[row < n ? row : n - 1];
-    return row < n ? leg->bed : leg->bed + leg->slope * leg->length;
-}
-
 /* One pool a connected still water, one hollow a dry catchment. */
 static void group_still_waters(lee_pools *pools) {
     pools->count = 0;
@@ -428,7 +462,7 @@ static lee_status grow(lee_pools *pools, double from, double to,
     static const double least_step = 1e-3;
     const size_t count = pools->count;
     const size_t partings = pools->partings;
-    const bool has_sill = pools->has_sill;
+    const double spilled = pools->spilled;
     lee_pool *saved = calloc(count > 0 ? count : 1, sizeof *saved);
     if (saved == NULL) {
         return lee_fail(error, LEE_ERR_MEMORY, "no room for %zu pools", count);
@@ -442,7 +476,7 @@ static lee_status grow(lee_pools *pools, double from, double to,
         memcpy(pools->pool, saved, count * sizeof *saved);
         pools->count = count;
         pools->partings = partings;
-        pools->has_sill = has_sill;
+        pools->spilled = spilled;
         status = grow(pools, from, 0.5 * (from + to), error);
         if (status == LEE_OK) {
             status = grow(pools, 0.5 * (from + to), to, error);

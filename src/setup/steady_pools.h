@@ -33,7 +33,7 @@ typedef struct lee_pools {
     double volume;   /* m3, of the closed waters at rest             */
     double miss;     /* largest part of its volume that a fit missed */
     size_t partings; /* how often a sill fell dry                    */
-    bool has_sill;   /* waters parted, spilled or joined */
+    double spilled;  /* m3 that went over land from pool to pool     */
 } lee_pools;
 
 /* Room for an axis of n legs, to be filled by the caller.

@@ -325,10 +325,80 @@ static lee_status period_of(const gathering *g, still_water *still,
     return lee_first_period(&input, &still->period, error);
 }
 
+/* A place on the axis and its bed. */
+typedef struct bed_spot {
+    double x;
+    double bed;
+} bed_spot;
+
+/* Lowest (sign -1) or highest (1) bed from one chainage to another. */
+static bed_spot extreme_bed(const lee_profile *p, double from, double to,
+                            double sign) {
+    bed_spot best = {from, lee_profile_bed(p, from)};
+    const double end = lee_profile_bed(p, to);
+    if (sign * end > sign * best.bed) {
+        best = (bed_spot){to, end};
+    }
+    for (size_t i = 0; i < p->n; i++) {
+        if (p->chainage[i] > from && p->chainage[i] < to &&
+            sign * p->bed[i] > sign * best.bed) {
+            best = (bed_spot){p->chainage[i], p->bed[i]};
+        }
+    }
+    return best;
+}
+
+/* Whether the bed rises between two waters to above the deepest of both. */
+static bool has_crest_between(const lee_profile *p, const lee_steady_water *a,
+                              const lee_steady_water *b) {
+    const double rounding = 1e-9; /* m */
+    const bed_spot one = extreme_bed(p, a->from, a->to, -1.0);
+    const bed_spot other = extreme_bed(p, b->from, b->to, -1.0);
+    const bed_spot top =
+        extreme_bed(p, fmin(one.x, other.x), fmax(one.x, other.x), 1.0);
+    return top.bed > fmax(one.bed, other.bed) + rounding;
+}
+
+/* Notes neighbours that were one water at rest, or of which one was none. */
+static void note_partings(const gathering *g, lee_steady *steady) {
+    for (size_t i = 1; i < steady->count; i++) {
+        const lee_steady_water *a = &steady->water[i - 1];
+        const lee_steady_water *b = &steady->water[i];
+        const still_water *one = still_of(g, a);
+        const still_water *other = still_of(g, b);
+        const bool has_new = one == NULL || other == NULL;
+        if (has_new ? steady->count <= g->stills : one != other) {
+            continue; /* apart at rest too, maybe elsewhere */
+        }
+        const bool has_crest = has_crest_between(g->in->profile, a, b);
+        steady->is_parted = steady->is_parted || !has_crest;
+        steady->has_sill = steady->has_sill || (has_crest && one == other);
+    }
+}
+
+/* Notes waters that joined or went over land. Less than a billionth of the
+ * lake that spills is a puddle. */
+static void note_joinings(const gathering *g, lee_steady *steady) {
+    const lee_profile *p = g->in->profile;
+    const double touch = 1e-9 * (p->chainage[p->n - 1] - p->chainage[0]);
+    for (size_t i = 0; i < steady->count; i++) {
+        size_t stills = 0;
+        for (size_t k = 0; k < g->stills; k++) {
+            stills += shared(g, &g->still[k], &steady->water[i]) > touch;
+        }
+        steady->has_sill = steady->has_sill || stills > 1;
+    }
+    if (g->pools->spilled > 1e-9 * g->pools->volume) {
+        steady->has_sill = true;
+    }
+}
+
 /* What the waters share with the lake at rest. */
 static lee_status compare_with_rest(gathering *g, lee_steady *steady,
                                     lee_error *error) {
     note_remains(g, steady);
+    note_partings(g, steady);
+    note_joinings(g, steady);
     for (size_t i = 0; i < steady->count; i++) {
         lee_steady_water *water = &steady->water[i];
         still_water *still = still_of(g, water);
@@ -402,7 +472,6 @@ static lee_status gather(gathering *g, lee_steady *steady, lee_error *error) {
     }
     find_stills(g);
     steady->cross_tilt_at = NAN;
-    steady->has_sill = g->pools->has_sill;
     for (size_t i = 0; i < g->pools->count && status == LEE_OK; i++) {
         if (g->pools->pool[i].volume > 0.0) {
             status = tell_water(g, &g->pools->pool[i], steady, error);

@@ -219,7 +219,8 @@ static void a_bend_drawn_dry_parts_the_lake_evenly(void **state) {
     lee_steady s = axis_solve(&in);
     const lee_parabola half = lee_closed_parabola(2.0 / rho_g, 3e4, 1.5);
     assert_int_equal(s.count, 2);
-    assert_true(s.has_sill);
+    assert_true(s.is_parted);
+    assert_false(s.has_sill);
     assert_near(s.water[0].set_up, half.set_up, 1e-9);
     assert_near(s.water[1].set_up, half.set_up, 1e-9);
     assert_near(s.water[0].to, half.wet_length, 1e-3);
@@ -322,7 +323,79 @@ static void water_over_a_dike_fills_the_hollow_behind(void **state) {
     assert_int_equal(s.count, 2);
     assert_near(s.water[0].set_up, 0.3, 1e-9);
     assert_near(s.water[1].volume / 1000.0, 3.0 * 10000.025 - kept, 1.0);
+    assert_true(s.has_sill);
     assert_true(isnan(s.water[1].first_period));
+    lee_steady_free(&s);
+    lee_profile_free(&p);
+}
+
+/* Whether any of six winds, both ways, meets a sill on a bed of `n` rows that
+ * has no crest. */
+static bool meets_a_sill(size_t n, const double x[], const double z[]) {
+    static const double stress[] = {0.3, 1.0, 3.0, -0.3, -1.0, -3.0};
+    bool meets = false;
+    for (size_t k = 0; k < sizeof stress / sizeof stress[0]; k++) {
+        lee_profile p = axis_dig(n, x, z);
+        const lee_steady_input in = axis_wind(&p, stress[k]);
+        lee_steady s = axis_solve(&in);
+        meets = meets || s.has_sill;
+        lee_steady_free(&s);
+        lee_profile_free(&p);
+    }
+    return meets;
+}
+
+static void a_bed_between_two_beaches_has_no_sill(void **state) {
+    (void)state;
+    const double x[] = {0.0, 2e3, 10e3, 12e3};
+    const double z[] = {1.0, -4.0, -4.0, 1.0};
+    assert_false(meets_a_sill(4, x, z));
+}
+
+/* Thin water runs down the steep beach and up the gentle terrace: they drain
+ * apart, and yet the bed only rises. */
+static void a_beach_of_steep_and_gentle_slopes_has_no_sill(void **state) {
+    (void)state;
+    const double x[] = {0.0, 5e3, 5100.0, 9e3, 9100.0, 12e3, 12100.0};
+    const double z[] = {-5.0, -5.0, -1.0, -0.9, 0.5, 0.52, 2.0};
+    assert_false(meets_a_sill(7, x, z));
+}
+
+static void a_submerged_shelf_has_no_sill(void **state) {
+    (void)state;
+    const double x[] = {0.0, 8e3, 8100.0, 15e3};
+    const double z[] = {-0.3, -0.31, -5.0, -5.0};
+    assert_false(meets_a_sill(4, x, z));
+}
+
+/* The wind piles the water of the shelf up at its wall, and the deep water
+ * falls below the shelf's edge: two waters without a crest between them. */
+static void a_shelf_that_falls_dry_parts_the_water(void **state) {
+    (void)state;
+    const double x[] = {0.0, 8e3, 8100.0, 15e3};
+    const double z[] = {-0.3, -0.31, -5.0, -5.0};
+    lee_profile p = axis_dig(4, x, z);
+    const lee_steady_input in = axis_wind(&p, -1.5);
+    lee_steady s = axis_solve(&in);
+    assert_int_equal(s.count, 2);
+    assert_true(s.is_parted);
+    assert_true(s.water[0].was_parted && s.water[1].was_parted);
+    lee_steady_free(&s);
+    lee_profile_free(&p);
+}
+
+/* A lagoon behind a gentle bar, 0.2 m above still water: a storm drives all
+ * of it over the bar. */
+static void a_lagoon_blown_empty_went_over_a_sill(void **state) {
+    (void)state;
+    const double x[] = {0.0, 10e3, 10050.0, 10500.0, 14100.0};
+    const double z[] = {-5.0, -4.0, 0.2, -0.5, 1.0};
+    lee_profile p = axis_dig(5, x, z);
+    const lee_steady_input in = axis_wind(&p, -3.0);
+    lee_steady s = axis_solve(&in);
+    assert_int_equal(s.count, 1);
+    assert_true(s.water[0].to < 10050.0);
+    assert_true(s.has_sill);
     lee_steady_free(&s);
     lee_profile_free(&p);
 }
@@ -360,6 +433,11 @@ int main(void) {
         cmocka_unit_test(a_bend_parts_at_the_wind_that_draws_it_dry),
         cmocka_unit_test(a_hollow_at_a_bend_keeps_water_on_both_sides),
         cmocka_unit_test(water_over_a_dike_fills_the_hollow_behind),
+        cmocka_unit_test(a_bed_between_two_beaches_has_no_sill),
+        cmocka_unit_test(a_beach_of_steep_and_gentle_slopes_has_no_sill),
+        cmocka_unit_test(a_submerged_shelf_has_no_sill),
+        cmocka_unit_test(a_shelf_that_falls_dry_parts_the_water),
+        cmocka_unit_test(a_lagoon_blown_empty_went_over_a_sill),
         cmocka_unit_test(a_puddle_thinner_than_the_dry_depth_is_no_water),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
