@@ -175,6 +175,19 @@ void lee_steady_free(lee_steady *steady);
 /* Level at chainage x, exact; NaN where dry or off the axis. */
 double lee_steady_level_at(const lee_steady *steady, double x);
 
+/* Chainage of the highest bed between two neighbouring waters; NaN when it is
+ * no crest: nowhere above the deepest places of both. */
+double lee_steady_crest(const lee_profile *profile, const lee_steady_water *a,
+                        const lee_steady_water *b);
+
+/* Lowest and highest level of a surface over a stretch of the axis. */
+typedef struct lee_level_extremes {
+    double lowest; /* m above the datum; NaN where all is dry */
+    double highest;
+} lee_level_extremes;
+lee_level_extremes lee_steady_extremes(const lee_steady *steady, double from,
+                                       double to);
+
 /* The water whose first period is asked for. */
 typedef struct lee_period_input {
     const lee_profile *profile;

@@ -97,10 +97,8 @@ lee_status lee_check_problem(const lee_problem *problem,
     lee_setting setting = {0};
     lee_status status = lee_exposure_check(&problem->exposure, error);
     if (status == LEE_OK) {
-        const double begin = problem->wind.kind == LEE_WIND_RECORD
-                                 ? (double)problem->wind.record.time[0]
-                                 : -INFINITY;
-        status = lee_setting_init(problem, begin, &setting, error);
+        status = lee_setting_init(problem, lee_setting_begin(problem, 0.0),
+                                  &setting, error);
     }
     if (status != LEE_OK) {
         return status;

@@ -316,18 +316,10 @@ static lee_status find_pull(const lee_problem *problem, lee_run_plan *plan,
     return LEE_OK;
 }
 
-static double begin_of(const lee_problem *problem) {
-    if (problem->run.has_from) {
-        return (double)problem->run.from;
-    }
-    return problem->wind.record.n > 0 ? (double)problem->wind.record.time[0]
-                                      : 0.0;
-}
-
 static lee_status make_plan(const lee_problem *problem, lee_run_plan *plan,
                             lee_notes *warnings, lee_error *error) {
-    lee_status status =
-        lee_setting_init(problem, begin_of(problem), &plan->setting, error);
+    lee_status status = lee_setting_init(
+        problem, lee_setting_begin(problem, 0.0), &plan->setting, error);
     if (status == LEE_OK) {
         status = find_period(problem, plan, error);
     }

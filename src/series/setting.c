@@ -95,6 +95,34 @@ static lee_status settle_drags(const lee_problem *problem, lee_setting *setting,
     return status;
 }
 
+double lee_setting_begin(const lee_problem *problem, double undated) {
+    if (problem->run.has_from) {
+        return (double)problem->run.from;
+    }
+    return problem->wind.record.n > 0 ? (double)problem->wind.record.time[0]
+                                      : undated;
+}
+
+/* The range needs water in the shallow lake too. */
+static lee_status check_depth_uncertainty(const lee_problem *problem,
+                                          const lee_setting *setting,
+                                          lee_error *error) {
+    const lee_profile *profile = &problem->lake.profile;
+    const double doubt = problem->uncertainty.depth;
+    double greatest = -INFINITY;
+    for (size_t i = 0; i < profile->n; i++) {
+        greatest = fmax(greatest, setting->still_water - profile->bed[i]);
+    }
+    if (isnan(doubt) || doubt < greatest) {
+        return LEE_OK;
+    }
+    return lee_fail(error, LEE_ERR_DATA,
+                    "uncertainty.depth, %.3f m, is not less than the greatest "
+                    "depth of the lake, %.3f m at the still-water level %.3f "
+                    "m: the shallow end of the range holds no water",
+                    doubt, greatest, setting->still_water);
+}
+
 lee_status lee_setting_init(const lee_problem *problem, double time,
                             lee_setting *setting, lee_error *error) {
     const lee_lake *lake = &problem->lake;
@@ -119,6 +147,10 @@ lee_status lee_setting_init(const lee_problem *problem, double time,
                         "%.3f m: its bed is nowhere below it",
                         setting->still_water);
     }
+    lee_status status = check_depth_uncertainty(problem, setting, error);
+    if (status != LEE_OK) {
+        return status;
+    }
     if (lake->start.is_held) {
         setting->start_level = lee_level_at(&lake->start.level, time);
     }
@@ -126,7 +158,7 @@ lee_status lee_setting_init(const lee_problem *problem, double time,
         setting->end_level = lee_level_at(&lake->end.level, time);
     }
     settle_return_flow(problem, setting);
-    const lee_status status = settle_drags(problem, setting, error);
+    status = settle_drags(problem, setting, error);
     if (status != LEE_OK) {
         lee_setting_free(setting);
     }

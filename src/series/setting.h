@@ -33,8 +33,13 @@ typedef struct lee_setting {
     double end_level;
 } lee_setting;
 
+/* When a problem begins, s since 1970: at run.from, else with its record, else
+ * `undated`. */
+double lee_setting_begin(const lee_problem *problem, double undated);
+
 /* Settles densities, drags, lambda and levels at `time` (s since 1970).
- * Errors: LEE_ERR_DATA when the lake holds no water at its still level;
+ * Errors: LEE_ERR_DATA when the lake holds no water at its still level, or
+ * would hold none were it shallower by its depth uncertainty;
  * LEE_ERR_MEMORY. */
 lee_status lee_setting_init(const lee_problem *problem, double time,
                             lee_setting *setting, lee_error *error);

@@ -77,8 +77,9 @@ static lee_status solve_all(const lee_problem *problem,
     return LEE_OK;
 }
 
+/* A low end that is none, of a place fallen dry, stays none. */
 static void widen(lee_ranged *ranged, double value) {
-    ranged->low = fmin(ranged->low, value);
+    ranged->low = isnan(ranged->low) ? NAN : fmin(ranged->low, value);
     ranged->high = fmax(ranged->high, value);
 }
 
@@ -86,16 +87,43 @@ static lee_ranged point(double value) {
     return (lee_ranged){value, value, value};
 }
 
-/* Widens a water's numbers by the waters of a member that overlap it. */
-static void widen_water(const lee_steady *member, lee_water_estimate *water) {
-    for (size_t i = 0; i < member->count; i++) {
-        const lee_steady_water *other = &member->water[i];
-        if (other->from < water->to && other->to > water->from) {
-            widen(&water->set_up, other->set_up);
-            widen(&water->set_down, other->set_down);
-            widen(&water->tilt, other->tilt);
-        }
+/* Where the stretches of two neighbouring waters meet: at the crest between
+ * them, or half way without one. */
+static double meeting(const lee_profile *profile, const lee_steady_water *left,
+                      const lee_steady_water *right) {
+    const double crest = lee_steady_crest(profile, left, right);
+    return isnan(crest) ? 0.5 * (left->to + right->from) : crest;
+}
+
+/* Levels of a member on the stretch of axis that is one water's, whatever
+ * parts or joins there. */
+static lee_level_extremes levels_on_stretch(const lee_profile *profile,
+                                            const solutions *all, size_t member,
+                                            size_t water) {
+    const lee_steady *main = &all->steady[0];
+    const lee_steady_water *own = &main->water[water];
+    const double from =
+        water > 0 ? meeting(profile, own - 1, own) : profile->chainage[0];
+    const double to = water + 1 < main->count
+                          ? meeting(profile, own, own + 1)
+                          : profile->chainage[profile->n - 1];
+    return lee_steady_extremes(&all->steady[member], from, to);
+}
+
+/* Widens a water's numbers by the highest and the lowest level that a member
+ * has on its stretch, whether there as one water or as several; where the
+ * member leaves it dry there is no low end. */
+static void widen_water(const lee_level_extremes *levels, double still_water,
+                        lee_water_estimate *water) {
+    if (isnan(levels->highest)) {
+        water->set_up.low = NAN;
+        water->set_down.low = NAN;
+        water->tilt.low = 0.0;
+        return;
     }
+    widen(&water->set_up, levels->highest - still_water);
+    widen(&water->set_down, levels->lowest - still_water);
+    widen(&water->tilt, levels->highest - levels->lowest);
 }
 
 static lee_status copy_nodes(const lee_steady_water *from,
@@ -112,7 +140,8 @@ static lee_status copy_nodes(const lee_steady_water *from,
     return LEE_OK;
 }
 
-static lee_status tell_waters(const solutions *all, lee_wind_estimate *wind,
+static lee_status tell_waters(const lee_profile *profile, const solutions *all,
+                              double still_water, lee_wind_estimate *wind,
                               lee_error *error) {
     const lee_steady *main = &all->steady[0];
     wind->water = calloc(main->count + 1, sizeof *wind->water);
@@ -140,7 +169,9 @@ static lee_status tell_waters(const solutions *all, lee_wind_estimate *wind,
             return status;
         }
         for (size_t k = 1; k < all->count; k++) {
-            widen_water(&all->steady[k], water);
+            const lee_level_extremes levels =
+                levels_on_stretch(profile, all, k, i);
+            widen_water(&levels, still_water, water);
         }
     }
     return LEE_OK;
@@ -174,7 +205,8 @@ static extremes extremes_of(const lee_steady *steady) {
     return all;
 }
 
-static void tell_extremes(const solutions *all, lee_wind_estimate *wind) {
+static void tell_extremes(const lee_profile *profile, const solutions *all,
+                          lee_wind_estimate *wind) {
     const extremes main = extremes_of(&all->steady[0]);
     wind->set_up = point(main.set_up);
     wind->set_up_at = main.set_up_at;
@@ -186,7 +218,13 @@ static void tell_extremes(const solutions *all, lee_wind_estimate *wind) {
         const extremes member = extremes_of(&all->steady[k]);
         widen(&wind->set_up, member.set_up);
         widen(&wind->set_down, member.set_down);
-        widen(&wind->tilt, member.tilt);
+        double tilt = 0.0;
+        for (size_t i = 0; i < all->steady[0].count; i++) {
+            const lee_level_extremes levels =
+                levels_on_stretch(profile, all, k, i);
+            tilt = fmax(tilt, levels.highest - levels.lowest);
+        }
+        widen(&wind->tilt, tilt);
     }
 }
 
@@ -282,7 +320,7 @@ static lee_status tell_wind(const lee_problem *problem,
     wind->cross_tilt = main->cross_tilt;
     wind->cross_tilt_at = main->cross_tilt_at;
     wind->dry_length = main->dry_length;
-    tell_extremes(all, wind);
+    tell_extremes(&problem->lake.profile, all, wind);
     lee_drag_input in = setting->fluids;
     in.speed = wind->speed;
     wind->coefficient = lee_drag_coefficient(&setting->drag, &in, NULL, NULL);
@@ -291,7 +329,8 @@ static lee_status tell_wind(const lee_problem *problem,
     lee_status status = lee_setting_warn_of_drag(problem, setting, wind->speed,
                                                  &wind->warnings, error);
     if (status == LEE_OK) {
-        status = tell_waters(all, wind, error);
+        status = tell_waters(&problem->lake.profile, all, setting->still_water,
+                             wind, error);
     }
     if (status == LEE_OK) {
         status = tell_stations(problem, all, wind, error);
@@ -345,16 +384,37 @@ static lee_status estimate_winds(const lee_problem *problem,
                             error);
 }
 
-static lee_status warn_of_still_water(const lee_problem *problem,
-                                      lee_steady_result *result,
-                                      lee_error *error) {
-    if (problem->lake.still_water.n > 1) {
-        return lee_notes_add(&result->warnings, error,
-                             "still water is a series: its first level, "
-                             "%.3f m, is used",
-                             result->still_water);
+/* A steady state has one level of each kind: says which one of a series. */
+static lee_status warn_of_series(const lee_problem *problem, const char *what,
+                                 const lee_level_series *series, double level,
+                                 lee_steady_result *result, lee_error *error) {
+    if (series->n < 2) {
+        return LEE_OK;
     }
-    return LEE_OK;
+    return lee_notes_add(
+        &result->warnings, error, "%s is a series: its %s, %.3f m, is used",
+        what, problem->run.has_from ? "level at run.from" : "first level",
+        level);
+}
+
+static lee_status warn_of_levels(const lee_problem *problem,
+                                 const lee_setting *setting,
+                                 lee_steady_result *result, lee_error *error) {
+    const lee_lake *lake = &problem->lake;
+    lee_status status =
+        warn_of_series(problem, "still water", &lake->still_water,
+                       setting->still_water, result, error);
+    if (status == LEE_OK && lake->start.is_held) {
+        status = warn_of_series(problem, "the level held at the start",
+                                &lake->start.level, setting->start_level,
+                                result, error);
+    }
+    if (status == LEE_OK && lake->end.is_held) {
+        status =
+            warn_of_series(problem, "the level held at the end",
+                           &lake->end.level, setting->end_level, result, error);
+    }
+    return status;
 }
 
 lee_status lee_estimate_steady(const lee_problem *problem,
@@ -370,7 +430,8 @@ lee_status lee_estimate_steady(const lee_problem *problem,
     lee_setting setting = {0};
     lee_status status = lee_exposure_check(&problem->exposure, error);
     if (status == LEE_OK) {
-        status = lee_setting_init(problem, -INFINITY, &setting, error);
+        status = lee_setting_init(
+            problem, lee_setting_begin(problem, -INFINITY), &setting, error);
     }
     if (status != LEE_OK) {
         return status;
@@ -386,10 +447,10 @@ lee_status lee_estimate_steady(const lee_problem *problem,
     if (status == LEE_OK) {
         status = estimate_winds(problem, &setting, result, error);
     }
-    lee_setting_free(&setting);
     if (status == LEE_OK) {
-        status = warn_of_still_water(problem, result, error);
+        status = warn_of_levels(problem, &setting, result, error);
     }
+    lee_setting_free(&setting);
     if (status != LEE_OK) {
         lee_steady_result_free(result);
     }

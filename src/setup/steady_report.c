@@ -348,15 +348,15 @@ static bed_spot extreme_bed(const lee_profile *p, double from, double to,
     return best;
 }
 
-/* Whether the bed rises between two waters to above the deepest of both. */
-static bool has_crest_between(const lee_profile *p, const lee_steady_water *a,
-                              const lee_steady_water *b) {
+double lee_steady_crest(const lee_profile *profile, const lee_steady_water *a,
+                        const lee_steady_water *b) {
     const double rounding = 1e-9; /* m */
-    const bed_spot one = extreme_bed(p, a->from, a->to, -1.0);
-    const bed_spot other = extreme_bed(p, b->from, b->to, -1.0);
-    const bed_spot top =
-        extreme_bed(p, fmin(one.x, other.x), fmax(one.x, other.x), 1.0);
-    return top.bed > fmax(one.bed, other.bed) + rounding;
+    const lee_steady_water *left = a->from < b->from ? a : b;
+    const lee_steady_water *right = left == a ? b : a;
+    const double low = fmax(extreme_bed(profile, a->from, a->to, -1.0).bed,
+                            extreme_bed(profile, b->from, b->to, -1.0).bed);
+    const bed_spot top = extreme_bed(profile, left->to, right->from, 1.0);
+    return top.bed > low + rounding ? top.x : NAN;
 }
 
 /* Notes neighbours that were one water at rest, or of which one was none. */
@@ -370,7 +370,7 @@ static void note_partings(const gathering *g, lee_steady *steady) {
         if (has_new ? steady->count <= g->stills : one != other) {
             continue; /* apart at rest too, maybe elsewhere */
         }
-        const bool has_crest = has_crest_between(g->in->profile, a, b);
+        const bool has_crest = !isnan(lee_steady_crest(g->in->profile, a, b));
         steady->is_parted = steady->is_parted || !has_crest;
         steady->has_sill = steady->has_sill || (has_crest && one == other);
     }
@@ -543,4 +543,36 @@ double lee_steady_level_at(const lee_steady *steady, double x) {
     }
     return surface->still_water +
            lee_piece_level(piece, fmin(fmax(distance, 0.0), length));
+}
+
+/* Level of a piece at the solver's x, kept on the piece. */
+static double piece_level_near(const lee_piece *piece, double x) {
+    const double length = lee_piece_at(piece, 1.0).x - piece->x;
+    return lee_piece_level(piece, fmin(fmax(x - piece->x, 0.0), length));
+}
+
+lee_level_extremes lee_steady_extremes(const lee_steady *steady, double from,
+                                       double to) {
+    lee_level_extremes all = {NAN, NAN};
+    const lee_surface *surface = steady->surface;
+    if (surface == NULL) {
+        return all;
+    }
+    const double a = (from - surface->origin) * surface->sense;
+    const double b = (to - surface->origin) * surface->sense;
+    for (size_t i = 0; i < surface->pieces; i++) {
+        const lee_piece *piece = &surface->piece[i];
+        if (!(piece->x <= fmax(a, b)) ||
+            !(lee_piece_at(piece, 1.0).x >= fmin(a, b))) {
+            continue;
+        }
+        /* along a piece the level only rises or only falls */
+        const double one =
+            surface->still_water + piece_level_near(piece, fmin(a, b));
+        const double other =
+            surface->still_water + piece_level_near(piece, fmax(a, b));
+        all.lowest = fmin(all.lowest, fmin(one, other));
+        all.highest = fmax(all.highest, fmax(one, other));
+    }
+    return all;
 }

@@ -276,7 +276,147 @@ static void a_depth_uncertainty_that_empties_the_lake_is_refused(void **state) {
     lee_error error = {0};
     assert_int_equal(lee_estimate_steady(&problem, &result, &error),
                      LEE_ERR_DATA);
-    assert_non_null(strstr(error.message, "with the bed +5.5 m"));
+    assert_string_equal(error.message,
+                        "uncertainty.depth, 5.500 m, is not less than the "
+                        "greatest depth of the lake, 5.000 m at the "
+                        "still-water level 0.000 m: the shallow end of the "
+                        "range holds no water");
+    lee_problem_free(&problem);
+}
+
+static void check_and_run_refuse_it_with_the_same_words(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    problem.uncertainty.depth = 5.0;
+    blow(&problem, 20.0, from_west, 3600.0);
+    lee_steady_result steady;
+    lee_run_result run;
+    lee_problem_check check;
+    const lee_run_options options = lee_run_options_default();
+    lee_error error[3] = {0};
+    assert_int_equal(lee_estimate_steady(&problem, &steady, &error[0]),
+                     LEE_ERR_DATA);
+    assert_int_equal(lee_estimate_run(&problem, &options, &run, &error[1]),
+                     LEE_ERR_DATA);
+    assert_int_equal(lee_check_problem(&problem, &check, &error[2]),
+                     LEE_ERR_DATA);
+    assert_string_equal(error[1].message, error[0].message);
+    assert_string_equal(error[2].message, error[0].message);
+    lee_problem_free(&problem);
+}
+
+/* Two levels a day apart, in m; times in s since 1970. */
+static void give_series(lee_level_series *series, double first, double last) {
+    lee_level_series_free(series);
+    *series = (lee_level_series){.n = 2,
+                                 .time = calloc(2, sizeof *series->time),
+                                 .level = calloc(2, sizeof *series->level)};
+    assert_non_null(series->time);
+    assert_non_null(series->level);
+    series->time[1] = 86400;
+    series->level[0] = first;
+    series->level[1] = last;
+}
+
+static void a_held_level_that_is_a_series_is_told(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    problem.lake.end.is_held = true;
+    give_series(&problem.lake.end.level, 0.25, 0.5);
+    blow(&problem, 20.0, from_west, NAN);
+    lee_steady_result result;
+    assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+    assert_true(has_warning(&result.warnings,
+                            "the level held at the end is a series: its first "
+                            "level, 0.250 m, is used"));
+    lee_steady_result_free(&result);
+    lee_problem_free(&problem);
+}
+
+/* Half a day on, half way from 0.2 m to 0.4 m. */
+static void each_path_takes_still_water_at_the_begin_of_a_run(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    give_series(&problem.lake.still_water, 0.2, 0.4);
+    problem.run.has_from = true;
+    problem.run.from = 43200;
+    blow(&problem, 20.0, from_west, 3600.0);
+    lee_steady_result steady;
+    lee_run_result run;
+    lee_problem_check check;
+    lee_run_options options = lee_run_options_default();
+    options.has_range = false;
+    options.has_own_error = false;
+    assert_int_equal(lee_estimate_steady(&problem, &steady, NULL), LEE_OK);
+    assert_int_equal(lee_estimate_run(&problem, &options, &run, NULL), LEE_OK);
+    assert_int_equal(lee_check_problem(&problem, &check, NULL), LEE_OK);
+    assert_near(steady.still_water, 0.3, 1e-12);
+    assert_near(run.still_water, 0.3, 1e-12);
+    assert_near(check.still_water, 0.3, 1e-12);
+    assert_true(has_warning(&steady.warnings, "its level at run.from"));
+    lee_steady_result_free(&steady);
+    lee_run_result_free(&run);
+    lee_problem_check_free(&check);
+    lee_problem_free(&problem);
+}
+
+/* A reef of the given height above still water between two basins 5 m deep,
+ * 3 km long in the west and 7 km in the east; the wind blows towards the east
+ * basin. */
+static lee_problem reef_lake(double crest) {
+    lee_problem problem = even_lake(10e3, depth);
+    lee_profile *profile = &problem.lake.profile;
+    lee_profile_free(profile);
+    assert_int_equal(lee_profile_init(profile, 5, NULL), LEE_OK);
+    const double x[] = {0.0, 2995.0, 3000.0, 3005.0, 10e3};
+    const double z[] = {-depth, -depth, crest, -depth, -depth};
+    for (size_t i = 0; i < 5; i++) {
+        profile->chainage[i] = x[i];
+        profile->bed[i] = z[i];
+        profile->width[i] = 1000.0;
+        profile->bearing[i] = lake_east;
+    }
+    return problem;
+}
+
+/* The deep bound leaves one water, the shallow one parts it at the reef, 0.1 m
+ * above still water: no level west of it is higher. In each bound the highest
+ * level is that of the lee shore, and the range says so. */
+static void a_bound_that_parts_a_water_keeps_its_lee_end(void **state) {
+    (void)state;
+    lee_problem problem = reef_lake(-0.1);
+    problem.uncertainty.depth = 0.2;
+    blow(&problem, 30.0, from_west, NAN);
+    lee_steady_result result;
+    assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+    const lee_wind_estimate *wind = &result.wind[0];
+    const lee_ranged *east = &wind->station[2].level;
+    assert_int_equal(wind->water_count, 1);
+    assert_near(wind->water[0].set_up.low, east->low, 1e-9);
+    assert_near(wind->water[0].set_up.high, east->high, 1e-9);
+    assert_near(wind->set_up.low, east->low, 1e-9);
+    assert_true(wind->water[0].set_down.low <= wind->station[0].level.low);
+    assert_true(wind->water[0].tilt.low <= wind->water[0].tilt.value);
+    assert_near(wind->tilt.low, wind->water[0].tilt.low, 1e-12);
+    lee_steady_result_free(&result);
+    lee_problem_free(&problem);
+}
+
+/* Apart in the estimate, one water in the deep bound: each basin is compared
+ * with its own side of the reef, the west one never with the lee shore. */
+static void a_bound_that_joins_waters_is_compared_by_side(void **state) {
+    (void)state;
+    lee_problem problem = reef_lake(0.3);
+    problem.uncertainty.depth = 1.0;
+    blow(&problem, 15.0, from_west, NAN);
+    lee_steady_result result;
+    assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+    const lee_wind_estimate *wind = &result.wind[0];
+    assert_int_equal(wind->water_count, 2);
+    assert_near(wind->water[0].set_down.low, wind->station[0].level.low, 1e-9);
+    assert_near(wind->water[1].set_up.high, wind->station[2].level.high, 1e-9);
+    assert_true(wind->water[0].set_up.high < wind->station[2].level.high);
+    lee_steady_result_free(&result);
     lee_problem_free(&problem);
 }
 
@@ -403,6 +543,11 @@ int main(void) {
         cmocka_unit_test(the_range_of_a_pond_is_its_own),
         cmocka_unit_test(a_still_water_of_two_levels_says_which_is_used),
         cmocka_unit_test(a_station_that_may_fall_dry_has_no_low_end),
+        cmocka_unit_test(check_and_run_refuse_it_with_the_same_words),
+        cmocka_unit_test(a_held_level_that_is_a_series_is_told),
+        cmocka_unit_test(each_path_takes_still_water_at_the_begin_of_a_run),
+        cmocka_unit_test(a_bound_that_parts_a_water_keeps_its_lee_end),
+        cmocka_unit_test(a_bound_that_joins_waters_is_compared_by_side),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }
