@@ -147,7 +147,7 @@ typedef struct lee_station_level {
     lee_ranged level;     /* m above the datum; NaN where dry */
     double section_depth; /* m: level minus the section's bed; NaN where dry */
     double depth;         /* m: level minus the station's own bed; NaN when
-                             not given or dry */
+                             not given, dry or not above it */
 } lee_station_level;
 
 /* One connected water, with ranges. */
@@ -198,6 +198,18 @@ typedef struct lee_steady_result {
     size_t station_count;
     lee_notes warnings;
 } lee_steady_result;
+
+/* How a level stands to a threshold. */
+typedef enum lee_reach {
+    LEE_REACH_NOT,
+    LEE_REACH_RANGE, /* only the high end of its range is over it, or the low
+                        end under it */
+    LEE_REACH_VALUE  /* the estimate itself is */
+} lee_reach;
+
+/* A place fallen dry is under every level. */
+lee_reach lee_threshold_reach(const lee_threshold *threshold,
+                              const lee_ranged *level);
 
 /* Equilibrium levels for every wind of a problem whose wind is GIVEN or SCAN.
  * Errors: those of the stages; LEE_ERR_DATA when the wind is a record. */

@@ -39,6 +39,22 @@ static void put_station_level(lee_json *json, const lee_station *station,
     if (!isnan(station->bed)) {
         lee_json_put_number(json, "depth_m", at->depth);
     }
+    if (!isnan(station->bed) && isnan(at->depth)) {
+        lee_json_put_text(json, "depth_reason", "its bed is dry");
+    }
+    lee_json_open_list(json, "thresholds");
+    for (size_t i = 0; i < station->threshold_count; i++) {
+        const lee_threshold *threshold = &station->threshold[i];
+        const lee_reach reach = lee_threshold_reach(threshold, &at->level);
+        lee_json_open_object(json, NULL);
+        lee_json_put_number(json, "level_m", threshold->level);
+        lee_json_put_text(json, "side",
+                          threshold->is_below ? "below" : "above");
+        lee_json_put_flag(json, "is_reached", reach == LEE_REACH_VALUE);
+        lee_json_put_flag(json, "is_reached_in_range", reach != LEE_REACH_NOT);
+        lee_json_close(json);
+    }
+    lee_json_close(json);
     lee_json_close(json);
 }
 

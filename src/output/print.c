@@ -158,6 +158,16 @@ lee_cell lee_show_speed(const lee_printer *to, double speed) {
     return cell;
 }
 
+lee_cell lee_show_bare_direction(double radians) {
+    lee_cell cell;
+    const double degrees = fmod(rounded(radians * 180.0 / lee_pi, 0.1), 360.0);
+    const double turned = (degrees < 0.0 ? degrees + 360.0 : degrees) + 0.0;
+    const bool is_whole = fabs(turned - round(turned)) < 0.05;
+    (void)snprintf(cell.text, sizeof cell.text, "%.*f", is_whole ? 0 : 1,
+                   is_whole ? fmod(round(turned), 360.0) : turned);
+    return cell;
+}
+
 double lee_whole_degrees(double radians) {
     const double degrees = fmod(round(radians * 180.0 / lee_pi), 360.0);
     return (degrees < 0.0 ? degrees + 360.0 : degrees) + 0.0;

@@ -20,9 +20,9 @@ static lee_cell where(const lee_printer *to, const lee_wind_estimate *wind,
 }
 
 static void print_wind(const lee_printer *to, const lee_wind_estimate *wind) {
-    (void)fprintf(to->stream, "\nWind %s from %s\n",
+    (void)fprintf(to->stream, "\nWind %s from %s degrees\n",
                   lee_show_speed(to, wind->wind.speed).text,
-                  lee_show_direction(wind->wind.from).text);
+                  lee_show_bare_direction(wind->wind.from).text);
     lee_print_row(to, "10 m over water", "%s",
                   lee_show_speed(to, wind->speed).text);
     lee_print_row(to, "drag coefficient", "%.2f / 1000",
@@ -83,7 +83,8 @@ static void print_waters(const lee_printer *to, const lee_wind_estimate *wind) {
         }
         print_ends(to, wind, water);
     }
-    if (isnan(wind->cross_tilt_at)) {
+    const double least_shown = 0.0005; /* m: less reads 0.000 */
+    if (isnan(wind->cross_tilt_at) || wind->cross_tilt < least_shown) {
         lee_print_row(to, "cross-axis tilt", "none");
     } else {
         lee_print_row(to, "cross-axis tilt", "%s at %s",
@@ -106,6 +107,42 @@ static size_t name_width(const lee_problem *problem) {
     return width;
 }
 
+/* "above 101.650 m: reached". */
+static void print_reach(const lee_printer *to, const lee_threshold *threshold,
+                        const lee_ranged *level) {
+    const char *words = "not reached";
+    switch (lee_threshold_reach(threshold, level)) {
+    case LEE_REACH_NOT:
+        break;
+    case LEE_REACH_RANGE:
+        words = threshold->is_below ? "only by the low end of the range"
+                                    : "only by the high end of the range";
+        break;
+    case LEE_REACH_VALUE:
+        words = "reached";
+        break;
+    }
+    (void)fprintf(to->stream, "    %s %s: %s\n",
+                  threshold->is_below ? "below" : "above",
+                  lee_show_length(to, threshold->level).text, words);
+}
+
+/* "depth 1.850 m", over the station's own bed or the section's. */
+static lee_cell depth_of(const lee_printer *to, const lee_station *station,
+                         const lee_station_level *at) {
+    lee_cell cell;
+    if (isnan(station->bed)) {
+        (void)snprintf(cell.text, sizeof cell.text, "section depth %.40s",
+                       lee_show_length(to, at->section_depth).text);
+    } else if (isnan(at->depth)) {
+        (void)snprintf(cell.text, sizeof cell.text, "its bed is dry");
+    } else {
+        (void)snprintf(cell.text, sizeof cell.text, "depth %.40s",
+                       lee_show_length(to, at->depth).text);
+    }
+    return cell;
+}
+
 static void print_stations(const lee_printer *to, const lee_case *from,
                            const lee_wind_estimate *wind) {
     const lee_problem *problem = &from->problem;
@@ -117,16 +154,17 @@ static void print_stations(const lee_printer *to, const lee_case *from,
                   lee_datum_of(from));
     for (size_t i = 0; i < problem->station_count; i++) {
         const lee_station_level *at = &wind->station[i];
-        const bool has_bed = !isnan(problem->station[i].bed);
-        const double depth = has_bed ? at->depth : at->section_depth;
+        const lee_station *station = &problem->station[i];
         (void)fputs("  ", to->stream);
-        lee_print_padded(to, problem->station[i].name, width);
-        (void)fprintf(to->stream, "  %9s  %8s  %-20s  %s %s\n",
-                      lee_show_distance(to, problem->station[i].at).text,
+        lee_print_padded(to, station->name, width);
+        (void)fprintf(to->stream, "  %9s  %8s  %-20s  %s\n",
+                      lee_show_distance(to, station->at).text,
                       lee_show_bare_length(to, at->level.value).text,
                       lee_show_range_only(to, &at->level).text,
-                      has_bed ? "depth" : "section depth",
-                      lee_show_length(to, depth).text);
+                      depth_of(to, station, at).text);
+        for (size_t k = 0; k < station->threshold_count; k++) {
+            print_reach(to, &station->threshold[k], &at->level);
+        }
     }
 }
 
@@ -145,9 +183,10 @@ static void print_block(const lee_printer *to, const lee_case *from,
 
 static void print_line(const lee_printer *to, const lee_wind_estimate *wind) {
     (void)fprintf(
-        to->stream, "  %6s  %4.0f  %5.0f  %6s  %7s %-18s  %7s %-20s  %6s\n",
+        to->stream, "  %6s  %5s  %5.0f  %6s  %7s %-18s  %7s %-20s  %6s\n",
         lee_show_bare_speed(to, wind->wind.speed).text,
-        lee_whole_degrees(wind->wind.from), round(100.0 * wind->along) + 0.0,
+        lee_show_bare_direction(wind->wind.from).text,
+        round(100.0 * wind->along) + 0.0,
         wind->is_across ? "across"
                         : lee_show_bare_distance(to, wind->set_up_at).text,
         lee_show_bare_length(to, wind->set_up.value).text,
@@ -220,15 +259,105 @@ static const lee_wind_estimate *worst_at(const lee_steady_result *result,
 static void print_extreme(const lee_printer *to, const char *what,
                           const lee_wind_estimate *wind, size_t station) {
     const lee_ranged *level = &wind->station[station].level;
-    (void)fprintf(to->stream,
-                  "    %-8s %8s  %-20s  wind %s from %.0f degrees\n", what,
-                  lee_show_bare_length(to, level->value).text,
+    (void)fprintf(to->stream, "    %-8s %8s  %-20s  wind %s from %s degrees\n",
+                  what, lee_show_bare_length(to, level->value).text,
                   lee_show_range_only(to, level).text,
                   lee_show_speed(to, wind->wind.speed).text,
-                  lee_whole_degrees(wind->wind.from));
+                  lee_show_bare_direction(wind->wind.from).text);
 }
 
-/* Highest and lowest level of each station over all winds. */
+/* A threshold of a station, over all winds. */
+typedef struct crossing {
+    const lee_steady_result *result;
+    size_t station;
+    const lee_threshold *threshold;
+    bool is_scan; /* the winds go round */
+} crossing;
+
+/* Whether wind `index`, counted round, reaches the threshold so. */
+static bool does_reach(const crossing *at, size_t index, lee_reach reach) {
+    const lee_wind_estimate *wind =
+        &at->result->wind[index % at->result->count];
+    return lee_threshold_reach(at->threshold,
+                               &wind->station[at->station].level) == reach;
+}
+
+/* A line of bounded length, in parts: text takes no memory. */
+typedef struct parts {
+    size_t length;
+    char text[1024];
+} parts;
+
+static void add(parts *line, const char *text) {
+    const size_t rest = sizeof line->text - line->length;
+    const int more = snprintf(line->text + line->length, rest, "%.200s", text);
+    line->length += more > 0 && (size_t)more < rest ? (size_t)more : 0;
+}
+
+/* "22.0 m/s from 240", or of a scan "210 to 270". */
+static void add_winds(const lee_printer *to, const crossing *at, size_t first,
+                      size_t last, parts *line) {
+    const size_t count = at->result->count;
+    const lee_given_wind *one = &at->result->wind[first % count].wind;
+    const lee_given_wind *other = &at->result->wind[last % count].wind;
+    if (!at->is_scan) {
+        add(line, lee_show_speed(to, one->speed).text);
+        add(line, " from ");
+    }
+    add(line, lee_show_bare_direction(one->from).text);
+    if (first != last) {
+        add(line, " to ");
+        add(line, lee_show_bare_direction(other->from).text);
+    }
+}
+
+/* Adds the winds that reach so, those of a scan that follow each other as
+ * one; nothing when there are none. */
+static void add_reach(const lee_printer *to, const crossing *at,
+                      lee_reach reach, const char *words, parts *line) {
+    enum { SHOWN = 16 };
+    const size_t count = at->result->count;
+    size_t start = 0;
+    while (at->is_scan && start < count && does_reach(at, start, reach)) {
+        start++;
+    }
+    size_t shown = 0;
+    for (size_t i = start % count; i < start % count + count; i++) {
+        if (!does_reach(at, i, reach)) {
+            continue;
+        }
+        const size_t first = i;
+        while (at->is_scan && i + 1 < start % count + count &&
+               does_reach(at, i + 1, reach)) {
+            i++;
+        }
+        if (shown == 0) {
+            add(line, line->length > 0 ? "; " : "");
+            add(line, words);
+            add(line, at->is_scan ? " from " : " by ");
+        } else if (shown <= SHOWN) {
+            add(line, shown < SHOWN ? ", " : " degrees and others");
+        }
+        if (shown < SHOWN) {
+            add_winds(to, at, first, i, line);
+        }
+        shown++;
+    }
+    add(line, shown > 0 && shown <= SHOWN ? " degrees" : "");
+}
+
+static void print_crossing(const lee_printer *to, const crossing *at) {
+    parts line = {0};
+    add_reach(to, at, LEE_REACH_VALUE, "reached", &line);
+    add_reach(to, at, LEE_REACH_RANGE, "only within the range", &line);
+    lee_print_sentence(to, 6, "  ", "%s %s: %s",
+                       at->threshold->is_below ? "below" : "above",
+                       lee_show_length(to, at->threshold->level).text,
+                       line.length > 0 ? line.text : "not reached");
+}
+
+/* Highest and lowest level of each station over all winds, and which winds
+ * reach its thresholds. */
 static void print_station_extremes(const lee_printer *to, const lee_case *from,
                                    const lee_steady_result *result) {
     const lee_problem *problem = &from->problem;
@@ -243,13 +372,18 @@ static void print_station_extremes(const lee_printer *to, const lee_case *from,
                       lee_show_distance(to, problem->station[i].at).text);
         print_extreme(to, "highest", worst_at(result, i, 1.0), i);
         print_extreme(to, "lowest", worst_at(result, i, -1.0), i);
+        for (size_t k = 0; k < problem->station[i].threshold_count; k++) {
+            const crossing at = {result, i, &problem->station[i].threshold[k],
+                                 problem->wind.kind == LEE_WIND_SCAN};
+            print_crossing(to, &at);
+        }
     }
 }
 
 static void print_table(const lee_printer *to,
                         const lee_steady_result *result) {
     const char *unit = lee_length_unit(to);
-    static const char layout[] = "  %6s  %4s  %5s  %6s  %7s %-18s  %7s %-20s  "
+    static const char layout[] = "  %6s  %5s  %5s  %6s  %7s %-18s  %7s %-20s  "
                                  "%6s\n";
     (void)fputc('\n', to->stream);
     (void)fprintf(to->stream, layout, "wind", "from", "along", "lee at",
@@ -314,9 +448,8 @@ static void print_shared(const lee_printer *to, const shared_warning *seen) {
                        seen->count > 2 ? "s" : "");
     }
     lee_cell lead;
-    (void)snprintf(lead.text, sizeof lead.text,
-                   "from %.20s%.36s: ", lee_show_direction(seen->from).text,
-                   more.text);
+    (void)snprintf(lead.text, sizeof lead.text, "from %.10s degrees%.36s: ",
+                   lee_show_bare_direction(seen->from).text, more.text);
     lee_print_note(to, "- ", lead.text, seen->text);
 }
 
@@ -343,9 +476,9 @@ static void print_beside(const lee_printer *to, const lee_case *from,
                          const lee_steady_result *result) {
     const lee_wind_estimate *wind = &result->wind[highest(result)];
     if (result->count > 1) {
-        (void)fprintf(to->stream, "\nBeside it, for %s from %.0f degrees:",
+        (void)fprintf(to->stream, "\nBeside it, for %s from %s degrees:",
                       lee_show_speed(to, wind->wind.speed).text,
-                      lee_whole_degrees(wind->wind.from));
+                      lee_show_bare_direction(wind->wind.from).text);
     }
     const lee_formula_question asked = lee_ask_formulas(from, result, wind);
     lee_print_formulas(to, &asked);

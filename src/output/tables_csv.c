@@ -84,17 +84,55 @@ static void write_foot_of_head(FILE *out, const lee_notes *warnings) {
     comment(out, "caution", lee_caution());
 }
 
-/* A header "name_suffix [unit]", quoted where RFC 4180 asks for it. */
-static void write_header(FILE *out, const char *name, const char *suffix,
-                         const char *unit) {
-    const bool quoted =
-        strpbrk(name, ",\"\r\n;\t") != NULL || name[0] == '#' || name[0] == ' ';
-    (void)fputs(quoted ? ",\"" : ",", out);
-    for (const char *c = name; *c != '\0'; c++) {
+/* Text of a quoted field. */
+static void write_quoted(FILE *out, const char *text) {
+    for (const char *c = text; *c != '\0'; c++) {
         (void)fputs(*c == '"' ? "\"" : "", out);
         (void)fputc(*c, out);
     }
-    (void)fprintf(out, "%s [%s]%s", suffix, unit, quoted ? "\"" : "");
+}
+
+/* A header of a name and what follows it, quoted where RFC 4180 asks. */
+static void write_header(FILE *out, const char *name, const char *rest) {
+    const bool quoted =
+        strpbrk(name, ",\"\r\n;\t") != NULL || name[0] == '#' || name[0] == ' ';
+    (void)fputs(quoted ? ",\"" : ",", out);
+    write_quoted(out, name);
+    (void)fprintf(out, "%s%s", rest, quoted ? "\"" : "");
+}
+
+/* "NAME above 101.65 m" for each threshold. */
+static void write_threshold_headers(FILE *out, const lee_station *station) {
+    for (size_t i = 0; i < station->threshold_count; i++) {
+        const lee_threshold *threshold = &station->threshold[i];
+        char rest[64];
+        (void)snprintf(rest, sizeof rest, " %s %.10g m",
+                       threshold->is_below ? "below" : "above",
+                       threshold->level);
+        write_header(out, station->name, rest);
+    }
+}
+
+static const char *reach_word(lee_reach reach) {
+    switch (reach) {
+    case LEE_REACH_NOT:
+        return "no";
+    case LEE_REACH_RANGE:
+        return "range";
+    case LEE_REACH_VALUE:
+        return "yes";
+    }
+    return "";
+}
+
+/* All warnings of a wind in one field. */
+static void write_warnings(FILE *out, const lee_notes *warnings) {
+    (void)fputs(warnings->n > 0 ? ",\"" : ",", out);
+    for (size_t i = 0; i < warnings->n; i++) {
+        (void)fputs(i > 0 ? "; " : "", out);
+        write_quoted(out, warnings->text[i]);
+    }
+    (void)fputs(warnings->n > 0 ? "\"" : "", out);
 }
 
 /* A value to `decimals`; an empty field for NaN. */
@@ -225,15 +263,17 @@ static void write_steady_header(FILE *out, const lee_case *from) {
     }
     for (size_t i = 0; i < from->problem.station_count; i++) {
         const char *name = from->problem.station[i].name;
-        write_header(out, name, "", "m");
-        write_header(out, name, "_low", "m");
-        write_header(out, name, "_high", "m");
+        write_header(out, name, " [m]");
+        write_header(out, name, "_low [m]");
+        write_header(out, name, "_high [m]");
+        write_threshold_headers(out, &from->problem.station[i]);
     }
+    (void)fputs(",warnings", out);
     (void)fputc('\n', out);
 }
 
 static void write_steady_row(FILE *out, const lee_wind_estimate *wind,
-                             size_t stations) {
+                             const lee_problem *problem) {
     for (size_t k = 0; k < COLUMNS; k++) {
         double value;
         memcpy(&value, (const char *)wind + columns[k].offset, sizeof value);
@@ -241,12 +281,19 @@ static void write_steady_row(FILE *out, const lee_wind_estimate *wind,
         write_value(out, columns[k].is_angle ? in_degrees(value) : value,
                     columns[k].decimals);
     }
-    for (size_t i = 0; i < stations; i++) {
+    for (size_t i = 0; i < problem->station_count; i++) {
         const lee_ranged *level = &wind->station[i].level;
         write_next(out, level->value, 4);
         write_next(out, level->low, 4);
         write_next(out, level->high, 4);
+        const lee_station *station = &problem->station[i];
+        for (size_t k = 0; k < station->threshold_count; k++) {
+            (void)fprintf(
+                out, ",%s",
+                reach_word(lee_threshold_reach(&station->threshold[k], level)));
+        }
     }
+    write_warnings(out, &wind->warnings);
     (void)fputc('\n', out);
 }
 
@@ -256,8 +303,7 @@ static void write_steady(FILE *out, const table *what) {
     write_foot_of_head(out, &result->warnings);
     write_steady_header(out, what->from);
     for (size_t i = 0; i < result->count; i++) {
-        write_steady_row(out, &result->wind[i],
-                         what->from->problem.station_count);
+        write_steady_row(out, &result->wind[i], &what->from->problem);
     }
 }
 
@@ -277,10 +323,10 @@ static void write_run_header(FILE *out, const lee_case *from,
     }
     for (size_t i = 0; i < result->station_count; i++) {
         const char *name = from->problem.station[i].name;
-        write_header(out, name, "", "m");
+        write_header(out, name, " [m]");
         if (result->station[i].low != NULL) {
-            write_header(out, name, "_low", "m");
-            write_header(out, name, "_high", "m");
+            write_header(out, name, "_low [m]");
+            write_header(out, name, "_high [m]");
         }
     }
     (void)fputc('\n', out);

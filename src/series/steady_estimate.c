@@ -243,7 +243,7 @@ static lee_status tell_stations(const lee_problem *problem,
         out->level = point(level);
         out->section_depth =
             level - lee_profile_bed(&problem->lake.profile, station->at);
-        out->depth = level - station->bed;
+        out->depth = level > station->bed ? level - station->bed : NAN;
         bool falls_dry = isnan(level);
         for (size_t k = 1; k < all->count; k++) {
             const double other =
@@ -455,6 +455,24 @@ lee_status lee_estimate_steady(const lee_problem *problem,
         lee_steady_result_free(result);
     }
     return status;
+}
+
+static bool is_past(const lee_threshold *threshold, double level) {
+    if (isnan(level)) {
+        return threshold->is_below;
+    }
+    return threshold->is_below ? level < threshold->level
+                               : level > threshold->level;
+}
+
+lee_reach lee_threshold_reach(const lee_threshold *threshold,
+                              const lee_ranged *level) {
+    if (is_past(threshold, level->value)) {
+        return LEE_REACH_VALUE;
+    }
+    return is_past(threshold, threshold->is_below ? level->low : level->high)
+               ? LEE_REACH_RANGE
+               : LEE_REACH_NOT;
 }
 
 static void free_wind(lee_wind_estimate *wind) {

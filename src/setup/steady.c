@@ -90,7 +90,7 @@ static lee_status check_input(const lee_steady_input *in, lee_error *error) {
 }
 
 /* a along and across the axis on the segment behind row i, m. What rounding
- * leaves of a wind straight across is no wind along. */
+ * leaves of a wind straight across or along is none. */
 static void drive_at(const lee_steady_input *in, size_t i, double *along,
                      double *across) {
     const double bearing = in->profile->bearing[i];
@@ -100,7 +100,8 @@ static void drive_at(const lee_steady_input *in, size_t i, double *along,
     const double n = in->stress[1];
     const double forward = e * sin(bearing) + n * cos(bearing);
     *along = fabs(forward) > 1e-14 * hypot(e, n) ? per_stress * forward : 0.0;
-    *across = per_stress * fabs(e * cos(bearing) - n * sin(bearing));
+    const double sideways = fabs(e * cos(bearing) - n * sin(bearing));
+    *across = sideways > 1e-14 * hypot(e, n) ? per_stress * sideways : 0.0;
 }
 
 /* The axis as the solver sees it, from x = 0; mirrored on request. */

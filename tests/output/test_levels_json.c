@@ -91,6 +91,12 @@ static void a_wind_has_its_levels_with_ranges(void **state) {
     assert_near(number(station, "level_m"), 101.755, 1e-6);
     assert_pair(station, "range_m", 101.65, 101.89);
     assert_near(number(station, "section_depth_m"), 4.755, 1e-9);
+    json_t *threshold = item(station, "thresholds", 0);
+    assert_near(number(threshold, "level_m"), 101.8, 1e-9);
+    assert_string_equal(text(threshold, "side"), "above");
+    assert_true(json_is_false(json_object_get(threshold, "is_reached")));
+    assert_true(
+        json_is_true(json_object_get(threshold, "is_reached_in_range")));
     json_decref(root);
 }
 

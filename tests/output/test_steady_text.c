@@ -153,9 +153,9 @@ static void a_scan_is_a_table_and_its_worst_wind(void **state) {
     made.steady.count = 4;
     made.steady.wind = winds;
     const char *text = printed(&out, &made, LEE_UNITS_SI);
-    assert_contains(text, "    22.0    90     98   12.00    0.100 (0.310 to "
+    assert_contains(text, "    22.0     90     98   12.00    0.100 (0.310 to "
                           "0.550)");
-    assert_contains(text, "    22.0   270     98  across    0.100");
+    assert_contains(text, "    22.0    270     98  across    0.100");
     const char *block = strstr(text, "Highest set-up\n");
     assert_non_null(block);
     assert_contains(block, "Wind 22.0 m/s from 180 degrees\n");
@@ -214,6 +214,91 @@ static void a_scan_tells_the_extremes_of_each_station(void **state) {
     assert_contains(text, "highest   103.000  (102.000 to 104.000)  wind 22.0 "
                           "m/s from 270 degrees\n");
     assert_contains(text, "lowest        dry");
+    capture_free(&out);
+}
+
+/* Lee landing: 101.755 m, up to 101.89 m; thresholds above 101.8 m and below
+ * 100.9 m. */
+static void each_threshold_is_told_reached_or_not(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "    above 101.800 m: only by the high end of the "
+                          "range\n    below 100.900 m: not reached\n");
+    capture_free(&out);
+    made.threshold[0].level = 101.7;
+    text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "    above 101.700 m: reached\n");
+    capture_free(&out);
+}
+
+/* Eight winds round; those from 315, 0 and 45 degrees raise the landing over
+ * 101.8 m, the one from 90 degrees only its range. */
+static void a_scan_tells_which_directions_reach_a_threshold(void **state) {
+    (void)state;
+    static const double level[] = {102.0, 101.9, 101.7, 101.0,
+                                   101.0, 101.0, 101.0, 101.85};
+    hand_made made;
+    captured out;
+    make(&made);
+    lee_wind_estimate winds[8];
+    lee_station_level levels[8][2];
+    for (size_t i = 0; i < 8; i++) {
+        winds[i] = made.wind[0];
+        winds[i].wind.from = degrees(45.0 * (double)i);
+        levels[i][0] = made.level[0];
+        levels[i][1] = made.level[1];
+        levels[i][1].level =
+            (lee_ranged){level[i], level[i] - 0.05, level[i] + 0.15};
+        winds[i].station = levels[i];
+    }
+    made.steady.count = 8;
+    made.steady.wind = winds;
+    made.from.problem.wind.kind = LEE_WIND_SCAN;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "      above 101.800 m: reached from 315 to 45 "
+                          "degrees; only within the range");
+    assert_contains(text, "\n      from 90 degrees\n");
+    capture_free(&out);
+    made.from.problem.wind.kind = LEE_WIND_GIVEN;
+    text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "above 101.800 m: reached by 22.0 m/s from 0, 22.0 "
+                          "m/s from 45,");
+    capture_free(&out);
+}
+
+static void half_degrees_of_a_wind_are_shown(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    made.wind[0].wind.from = degrees(22.5);
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "\nWind 22.0 m/s from 22.5 degrees\n");
+    capture_free(&out);
+}
+
+static void a_station_above_the_water_is_told_dry(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    made.level[0].depth = NAN;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "(100.800 to 101.050)  its bed is dry\n");
+    capture_free(&out);
+}
+
+static void a_cross_tilt_below_the_last_digit_is_none(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    made.wind[0].cross_tilt = 1e-17;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "cross-axis tilt   none\n");
     capture_free(&out);
 }
 
@@ -286,6 +371,11 @@ int main(void) {
         cmocka_unit_test(a_scan_is_a_table_and_its_worst_wind),
         cmocka_unit_test(a_scan_names_the_lowest_set_down_too),
         cmocka_unit_test(a_scan_tells_the_extremes_of_each_station),
+        cmocka_unit_test(each_threshold_is_told_reached_or_not),
+        cmocka_unit_test(a_scan_tells_which_directions_reach_a_threshold),
+        cmocka_unit_test(half_degrees_of_a_wind_are_shown),
+        cmocka_unit_test(a_station_above_the_water_is_told_dry),
+        cmocka_unit_test(a_cross_tilt_below_the_last_digit_is_none),
         cmocka_unit_test(a_warning_of_many_winds_is_told_once),
         cmocka_unit_test(warnings_that_differ_in_words_are_told_apart),
     };

@@ -189,7 +189,29 @@ static void a_steady_table_has_a_row_a_wind(void **state) {
                           "-0.4300,-0.6000,-0.3200,0.0,"
                           "0.8420,0.6300,1.1500,0.0210,0.0,"
                           "100.9500,100.8000,101.0500,"
-                          "101.7550,101.6500,101.8900\n");
+                          "101.7550,101.6500,101.8900,range,no,\n");
+    assert_contains(text, ",Lee landing above 101.8 m,Lee landing below 100.9 "
+                          "m,warnings\n");
+}
+
+static void a_steady_row_carries_the_warnings_of_its_wind(void **state) {
+    (void)state;
+    hand_made made;
+    place here;
+    char text[8192];
+    make(&made);
+    lee_notes *notes = &made.wind[0].warnings;
+    assert_int_equal(lee_notes_add(notes, NULL, "12 m fall dry"), LEE_OK);
+    assert_int_equal(lee_notes_add(notes, NULL, "a \"sill\", told"), LEE_OK);
+    place_open(&here);
+    assert_int_equal(
+        lee_write_steady(here.file, false, &made.from, &made.steady, NULL),
+        LEE_OK);
+    read_back(&here, sizeof text, text);
+    place_close(&here);
+    lee_notes_free(notes);
+    assert_contains(text,
+                    ",range,no,\"12 m fall dry; a \"\"sill\"\", told\"\n");
 }
 
 static void a_file_that_exists_is_kept_unless_forced(void **state) {
@@ -311,6 +333,7 @@ int main(void) {
         cmocka_unit_test(a_name_with_commas_and_quotes_is_quoted),
         cmocka_unit_test(a_title_of_two_lines_stays_in_its_head_line),
         cmocka_unit_test(a_steady_table_has_a_row_a_wind),
+        cmocka_unit_test(a_steady_row_carries_the_warnings_of_its_wind),
         cmocka_unit_test(a_file_that_exists_is_kept_unless_forced),
         cmocka_unit_test(another_ending_than_csv_is_refused),
         cmocka_unit_test(asking_for_a_target_leaves_nothing),

@@ -284,6 +284,38 @@ static void a_depth_uncertainty_that_empties_the_lake_is_refused(void **state) {
     lee_problem_free(&problem);
 }
 
+static lee_reach reach_of(double level, bool is_below, lee_ranged ranged) {
+    const lee_threshold threshold = {level, is_below};
+    return lee_threshold_reach(&threshold, &ranged);
+}
+
+static void a_threshold_is_reached_by_value_by_range_or_not(void **state) {
+    (void)state;
+    const lee_ranged level = {1.0, 0.8, 1.3};
+    const lee_ranged dry = {NAN, NAN, 0.4};
+    assert_int_equal(reach_of(0.9, false, level), LEE_REACH_VALUE);
+    assert_int_equal(reach_of(1.2, false, level), LEE_REACH_RANGE);
+    assert_int_equal(reach_of(1.4, false, level), LEE_REACH_NOT);
+    assert_int_equal(reach_of(1.1, true, level), LEE_REACH_VALUE);
+    assert_int_equal(reach_of(0.9, true, level), LEE_REACH_RANGE);
+    assert_int_equal(reach_of(0.7, true, level), LEE_REACH_NOT);
+    assert_int_equal(reach_of(0.1, true, dry), LEE_REACH_VALUE);
+    assert_int_equal(reach_of(0.5, false, dry), LEE_REACH_NOT);
+}
+
+static void a_station_bed_above_the_water_has_no_depth(void **state) {
+    (void)state;
+    lee_problem problem = even_lake(length, depth);
+    problem.station[1].bed = 0.5;
+    blow(&problem, 5.0, from_west, NAN);
+    lee_steady_result result;
+    assert_int_equal(lee_estimate_steady(&problem, &result, NULL), LEE_OK);
+    assert_true(isnan(result.wind[0].station[1].depth));
+    assert_near(result.wind[0].cross_tilt, 0.0, 0.0); /* it blows along */
+    lee_steady_result_free(&result);
+    lee_problem_free(&problem);
+}
+
 static void check_and_run_refuse_it_with_the_same_words(void **state) {
     (void)state;
     lee_problem problem = even_lake(length, depth);
@@ -544,6 +576,8 @@ int main(void) {
         cmocka_unit_test(a_still_water_of_two_levels_says_which_is_used),
         cmocka_unit_test(a_station_that_may_fall_dry_has_no_low_end),
         cmocka_unit_test(check_and_run_refuse_it_with_the_same_words),
+        cmocka_unit_test(a_threshold_is_reached_by_value_by_range_or_not),
+        cmocka_unit_test(a_station_bed_above_the_water_has_no_depth),
         cmocka_unit_test(a_held_level_that_is_a_series_is_told),
         cmocka_unit_test(each_path_takes_still_water_at_the_begin_of_a_run),
         cmocka_unit_test(a_bound_that_parts_a_water_keeps_its_lee_end),
