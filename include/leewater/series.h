@@ -71,8 +71,10 @@ typedef struct lee_wind_source {
     size_t directions;
     lee_storm storm;
     lee_wind_record record;
-    size_t record_count; /* files it was read from, joined when several */
-    char **record_path;  /* [record_count] as named, beside the case    */
+    size_t record_count;   /* files it was read from, joined when several */
+    char **record_path;    /* [record_count] as named, beside the case    */
+    lee_notes record_told; /* what was read of NetCDF files: variables, station,
+                              grid point                                  */
     lee_gap_rule gap;
 } lee_wind_source;
 

@@ -195,8 +195,10 @@ typedef struct lee_wind_netcdf {
     int64_t utc_offset; /* s east of UTC of a reference date without a zone;
                            UTC when not given, as the conventions say      */
     size_t missing_count;
-    const double *missing; /* [missing_count] stored values that mean
+    const double *missing;    /* [missing_count] stored values that mean
                               "missing", beside what the file says itself   */
+    bool may_lack_quantities; /* pressure to ice, although named, may be absent:
+                                 for one of several files                   */
     lee_stamp stamp;
     bool is_apart; /* read in a child process with limits on time and memory:
                       damaged NetCDF-4 files can crash the NetCDF library or

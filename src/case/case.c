@@ -72,7 +72,7 @@ static lee_case_draft empty_draft(void) {
                  .start = no_level,
                  .end = no_level},
         .water_temperature = NAN,
-        .wind = {.given = {NAN, NAN, NAN} },
+        .wind = {.given = {NAN, NAN, NAN},  .longitude = NAN, .latitude = NAN},
         .drag_cap = NAN,
         .result = {.problem = lee_problem_default()  },
     };
@@ -108,8 +108,9 @@ static void read_draft(lee_case_reader *reader, lee_case_draft *draft) {
 }
 
 static lee_status read_tree(const char *path, const lee_yaml_node *root,
-                            lee_case *problem_case, lee_error *error) {
-    lee_case_reader reader = {.path = path};
+                            bool is_apart, lee_case *problem_case,
+                            lee_error *error) {
+    lee_case_reader reader = {.path = path, .is_apart = is_apart};
     lee_case_draft draft = empty_draft();
     draft.root = root;
     draft.result.path = lee_text_copy(path);
@@ -131,15 +132,25 @@ static lee_status read_tree(const char *path, const lee_yaml_node *root,
     return LEE_OK;
 }
 
-lee_status lee_case_read(const char *path, lee_case *problem_case,
-                         lee_error *error) {
+static lee_status read_case(const char *path, bool is_apart,
+                            lee_case *problem_case, lee_error *error) {
     lee_yaml_node *root = NULL;
     lee_status status = lee_yaml_read(path, &root, error);
     if (status == LEE_OK) {
-        status = read_tree(path, root, problem_case, error);
+        status = read_tree(path, root, is_apart, problem_case, error);
     }
     lee_yaml_free(root);
     return status;
+}
+
+lee_status lee_case_read(const char *path, lee_case *problem_case,
+                         lee_error *error) {
+    return read_case(path, false, problem_case, error);
+}
+
+lee_status lee_case_read_apart(const char *path, lee_case *problem_case,
+                               lee_error *error) {
+    return read_case(path, true, problem_case, error);
 }
 
 void lee_case_free(lee_case *problem_case) {

@@ -37,6 +37,7 @@ typedef struct lee_axis_draft {
 typedef struct lee_column_draft {
     const char *column; /* NULL when not named */
     const char *unit;
+    const char *file; /* another one than the record's; NetCDF */
 } lee_column_draft;
 
 typedef enum lee_wind_gaps { LEE_GAPS_ERROR, LEE_GAPS_SPLIT } lee_wind_gaps;
@@ -55,6 +56,11 @@ typedef struct lee_wind_draft {
     lee_given_wind given; /* speed and direction outright; NaN */
     size_t directions;    /* of a scan; 0 */
     bool has_storm;
+    const char *station; /* of NetCDF, like the next three; NULL */
+    const char *calendar;
+    double longitude; /* degrees; NaN when no position is given */
+    double latitude;
+    lee_grid_method method;
 } lee_wind_draft;
 
 /* Texts are borrowed from the tree, except in `result` and where said. */
@@ -102,6 +108,19 @@ void lee_case_finish_wind(lee_case_reader *reader, lee_case_draft *draft);
 void lee_case_finish_exposure(lee_case_reader *reader, lee_case_draft *draft);
 void lee_case_finish_drag(lee_case_reader *reader, lee_case_draft *draft);
 void lee_case_finish_stations(lee_case_reader *reader, lee_case_draft *draft);
+
+/* Is a file of the record NetCDF, by its ending? (wind_netcdf.c) */
+bool lee_case_is_netcdf(const char *path);
+
+/* Keys that only NetCDF or only CSV can have. (wind_netcdf.c) */
+void lee_case_check_netcdf(lee_case_reader *reader,
+                           const lee_case_draft *draft);
+
+/* Reads a NetCDF file of the record. False after a problem.
+ * (wind_netcdf.c) */
+bool lee_case_read_netcdf(lee_case_reader *reader, lee_case_draft *draft,
+                          const lee_yaml_node *node, const char *path,
+                          lee_wind_record *record);
 
 /* Combinations that need no other file. */
 void lee_case_check_lake(lee_case_reader *reader, lee_case_draft *draft);

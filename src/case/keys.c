@@ -136,6 +136,7 @@ static const lee_key_section lake_keys =
 static const lee_key column_rows[] = {
     KEY("column", lee_key_borrow, lee_column_draft, column, REQUIRED),
     KEY("unit", lee_key_borrow, lee_column_draft, unit, OPTIONAL),
+    KEY("file", lee_key_borrow, lee_column_draft, file, OPTIONAL),
 };
 static const lee_key_section column_keys = SECTION(column_rows, NULL, NULL);
 
@@ -216,6 +217,17 @@ static const lee_key stability_rows[] = {
 static const lee_key_section stability_keys =
     SECTION(stability_rows, NULL, NULL);
 
+static const char *const grid_methods[] = {"nearest", "bilinear", NULL};
+static const lee_key position_rows[] = {
+    KEY("lon", lee_key_quantity, lee_case_draft, wind.longitude, REQUIRED,
+        BETWEEN("degree", -180.0, 360.0)),
+    KEY("lat", lee_key_quantity, lee_case_draft, wind.latitude, REQUIRED,
+        BETWEEN("degree", -90.0, 90.0)),
+    KEY("method", lee_key_choice, lee_case_draft, wind.method, OPTIONAL,
+        .words = grid_methods),
+};
+static const lee_key_section position_keys = SECTION(position_rows, NULL, NULL);
+
 static const char *const stamps[] = {"instant", "start", "middle", "end", NULL};
 static const char *const height_methods[] = {"log", "power", "factor", NULL};
 static const char *const gap_rules[] = {"error", "split", NULL};
@@ -241,6 +253,9 @@ static const lee_key wind_rows[] = {
     COLUMN("water_temperature", LEE_WIND_WATER_TEMPERATURE),
     COLUMN("humidity", LEE_WIND_HUMIDITY),
     COLUMN("ice", LEE_WIND_ICE),
+    KEY("station", lee_key_borrow, lee_case_draft, wind.station, OPTIONAL),
+    INSIDE("position", OPTIONAL, position_keys),
+    KEY("calendar", lee_key_borrow, lee_case_draft, wind.calendar, OPTIONAL),
     KEY("stamp", lee_key_choice, lee_case_draft, wind.stamp, OPTIONAL,
         .words = stamps),
     KEY("missing", lee_key_missing, lee_case_draft, wind, OPTIONAL),
@@ -281,6 +296,7 @@ static const lee_key wind_rows[] = {
                BETWEEN("1", 0.5, 2.0), .words = stability_methods),
 };
 static const lee_key_pair wind_excluded[] = {
+    {"station",          "position"  },
     {"record",           "winds"     },
     {"record",           "directions"},
     {"record",           "duration"  },
@@ -303,6 +319,9 @@ static const lee_key_pair wind_excluded[] = {
     {NULL,               NULL        },
 };
 static const lee_key_pair wind_needs[] = {
+    {"station",           "record"       },
+    {"position",          "record"       },
+    {"calendar",          "record"       },
     {"time",              "record"       },
     {"date",              "record"       },
     {"date",              "clock"        },

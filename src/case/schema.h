@@ -17,6 +17,7 @@ typedef struct lee_case_reader {
     char where[128];              /* "lake.axis"; empty at the top  */
     const lee_yaml_node *mapping; /* the mapping that `where` names */
     bool has_no_room;
+    bool is_apart; /* NetCDF files are read in a child process */
     lee_case_problems problems;
     lee_notes inputs; /* paths of the files that were named, owned */
 } lee_case_reader;

@@ -4,6 +4,7 @@
 #include <stdlib.h>
 #include <string.h>
 
+#include "base/cf_time.h"
 #include "base/text.h"
 #include "case/draft.h"
 
@@ -17,6 +18,9 @@ static void check_column_unit(lee_case_reader *reader,
                               const lee_yaml_node *node, const lee_key *key,
                               const char *unit) {
     const char *wanted = lee_wind_column_unit((lee_wind_column)key->stands_for);
+    if (key->stands_for == LEE_WIND_TIME && lee_cf_is_clock(unit)) {
+        return; /* of NetCDF: judged with the record */
+    }
     if (wanted == NULL) {
         lee_key_problem(reader, node, key->name, "takes no unit");
         return;
@@ -205,6 +209,8 @@ void lee_case_check_wind(lee_case_reader *reader, lee_case_draft *draft) {
     lee_case_check_exposure(reader, draft);
     if (lee_yaml_get(wind, "record") == NULL) {
         check_given(reader, draft, wind);
+    } else {
+        lee_case_check_netcdf(reader, draft);
     }
     if (draft->wind.century % 100 != 0) {
         lee_key_problem(reader, lee_yaml_get(wind, "century"), "wind.century",
@@ -249,12 +255,6 @@ static lee_wind_csv csv_of(const lee_wind_draft *draft) {
     return csv;
 }
 
-static bool ends_with(const char *text, const char *ending) {
-    const size_t length = strlen(text);
-    const size_t tail = strlen(ending);
-    return length >= tail && lee_text_same(text + length - tail, ending);
-}
-
 /* The place of the i-th file of the record in the case. */
 static const lee_yaml_node *record_node(const lee_case_draft *draft,
                                         size_t index) {
@@ -263,14 +263,11 @@ static const lee_yaml_node *record_node(const lee_case_draft *draft,
 }
 
 /* Reads one file of the record by its ending. False after a problem. */
-static bool read_file(lee_case_reader *reader, const lee_case_draft *draft,
+static bool read_file(lee_case_reader *reader, lee_case_draft *draft,
                       const lee_yaml_node *node, const char *path,
                       lee_wind_record *record) {
-    if (ends_with(path, ".nc")) {
-        lee_key_problem(reader, node, "wind.record",
-                        "is a NetCDF file, which this version does not read; "
-                        "write the series of one point to CSV");
-        return false;
+    if (lee_case_is_netcdf(path)) {
+        return lee_case_read_netcdf(reader, draft, node, path, record);
     }
     lee_wind_csv csv = csv_of(&draft->wind);
     csv.may_lack_quantities = draft->wind.record_count > 1;

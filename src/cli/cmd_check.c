@@ -32,7 +32,7 @@ lee_status cmd_check(int argc, char *argv[], lee_error *error) {
         return status;
     }
     lee_case from = {0};
-    status = lee_case_read(asked.case_path, &from, error);
+    status = lee_case_read_apart(asked.case_path, &from, error);
     if (status == LEE_OK) {
         status = check_case(&asked, &from, error);
     }

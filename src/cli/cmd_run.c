@@ -113,7 +113,7 @@ lee_status cmd_run(int argc, char *argv[], lee_error *error) {
     lee_case from = {0};
     status = check_run_choice(&asked, &choice, error);
     if (status == LEE_OK) {
-        status = lee_case_read(asked.case_path, &from, error);
+        status = lee_case_read_apart(asked.case_path, &from, error);
     }
     if (status == LEE_OK) {
         status = check_target(&choice.output, &from, error);

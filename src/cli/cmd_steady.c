@@ -85,7 +85,7 @@ static lee_status estimate(const request *asked, const other_wind *other,
                            const output_choice *output, lee_error *error) {
     outcome out = {0};
     const delivery results = {&out, write_levels, show_levels};
-    lee_status status = lee_case_read(asked->case_path, &out.from, error);
+    lee_status status = lee_case_read_apart(asked->case_path, &out.from, error);
     if (status == LEE_OK) {
         status = check_target(output, &out.from, error);
     }

@@ -143,6 +143,9 @@ static void put_record(lee_json *json, const lee_case *from,
         lee_json_put_text(json, NULL, from->problem.wind.record_path[i]);
     }
     lee_json_close(json);
+    if (from->problem.wind.record_told.n > 0) {
+        lee_json_put_notes(json, "read", &from->problem.wind.record_told);
+    }
     lee_json_put_text(json, "stamp",
                       stamp_name(from->problem.wind.record.stamp));
     lee_json_put_count(json, "samples", record->samples);

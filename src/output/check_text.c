@@ -203,6 +203,10 @@ static void print_record(const lee_printer *to, const lee_case *from,
     const lee_wind_check *record = &check->record;
     const lee_wind_source *wind = &from->problem.wind;
     print_files(to, wind);
+    for (size_t i = 0; i < wind->record_told.n; i++) {
+        lee_print_row(to, i == 0 ? "read" : "", "%s",
+                      wind->record_told.text[i]);
+    }
     lee_print_row(to, "samples", "%zu, %s", record->samples,
                   stamp_name(wind->record.stamp));
     lee_print_row(to, "from, to", "%s, %s", lee_show_time(record->first).text,

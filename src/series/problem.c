@@ -48,6 +48,7 @@ void lee_problem_free(lee_problem *problem) {
         free(problem->wind.record_path[i]);
     }
     free(problem->wind.record_path);
+    lee_notes_free(&problem->wind.record_told);
     lee_wind_record_free(&problem->wind.record);
     lee_exposure_free(&problem->exposure);
     lee_drag_free(&problem->drag);

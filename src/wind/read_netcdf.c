@@ -210,13 +210,13 @@ static lee_status tell_variable(const reading *r, const lee_wind_series *s,
         status = lee_notes_add(
             r->told, error, "%s from '%s'%s%s%s%s%s%s",
             lee_wind_column_name(s->of.column), s->of.variable->name,
+            other != NULL ? " of " : "", other != NULL ? other : "",
             is_own || said != NULL ? " in " : "",
             is_own         ? unit
             : said != NULL ? said
                            : "",
             is_own || said == NULL ? "" : ", as the case says",
-            s->of.is_towards ? ", which the wind blows to" : "",
-            other != NULL ? " of " : "", other != NULL ? other : "");
+            s->of.is_towards ? ", which the wind blows to" : "");
     }
     free(unit);
     return status;

@@ -239,12 +239,6 @@ static void a_century_is_whole(void **state) {
                 "century such as 1900");
 }
 
-static void a_record_in_netcdf_is_refused_plainly(void **state) {
-    assert_told(state, LAKE "wind: {record: storm.nc}\n",
-                "a.yaml:4:16: 'wind.record' is a NetCDF file, which this "
-                "version does not read; write the series of one point to CSV");
-}
-
 static void the_surface_is_water_or_land(void **state) {
     static const case_slip slips[] = {
         SLIP(LAKE "wind: {speed: 1 m/s, from: 1 degree, over: ice}\n",
@@ -372,7 +366,6 @@ int main(void) {
         CASE_TEST(one_missing_code_needs_no_list),
         CASE_TEST(a_direction_called_variable_is_read),
         CASE_TEST(a_century_is_whole),
-        CASE_TEST(a_record_in_netcdf_is_refused_plainly),
         CASE_TEST(the_surface_is_water_or_land),
         CASE_TEST(a_wind_over_water_is_the_default),
         CASE_TEST(a_height_factor_goes_with_its_method),

@@ -78,8 +78,8 @@ static void each_file_that_cannot_be_read_is_told_at_its_place(void **state) {
         state, LAKE "wind: {record: [x.csv, b.csv, y.nc]}\n", LEE_ERR_FILE,
         "x.csv: cannot be opened: No such file or directory (named at "
         "a.yaml:4:17)\n"
-        "a.yaml:4:31: 'wind.record' is a NetCDF file, which this version does "
-        "not read; write the series of one point to CSV");
+        "y.nc: cannot be opened: No such file or directory (named at "
+        "a.yaml:4:31)");
 }
 
 static void a_list_of_files_is_neither_empty_nor_repeats_one(void **state) {

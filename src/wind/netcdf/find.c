@@ -311,6 +311,10 @@ lee_status lee_wind_variable_find(const lee_netcdf *file,
                                   lee_wind_variable *found, lee_error *error) {
     const char *name = how->column[column].name;
     *found = (lee_wind_variable){.file = file, .column = column};
+    if (column >= LEE_WIND_PRESSURE && how->may_lack_quantities &&
+        name != NULL && lee_netcdf_find(file, name) == NULL) {
+        return LEE_OK;
+    }
     lee_status status =
         name != NULL ? by_name(file, name, &found->variable, error)
                      : by_standard_name(file, column, &found->variable, error);
