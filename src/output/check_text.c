@@ -246,9 +246,9 @@ static void print_given(const lee_printer *to, const lee_wind_source *wind) {
     for (size_t i = 0; i < wind->given_count; i++) {
         const lee_given_wind *given = &wind->given[i];
         const bool lasts = !isnan(given->duration);
-        lee_print_row(to, "given", "%s from %s%s%s",
+        lee_print_row(to, "given", "%s from %s degrees%s%s",
                       lee_show_speed(to, given->speed).text,
-                      lee_show_direction(given->from).text,
+                      lee_show_bare_direction(given->from).text,
                       lasts ? " for " : "",
                       lasts ? lee_show_duration(given->duration).text : "");
     }

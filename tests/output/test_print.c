@@ -112,6 +112,16 @@ static void directions_stay_below_a_full_turn(void **state) {
     assert_string_equal(lee_show_direction(-90.0 * degree).text, "270 degrees");
 }
 
+static void directions_that_were_given_keep_their_tenth(void **state) {
+    (void)state;
+    const double degree = acos(-1.0) / 180.0;
+    assert_string_equal(lee_show_bare_direction(22.5 * degree).text, "22.5");
+    assert_string_equal(lee_show_bare_direction(67.5 * degree).text, "67.5");
+    assert_string_equal(lee_show_bare_direction(240.0 * degree).text, "240");
+    assert_string_equal(lee_show_bare_direction(359.97 * degree).text, "0");
+    assert_string_equal(lee_show_bare_direction(-0.5 * degree).text, "359.5");
+}
+
 static void durations_take_the_two_units_that_tell(void **state) {
     (void)state;
     assert_string_equal(lee_show_duration(35.0).text, "35 s");
@@ -262,6 +272,7 @@ int main(void) {
         cmocka_unit_test(areas_and_volumes_take_the_units_of_the_trade),
         cmocka_unit_test(speed_is_shown_in_metres_per_second_or_miles_per_hour),
         cmocka_unit_test(directions_stay_below_a_full_turn),
+        cmocka_unit_test(directions_that_were_given_keep_their_tenth),
         cmocka_unit_test(durations_take_the_two_units_that_tell),
         cmocka_unit_test(durations_round_across_the_hour),
         cmocka_unit_test(width_counts_characters_not_bytes),
