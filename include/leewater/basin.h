@@ -96,6 +96,7 @@ typedef struct lee_lake {
                                      not given                              */
     lee_level_series still_water; /* m above the datum                      */
     double altitude;              /* m above sea, for air pressure; NaN     */
+    double datum_altitude;        /* m above sea of the datum; NaN          */
     double water_density;         /* kg m-3                                 */
     double gravity;               /* m s-2                                  */
     lee_profile profile;

@@ -1,9 +1,10 @@
-/* output.h - results as text, JSON and CSV. All of them carry units, datum,
- * method and caution. */
+/* output.h - results as text, JSON, CSV and NetCDF. All of them carry units,
+ * datum, method and caution. */
 #ifndef LEEWATER_OUTPUT_H
 #define LEEWATER_OUTPUT_H
 
 #include <stdbool.h>
+#include <stdint.h>
 #include <stdio.h>
 
 #include "leewater/case.h"
@@ -63,23 +64,35 @@ lee_status lee_json_estimate(FILE *stream, const lee_case *from,
 lee_status lee_json_drag(FILE *stream, const lee_drag_table *table,
                          lee_error *error);
 
-/* Writes results as CSV with a commented head (method, datum, caution), whole
- * or not at all: to a temporary name beside the target, synced, renamed. "-"
- * is stdout. An existing file needs `force`; anything but a regular or a new
- * file is refused, and so is each file that the case was read from, under
- * whatever name. `with_wind` adds the wind to a series; low and high stand
- * beside a level when they were kept; `spin-up` is 1 at the times that still
- * feel the start at rest, else 0.
- * Errors: LEE_ERR_ARGUMENT for an ending other than .csv; LEE_ERR_FILE. */
-lee_status lee_write_steady(const char *path, bool force, const lee_case *from,
-                            const lee_steady_result *result, lee_error *error);
-lee_status lee_write_run(const char *path, bool force, bool with_wind,
-                         const lee_case *from, const lee_run_result *result,
-                         lee_error *error);
+/* A file that results go to. Borrows its path. */
+typedef struct lee_target {
+    const char *path; /* "-": CSV on stdout */
+    bool force;       /* replace a file that exists */
+    bool with_wind;   /* CSV of a run: add the wind; NetCDF always holds it */
+    int64_t date;     /* s since 1970: when it is written, for the history of
+                         a NetCDF file; all else depends on the results only */
+} lee_target;
 
-/* Whether the two functions above could write to `path`, without leaving
+/* Writes results by the ending of the file, whole or not at all: to a
+ * temporary name beside the target, synced, renamed. An existing file needs
+ * `force`; anything but a regular or a new file is refused, and so is a file
+ * that the case reads.
+ *
+ *   .csv  a table with a commented head (method, datum, caution). Low and high
+ *         stand beside a level when they were kept; `spin-up` is 1 at the
+ *         times that still feel the start at rest, else 0
+ *   .nc   NetCDF by CF-1.6 and ACDD-1.3 (docs/formats.md). A case without a
+ *         station is LEE_ERR_DATA. Not thread-safe, like NetCDF-C
+ *
+ * Errors: LEE_ERR_ARGUMENT for another ending; LEE_ERR_FILE, LEE_ERR_MEMORY.*/
+lee_status lee_write_steady(const lee_target *target, const lee_case *from,
+                            const lee_steady_result *result, lee_error *error);
+lee_status lee_write_run(const lee_target *target, const lee_case *from,
+                         const lee_run_result *result, lee_error *error);
+
+/* Whether the two functions above could write there, without leaving
  * anything: ask before a long run. Errors: theirs. */
-lee_status lee_check_target(const char *path, bool force, const lee_case *from,
+lee_status lee_check_target(const lee_target *target, const lee_case *from,
                             lee_error *error);
 
 #endif

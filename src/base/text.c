@@ -115,6 +115,40 @@ static size_t utf8_read(size_t room, const char bytes[], int32_t *point) {
     return 0;
 }
 
+char *lee_text_mended(const char *string) {
+    lee_text mended = {0};
+    lee_text_add(&mended, "%s", "");
+    while (*string != '\0') {
+        int32_t point = 0;
+        const size_t read = utf8_read(strnlen(string, 4), string, &point);
+        if (read == 0) {
+            lee_text_add(&mended, "\xEF\xBF\xBD"); /* U+FFFD */
+        } else {
+            lee_text_add(&mended, "%.*s", (int)read, string);
+        }
+        string += read > 0 ? read : 1;
+    }
+    if (mended.has_failed) {
+        lee_text_free(&mended);
+    }
+    return mended.bytes;
+}
+
+size_t lee_text_fits(const char *string, size_t room) {
+    size_t fitting = 0;
+    while (string[fitting] != '\0') {
+        int32_t point = 0;
+        const char *at = string + fitting;
+        const size_t read = utf8_read(strnlen(at, 4), at, &point);
+        const size_t width = read > 0 ? read : 1;
+        if (fitting + width > room) {
+            break;
+        }
+        fitting += width;
+    }
+    return fitting;
+}
+
 /* Control characters, and those that turn the direction of text or end a
  * line: a message shows what it holds. */
 static bool is_unprintable(int32_t point) {

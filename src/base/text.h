@@ -33,6 +33,14 @@ enum { LEE_SHOWN = 48 }; /* room for shown text */
  * bytes and broken UTF-8 as '?', "..." when cut. Returns shown. */
 char *lee_text_show(size_t length, const char bytes[], char shown[LEE_SHOWN]);
 
+/* Copy in which bytes that are not UTF-8 are U+FFFD; NULL without memory.
+ * free() it. */
+char *lee_text_mended(const char *string);
+
+/* Bytes of the longest beginning of a string of UTF-8 that has at most `room`
+ * bytes and ends with a whole character. */
+size_t lee_text_fits(const char *string, size_t room);
+
 /* The word of words[count] nearest to `word` (edit distance, letters of either
  * case alike), or NULL when none is near: more than a third of its letters,
  * at least 1 and at most 3, would have to change. */

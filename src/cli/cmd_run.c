@@ -11,25 +11,22 @@
 
 /* What to leave out or to add. */
 typedef struct run_choice {
-    output_choice output;
+    lee_target output;
     bool has_no_range;
     bool has_no_error;
     bool with_range; /* columns of low and high */
-    bool with_wind;
 } run_choice;
 
 /* A run and what it is written with. */
 typedef struct outcome {
     const lee_case *from;
-    bool with_wind;
     lee_run_result result;
 } outcome;
 
-static lee_status write_levels(const void *what, const output_choice *output,
+static lee_status write_levels(const void *what, const lee_target *output,
                                lee_error *error) {
     const outcome *out = what;
-    return lee_write_run(output->path, output->force, out->with_wind, out->from,
-                         &out->result, error);
+    return lee_write_run(output, out->from, &out->result, error);
 }
 
 static lee_status show_levels(const void *what, const request *asked,
@@ -43,7 +40,7 @@ static lee_status show_levels(const void *what, const request *asked,
 static lee_status run_case(const request *asked, const run_choice *choice,
                            const lee_case *from, lee_error *error) {
     progress at;
-    outcome out = {.from = from, .with_wind = choice->with_wind};
+    outcome out = {.from = from};
     const delivery results = {&out, write_levels, show_levels};
     lee_run_options options = lee_run_options_default();
     options.has_range = !choice->has_no_range;
@@ -69,14 +66,14 @@ static lee_status run_case(const request *asked, const run_choice *choice,
     return status;
 }
 
-static lee_status check_run_choice(const request *asked,
-                                   const run_choice *choice, lee_error *error) {
+static lee_status check_run_choice(const request *asked, run_choice *choice,
+                                   lee_error *error) {
     const bool has_file = choice->output.path != NULL;
     if (choice->with_range && choice->has_no_range) {
         return lee_fail(error, LEE_ERR_ARGUMENT,
                         "--range and --no-range exclude each other");
     }
-    if ((choice->with_range || choice->with_wind) && !has_file) {
+    if ((choice->with_range || choice->output.with_wind) && !has_file) {
         return lee_fail(error, LEE_ERR_ARGUMENT,
                         "--%s adds columns to a file: name it with -o",
                         choice->with_range ? "range" : "with-wind");
@@ -87,14 +84,15 @@ static lee_status check_run_choice(const request *asked,
 lee_status cmd_run(int argc, char *argv[], lee_error *error) {
     run_choice choice = {0};
     const option options[] = {
-        text_option("o,output", "FILE", "also write the levels: a .csv, or -",
+        text_option("o,output", "FILE",
+                    "also write the levels: a .csv or .nc; - is CSV",
                     &choice.output.path),
         flag_option("force", "replace FILE, unless the case reads it",
                     &choice.output.force),
         flag_option("range", "in FILE: low and high beside each level",
                     &choice.with_range),
         flag_option("with-wind", "in FILE: the wind at 10 m over water",
-                    &choice.with_wind),
+                    &choice.output.with_wind),
         flag_option("no-range", "faster: without the range",
                     &choice.has_no_range),
         flag_option("no-error", "faster: without the own numerical error",

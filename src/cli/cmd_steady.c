@@ -65,11 +65,10 @@ typedef struct outcome {
     lee_steady_result result;
 } outcome;
 
-static lee_status write_levels(const void *what, const output_choice *output,
+static lee_status write_levels(const void *what, const lee_target *output,
                                lee_error *error) {
     const outcome *out = what;
-    return lee_write_steady(output->path, output->force, &out->from,
-                            &out->result, error);
+    return lee_write_steady(output, &out->from, &out->result, error);
 }
 
 static lee_status show_levels(const void *what, const request *asked,
@@ -82,7 +81,7 @@ static lee_status show_levels(const void *what, const request *asked,
 }
 
 static lee_status estimate(const request *asked, const other_wind *other,
-                           const output_choice *output, lee_error *error) {
+                           const lee_target *output, lee_error *error) {
     outcome out = {0};
     const delivery results = {&out, write_levels, show_levels};
     lee_status status = lee_case_read_apart(asked->case_path, &out.from, error);
@@ -105,7 +104,7 @@ static lee_status estimate(const request *asked, const other_wind *other,
 
 lee_status cmd_steady(int argc, char *argv[], lee_error *error) {
     other_wind other = {.speed = NAN, .from = NAN, .duration = NAN};
-    output_choice output = {0};
+    lee_target output = {0};
     const option options[] = {
         positive_option("wind", &quantity_speed,
                         "instead of the case's wind, as \"22 m/s\"",
@@ -116,7 +115,8 @@ lee_status cmd_steady(int argc, char *argv[], lee_error *error) {
                         "how long it blows, as \"6 h\"", &other.duration),
         count_option("scan", "from N directions, evenly round", 3600.0,
                      &other.directions),
-        text_option("o,output", "FILE", "also write a table: a .csv, or -",
+        text_option("o,output", "FILE",
+                    "also write a table: a .csv or .nc; - is CSV",
                     &output.path),
         flag_option("force", "replace FILE, unless the case reads it",
                     &output.force),

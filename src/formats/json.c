@@ -4,6 +4,7 @@
 #include <assert.h>
 #include <errno.h>
 #include <math.h>
+#include <stdlib.h>
 #include <string.h>
 
 #include <jansson.h>
@@ -67,34 +68,14 @@ void lee_json_put_flag(lee_json *json, const char *key, bool value) {
     }
 }
 
-/* Bytes of the UTF-8 character that text begins with; 0 when it is broken.
- * jansson is the judge of what is valid. */
-static size_t character_length(const char *text) {
-    const size_t left = strnlen(text, 4);
-    for (size_t n = 1; n <= left; n++) {
-        json_t *trial = json_stringn(text, n);
-        if (trial != NULL) {
-            json_decref(trial);
-            return n;
-        }
+/* jansson is the judge of what is valid; what it refuses is mended. */
+static json_t *text_of(const char *text) {
+    json_t *value = json_string(text);
+    if (value == NULL) {
+        char *mended = lee_text_mended(text);
+        value = mended != NULL ? json_string(mended) : NULL;
+        free(mended);
     }
-    return 0;
-}
-
-static json_t *repaired(const char *text) {
-    lee_text mended = {0};
-    while (*text != '\0') {
-        const size_t length = character_length(text);
-        if (length == 0) {
-            lee_text_add(&mended, "\xEF\xBF\xBD"); /* U+FFFD */
-            text++;
-        } else {
-            lee_text_add(&mended, "%.*s", (int)length, text);
-            text += length;
-        }
-    }
-    json_t *value = mended.has_failed ? NULL : json_string(mended.bytes);
-    lee_text_free(&mended);
     return value;
 }
 
@@ -106,8 +87,7 @@ void lee_json_put_text(lee_json *json, const char *key, const char *text) {
         put(json, key, json_null());
         return;
     }
-    json_t *value = json_string(text);
-    put(json, key, value != NULL ? value : repaired(text));
+    put(json, key, text_of(text));
 }
 
 lee_status lee_json_write(lee_json *json, FILE *stream, lee_error *error) {

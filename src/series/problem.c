@@ -16,6 +16,7 @@ enum { USUAL_GAP = 3 * 3600 }; /* s */
 lee_problem lee_problem_default(void) {
     lee_problem problem = {0};
     problem.lake.altitude = NAN;
+    problem.lake.datum_altitude = NAN;
     problem.lake.water_density =
         lee_water_density(lee_celsius_zero + usual_water_celsius);
     problem.lake.gravity = lee_standard_gravity;

@@ -124,6 +124,27 @@ static void a_cut_never_parts_a_character(void **state) {
     assert_string_equal(shown + 44, "...");
 }
 
+static void bytes_that_are_no_character_are_mended(void **state) {
+    (void)state;
+    char *mended = lee_text_mended("a\xFF\xC3\xA9\xC3");
+    assert_string_equal(mended, "a\xEF\xBF\xBD\xC3\xA9\xEF\xBF\xBD");
+    free(mended);
+}
+
+static void a_text_without_bytes_is_mended_to_one(void **state) {
+    (void)state;
+    char *mended = lee_text_mended("");
+    assert_string_equal(mended, "");
+    free(mended);
+}
+
+static void what_fits_ends_with_a_whole_character(void **state) {
+    (void)state;
+    assert_int_equal(lee_text_fits("ab\xC3\xA9", 4), 4);
+    assert_int_equal(lee_text_fits("ab\xC3\xA9", 3), 2);
+    assert_int_equal(lee_text_fits("ab", 9), 2);
+}
+
 static const char *const words[] = {"depth", "width", "fetch", "from", "to"};
 
 static const char *nearest(const char *word) {
@@ -196,6 +217,9 @@ int main(void) {
         cmocka_unit_test(forty_characters_are_shown_whole),
         cmocka_unit_test(what_is_longer_is_cut_and_says_so),
         cmocka_unit_test(a_cut_never_parts_a_character),
+        cmocka_unit_test(bytes_that_are_no_character_are_mended),
+        cmocka_unit_test(a_text_without_bytes_is_mended_to_one),
+        cmocka_unit_test(what_fits_ends_with_a_whole_character),
         cmocka_unit_test(a_word_with_one_slip_is_recognised),
         cmocka_unit_test(letters_of_either_case_are_alike),
         cmocka_unit_test(two_slips_in_a_short_word_are_too_many),

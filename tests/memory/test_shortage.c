@@ -377,12 +377,13 @@ static lee_status take_away(FILE *told, lee_status status) {
 }
 
 static lee_status write_steady(FILE *told, lee_error *error) {
-    return take_away(told, lee_write_steady(desk.target, false, &desk.given,
-                                            &desk.steady, error));
+    return take_away(told, lee_write_steady(&(lee_target){.path = desk.target},
+                                            &desk.given, &desk.steady, error));
 }
 
 static lee_status write_run(FILE *told, lee_error *error) {
-    return take_away(told, lee_write_run(desk.target, false, true,
+    return take_away(told, lee_write_run(&(lee_target){.path = desk.target,
+                                                       .with_wind = true},
                                          &desk.recorded, &desk.run, error));
 }
 

@@ -43,8 +43,8 @@ static const char *body_of(const char *text) {
 
 static void write_run(const place *here, const hand_made *made, bool wind) {
     lee_error error = {0};
-    if (lee_write_run(here->file, false, wind, &made->from, &made->run,
-                      &error) != LEE_OK) {
+    if (lee_write_run(&(lee_target){.path = here->file, .with_wind = wind},
+                      &made->from, &made->run, &error) != LEE_OK) {
         fail_msg("%s", error.message);
     }
 }
@@ -177,9 +177,9 @@ static void a_steady_table_has_a_row_a_wind(void **state) {
     char text[8192];
     make(&made);
     place_open(&here);
-    assert_int_equal(
-        lee_write_steady(here.file, false, &made.from, &made.steady, NULL),
-        LEE_OK);
+    assert_int_equal(lee_write_steady(&(lee_target){.path = here.file},
+                                      &made.from, &made.steady, NULL),
+                     LEE_OK);
     read_back(&here, sizeof text, text);
     place_close(&here);
     assert_contains(text, "\nwind [m s-1],wind from [degree],");
@@ -204,9 +204,9 @@ static void a_steady_row_carries_the_warnings_of_its_wind(void **state) {
     assert_int_equal(lee_notes_add(notes, NULL, "12 m fall dry"), LEE_OK);
     assert_int_equal(lee_notes_add(notes, NULL, "a \"sill\", told"), LEE_OK);
     place_open(&here);
-    assert_int_equal(
-        lee_write_steady(here.file, false, &made.from, &made.steady, NULL),
-        LEE_OK);
+    assert_int_equal(lee_write_steady(&(lee_target){.path = here.file},
+                                      &made.from, &made.steady, NULL),
+                     LEE_OK);
     read_back(&here, sizeof text, text);
     place_close(&here);
     lee_notes_free(notes);
@@ -226,30 +226,31 @@ static void a_file_that_exists_is_kept_unless_forced(void **state) {
     assert_non_null(old);
     (void)fputs("old", old);
     (void)fclose(old);
-    assert_int_equal(
-        lee_write_steady(here.file, false, &made.from, &made.steady, &error),
-        LEE_ERR_FILE);
+    assert_int_equal(lee_write_steady(&(lee_target){.path = here.file},
+                                      &made.from, &made.steady, &error),
+                     LEE_ERR_FILE);
     read_back(&here, sizeof text, text);
     assert_string_equal(text, "old");
     assert_int_equal(
-        lee_write_steady(here.file, true, &made.from, &made.steady, &error),
+        lee_write_steady(&(lee_target){.path = here.file, .force = true},
+                         &made.from, &made.steady, &error),
         LEE_OK);
     read_back(&here, sizeof text, text);
     place_close(&here);
     assert_contains(text, "# leewater ");
 }
 
-static void another_ending_than_csv_is_refused(void **state) {
+static void another_ending_than_csv_or_nc_is_refused(void **state) {
     (void)state;
     hand_made made;
     lee_error error = {0};
     make(&made);
-    assert_int_equal(lee_write_run("levels.txt", false, false, &made.from,
-                                   &made.run, &error),
+    assert_int_equal(lee_write_run(&(lee_target){.path = "levels.txt"},
+                                   &made.from, &made.run, &error),
                      LEE_ERR_ARGUMENT);
     assert_string_equal(
         error.message,
-        "levels.txt: results are written as .csv; name the file so");
+        "levels.txt: results are written as .csv or .nc; name the file so");
 }
 
 static void asking_for_a_target_leaves_nothing(void **state) {
@@ -258,8 +259,9 @@ static void asking_for_a_target_leaves_nothing(void **state) {
     place here;
     make(&made);
     place_open(&here);
-    assert_int_equal(lee_check_target(here.file, false, &made.from, NULL),
-                     LEE_OK);
+    assert_int_equal(
+        lee_check_target(&(lee_target){.path = here.file}, &made.from, NULL),
+        LEE_OK);
     assert_int_equal(access(here.file, F_OK), -1);
     place_close(&here);
 }
@@ -269,7 +271,8 @@ static void a_target_in_no_folder_is_refused_ahead(void **state) {
     hand_made made;
     make(&made);
     assert_int_equal(
-        lee_check_target("/nowhere/at/all.csv", false, &made.from, NULL),
+        lee_check_target(&(lee_target){.path = "/nowhere/at/all.csv"},
+                         &made.from, NULL),
         LEE_ERR_FILE);
 }
 
@@ -284,11 +287,13 @@ static void a_file_the_case_reads_is_no_target_even_forced(void **state) {
     char *inputs[] = {here.file};
     made.from.inputs = (lee_notes){.n = 1, .text = inputs};
     assert_int_equal(
-        lee_write_run(here.file, true, false, &made.from, &made.run, &error),
+        lee_write_run(&(lee_target){.path = here.file, .force = true},
+                      &made.from, &made.run, &error),
         LEE_ERR_FILE);
     assert_non_null(strstr(error.message, ": is read by this case; name "));
     assert_int_equal(
-        lee_write_steady(here.file, true, &made.from, &made.steady, NULL),
+        lee_write_steady(&(lee_target){.path = here.file, .force = true},
+                         &made.from, &made.steady, NULL),
         LEE_ERR_FILE);
     place_close(&here);
 }
@@ -306,7 +311,8 @@ static void another_name_of_a_file_the_case_reads_is_no_target(void **state) {
     assert_int_equal(link(here.file, other), 0);
     char *inputs[] = {here.file};
     made.from.inputs = (lee_notes){.n = 1, .text = inputs};
-    const lee_status status = lee_check_target(other, true, &made.from, &error);
+    const lee_status status = lee_check_target(
+        &(lee_target){.path = other, .force = true}, &made.from, &error);
     (void)unlink(other);
     assert_int_equal(status, LEE_ERR_FILE);
     assert_non_null(strstr(error.message, "/other.csv: is the same file as "));
@@ -318,8 +324,9 @@ static void an_ending_alone_is_no_name(void **state) {
     (void)state;
     hand_made made;
     make(&made);
-    assert_int_equal(lee_check_target(".csv", false, &made.from, NULL),
-                     LEE_ERR_ARGUMENT);
+    assert_int_equal(
+        lee_check_target(&(lee_target){.path = ".csv"}, &made.from, NULL),
+        LEE_ERR_ARGUMENT);
 }
 
 int main(void) {
@@ -335,7 +342,7 @@ int main(void) {
         cmocka_unit_test(a_steady_table_has_a_row_a_wind),
         cmocka_unit_test(a_steady_row_carries_the_warnings_of_its_wind),
         cmocka_unit_test(a_file_that_exists_is_kept_unless_forced),
-        cmocka_unit_test(another_ending_than_csv_is_refused),
+        cmocka_unit_test(another_ending_than_csv_or_nc_is_refused),
         cmocka_unit_test(asking_for_a_target_leaves_nothing),
         cmocka_unit_test(a_target_in_no_folder_is_refused_ahead),
         cmocka_unit_test(a_file_the_case_reads_is_no_target_even_forced),

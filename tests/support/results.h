@@ -73,6 +73,7 @@ static inline void make_case(hand_made *made) {
     lee_problem *problem = &made->from.problem;
     problem->lake.name = word(made, 4, "Marrow Tarn");
     problem->lake.datum = word(made, 5, "Marrow gauge zero");
+    problem->lake.datum_altitude = unknown;
     problem->lake.still_water = (lee_level_series){1, NULL, made->still_water};
     problem->lake.profile =
         (lee_profile){3, made->chainage, made->bed, made->width, made->bearing};

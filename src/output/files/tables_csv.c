@@ -1,4 +1,6 @@
 /* tables_csv.c - results as CSV with a commented head, whole or not at all. */
+#include "output/files/tables_csv.h"
+
 #include <math.h>
 #include <stdbool.h>
 #include <stddef.h>
@@ -6,7 +8,6 @@
 
 #include "base/constants.h"
 #include "formats/atomic_file.h"
-#include "formats/regular_file.h"
 
 #include "output/print.h"
 
@@ -152,56 +153,6 @@ static double in_degrees(double radians) {
     return degrees < 0.0 ? degrees + 360.0 : degrees;
 }
 
-static lee_status check_path(const char *path, lee_error *error) {
-    const size_t length = strlen(path);
-    if (strcmp(path, "-") == 0 ||
-        (length > 4 && strcmp(path + length - 4, ".csv") == 0)) {
-        return LEE_OK;
-    }
-    return lee_fail(error, LEE_ERR_ARGUMENT,
-                    "%s: results are written as .csv; name the file so", path);
-}
-
-/* Refuses to put results in the place of what they were made from. */
-static lee_status spare_inputs(const char *path, const lee_case *from,
-                               lee_error *error) {
-    for (size_t i = 0; i < from->inputs.n; i++) {
-        const char *input = from->inputs.text[i];
-        if (strcmp(path, input) == 0 && lee_is_same_file(path, input)) {
-            return lee_fail(error, LEE_ERR_FILE,
-                            "%s: is read by this case; name another file for "
-                            "the results",
-                            path);
-        }
-        if (lee_is_same_file(path, input)) {
-            return lee_fail(error, LEE_ERR_FILE,
-                            "%s: is the same file as %s, which this case "
-                            "reads; name another file for the results",
-                            path, input);
-        }
-    }
-    return LEE_OK;
-}
-
-static lee_status open_target(const char *path, bool force,
-                              const lee_case *from, lee_atomic_file *file,
-                              lee_error *error) {
-    lee_status status = check_path(path, error);
-    if (status == LEE_OK) {
-        status = spare_inputs(path, from, error);
-    }
-    return status == LEE_OK ? lee_atomic_open(path, force, file, error)
-                            : status;
-}
-
-lee_status lee_check_target(const char *path, bool force, const lee_case *from,
-                            lee_error *error) {
-    lee_atomic_file file = {0};
-    const lee_status status = open_target(path, force, from, &file, error);
-    lee_atomic_discard(&file);
-    return status;
-}
-
 /* What a table is written from. */
 typedef struct table {
     const lee_case *from;
@@ -211,11 +162,12 @@ typedef struct table {
 } table;
 
 /* Writes a table to a file: whole or not at all. */
-static lee_status write_file(const char *path, bool force,
+static lee_status write_file(const lee_target *target,
                              void (*write)(FILE *out, const table *what),
                              const table *what, lee_error *error) {
     lee_atomic_file file = {0};
-    lee_status status = open_target(path, force, what->from, &file, error);
+    lee_status status =
+        lee_atomic_open(target->path, target->force, &file, error);
     if (status == LEE_OK) {
         write(file.stream, what);
         status = lee_atomic_commit(&file, error);
@@ -307,10 +259,10 @@ static void write_steady(FILE *out, const table *what) {
     }
 }
 
-lee_status lee_write_steady(const char *path, bool force, const lee_case *from,
-                            const lee_steady_result *result, lee_error *error) {
+lee_status lee_csv_steady(const lee_target *target, const lee_case *from,
+                          const lee_steady_result *result, lee_error *error) {
     const table what = {.from = from, .steady = result};
-    return write_file(path, force, write_steady, &what, error);
+    return write_file(target, write_steady, &what, error);
 }
 
 /* ---- run ---- */
@@ -362,9 +314,9 @@ static void write_run(FILE *out, const table *what) {
     }
 }
 
-lee_status lee_write_run(const char *path, bool force, bool with_wind,
-                         const lee_case *from, const lee_run_result *result,
-                         lee_error *error) {
-    const table what = {.from = from, .run = result, .with_wind = with_wind};
-    return write_file(path, force, write_run, &what, error);
+lee_status lee_csv_run(const lee_target *target, const lee_case *from,
+                       const lee_run_result *result, lee_error *error) {
+    const table what = {
+        .from = from, .run = result, .with_wind = target->with_wind};
+    return write_file(target, write_run, &what, error);
 }

@@ -1,0 +1,385 @@
+/* run_levels.c - level series at stations as NetCDF: CF discrete sampling
+ * geometry, orthogonal (CF Conventions 9.3.1, H.2.1). */
+#include "output/netcdf/levels.h"
+
+#include <math.h>
+#include <stdlib.h>
+#include <string.h>
+
+#include "base/constants.h"
+#include "output/netcdf/parts.h"
+
+/* Files of more values than this, 10 MB, are NetCDF-4 and deflated. */
+static const size_t large = 1250000;
+
+/* Times in a chunk of a large file. */
+enum { CHUNK = 8192 };
+
+/* One number of a station or a threshold. */
+typedef struct number {
+    const char *name;
+    const char *units; /* NULL: a time */
+    const char *long_name;
+} number;
+
+static const number summaries[] = {
+    {"level_max",      "m",  "highest level of the run"     },
+    {"level_max_low",  "m",  "low end of the highest level" },
+    {"level_max_high", "m",  "high end of the highest level"},
+    {"level_max_time", NULL, "time of the highest level"    },
+    {"level_min",      "m",  "lowest level of the run"      },
+    {"level_min_low",  "m",  "low end of the lowest level"  },
+    {"level_min_high", "m",  "high end of the lowest level" },
+    {"level_min_time", NULL, "time of the lowest level"     },
+    {"residual",       "m",
+     "largest departure from still water in the two "
+     "first periods after the wind has dropped"             },
+    {"dry_time",       "s",  "time that the station lay dry"},
+};
+enum { SUMMARIES = sizeof summaries / sizeof summaries[0] };
+
+/* The time of something that may not be. */
+static double time_if(double value, int64_t time) {
+    return isnan(value) ? NAN : (double)time;
+}
+
+static void summarise(const lee_station_series *series,
+                      double value[SUMMARIES]) {
+    const double all[SUMMARIES] = {
+        series->max.value, series->max.low,
+        series->max.high,  time_if(series->max.value, series->max_time),
+        series->min.value, series->min.low,
+        series->min.high,  time_if(series->min.value, series->min_time),
+        series->residual,  series->dry_time,
+    };
+    memcpy(value, all, sizeof all);
+}
+
+static const number threshold_parts[] = {
+    {"threshold_station",    "1",  "number of its station, counted from 0"  },
+    {"threshold_level",      "m",  "threshold above the datum of levels"    },
+    {"threshold_total",      "s",  "time that the level was past it in all" },
+    {"threshold_longest",    "s",  "longest time that the level was past it"},
+    {"threshold_times",      "1",  "separate occasions"                     },
+    {"threshold_first_time", NULL, "time when it was first passed"          },
+};
+enum { THRESHOLD_PARTS = sizeof threshold_parts / sizeof threshold_parts[0] };
+
+/* A file of a run being written: numbers of its variables. */
+typedef struct sheet {
+    lee_netcdf_out out;
+    const lee_case *from;
+    const lee_run_result *result;
+    lee_nc_stations stations;
+    bool has_range;
+    size_t thresholds;
+    int time;
+    int level;
+    int low;
+    int high;
+    int spin_up;
+    int speed;
+    int blows_from;
+    int still_water;
+    int datum;
+    int height;
+    int summary[SUMMARIES];
+    int threshold[THRESHOLD_PARTS];
+    int threshold_side;
+} sheet;
+
+static size_t count_thresholds(const lee_run_result *result) {
+    size_t count = 0;
+    for (size_t i = 0; i < result->station_count; i++) {
+        count += result->station[i].exceedance_count;
+    }
+    return count;
+}
+
+static int64_t even_step(const lee_run_result *result) {
+    const int64_t step = result->n > 1 ? result->time[1] - result->time[0] : 0;
+    for (size_t i = 2; i < result->n; i++) {
+        if (result->time[i] - result->time[i - 1] != step) {
+            return 0;
+        }
+    }
+    return step;
+}
+
+static int define_level(sheet *to, const char *name, const char *what,
+                        const lee_netcdf_shape *shape) {
+    const lee_nc_level level = {
+        .name = name,
+        .what = what,
+        .coordinates = lee_nc_station_coordinates(&to->stations),
+        .may_miss = true,
+    };
+    const int id =
+        lee_nc_define_level(&to->out, &to->from->problem.lake, &level, shape);
+    lee_netcdf_put_text(&to->out, id, "cell_methods", "time: point");
+    return id;
+}
+
+static void define_series(sheet *to, int time_dimension) {
+    const size_t n = to->result->n;
+    const lee_netcdf_shape shape = {
+        .dimensions = 2,
+        .dimension = {to->stations.dimension, time_dimension       },
+        .chunk = {1,                      n < CHUNK ? n : CHUNK},
+    };
+    to->level = define_level(to, "water_level", "water level", &shape);
+    if (to->has_range) {
+        to->low = define_level(to, "water_level_low",
+                               "low end of the water level", &shape);
+        to->high = define_level(to, "water_level_high",
+                                "high end of the water level", &shape);
+    }
+    lee_netcdf_put_text(
+        &to->out, to->level, "ancillary_variables",
+        to->has_range ? "spin_up water_level_low water_level_high" : "spin_up");
+}
+
+static void define_wind(sheet *to, const lee_netcdf_shape *shape) {
+    static const lee_nc_variable speed = {
+        .name = "wind_speed",
+        .units = "m s-1",
+        .standard_name = "wind_speed",
+        .long_name = "wind speed at 10 m over open water",
+        .coordinates = "wind_height",
+        .content = "auxiliaryInformation",
+        .may_miss = true,
+    };
+    static const lee_nc_variable blows_from = {
+        .name = "wind_from_direction",
+        .units = "degree",
+        .standard_name = "wind_from_direction",
+        .long_name = "direction the wind blows from, clockwise from north",
+        .coordinates = "wind_height",
+        .content = "auxiliaryInformation",
+        .may_miss = true,
+    };
+    to->speed = lee_nc_define(&to->out, &speed, shape);
+    to->blows_from = lee_nc_define(&to->out, &blows_from, shape);
+    to->height = lee_nc_define_height(&to->out);
+}
+
+static void define_spin_up(sheet *to, int time_dimension) {
+    static const lee_nc_variable spin_up = {
+        .name = "spin_up",
+        .standard_name = "status_flag",
+        .long_name = "does the level still feel the start at rest",
+        .content = "qualityInformation",
+    };
+    static const signed char values[] = {0, 1};
+    const lee_netcdf_shape shape = {
+        .kind = LEE_NETCDF_BYTE,
+        .dimensions = 1,
+        .dimension = {time_dimension},
+    };
+    to->spin_up = lee_nc_define(&to->out, &spin_up, &shape);
+    lee_netcdf_put_bytes(&to->out, to->spin_up, "flag_values", 2, values);
+    lee_netcdf_put_text(&to->out, to->spin_up, "flag_meanings",
+                        "settled spin_up");
+}
+
+static int define_number(sheet *to, const number *is, const char *coordinates,
+                         const lee_netcdf_shape *shape) {
+    const lee_nc_variable variable = {
+        .name = is->name,
+        .units = is->units,
+        .long_name = is->long_name,
+        .coordinates = coordinates,
+        .content = "modelResult",
+        .may_miss = true,
+    };
+    return is->units != NULL ? lee_nc_define(&to->out, &variable, shape)
+                             : lee_nc_define_time(&to->out, is->name,
+                                                  is->long_name, shape, false);
+}
+
+static void define_summaries(sheet *to) {
+    const lee_netcdf_shape shape = {
+        .dimensions = 1,
+        .dimension = {to->stations.dimension},
+    };
+    for (size_t i = 0; i < SUMMARIES; i++) {
+        to->summary[i] =
+            define_number(to, &summaries[i],
+                          lee_nc_station_coordinates(&to->stations), &shape);
+    }
+}
+
+static int define_side(sheet *to, const lee_netcdf_shape *shape) {
+    static const lee_nc_variable side = {
+        .name = "threshold_side",
+        .long_name = "does it count when the level goes over or under it",
+        .content = "referenceInformation",
+    };
+    static const signed char values[] = {0, 1};
+    lee_netcdf_shape bytes = *shape;
+    bytes.kind = LEE_NETCDF_BYTE;
+    const int id = lee_nc_define(&to->out, &side, &bytes);
+    lee_netcdf_put_bytes(&to->out, id, "flag_values", 2, values);
+    lee_netcdf_put_text(&to->out, id, "flag_meanings", "above below");
+    return id;
+}
+
+static void define_thresholds(sheet *to) {
+    if (to->thresholds == 0) {
+        return;
+    }
+    const lee_netcdf_shape shape = {
+        .dimensions = 1,
+        .dimension = {lee_netcdf_dimension(&to->out, "threshold",
+                                           to->thresholds)},
+    };
+    to->threshold_side = define_side(to, &shape);
+    for (size_t i = 0; i < THRESHOLD_PARTS; i++) {
+        to->threshold[i] = define_number(to, &threshold_parts[i], NULL, &shape);
+    }
+}
+
+static void define(sheet *to, const lee_nc_about *about, int64_t date) {
+    static const lee_nc_level still_water = {
+        .name = "still_water",
+        .what = "still-water level at the begin of the run",
+    };
+    const lee_run_result *result = to->result;
+    const lee_lake *lake = &to->from->problem.lake;
+    const lee_netcdf_shape scalar = {.dimensions = 0};
+    lee_nc_put_about(&to->out, about, date);
+    lee_nc_put_coverage(&to->out, result->time[0], result->time[result->n - 1],
+                        even_step(result));
+    to->stations = lee_nc_define_stations(&to->out, &to->from->problem, true);
+    const lee_netcdf_shape times = {
+        .dimensions = 1,
+        .dimension = {lee_netcdf_dimension(&to->out, "time", result->n)},
+    };
+    to->time = lee_nc_define_time(&to->out, "time", "time", &times, true);
+    define_series(to, times.dimension[0]);
+    define_spin_up(to, times.dimension[0]);
+    define_wind(to, &times);
+    to->still_water =
+        lee_nc_define_level(&to->out, lake, &still_water, &scalar);
+    to->datum = lee_nc_define_datum(&to->out, lake);
+    define_summaries(to);
+    define_thresholds(to);
+    lee_netcdf_put_number(&to->out, LEE_NETCDF_GLOBAL, "numerical_error_m",
+                          result->numerical_error);
+    lee_netcdf_end_definitions(&to->out);
+}
+
+/* Writes one value a time, converted, in blocks. */
+static void put_times(sheet *to, int variable,
+                      double (*value)(const lee_run_result *result, size_t i)) {
+    enum { BLOCK = 1024 };
+    double block[BLOCK];
+    for (size_t at = 0; at < to->result->n; at += BLOCK) {
+        const size_t left = to->result->n - at;
+        const size_t n = left < BLOCK ? left : BLOCK;
+        for (size_t i = 0; i < n; i++) {
+            block[i] = value(to->result, at + i);
+        }
+        lee_netcdf_put_block(&to->out, variable, &at, &n, block);
+    }
+}
+
+static double time_of(const lee_run_result *result, size_t i) {
+    return (double)result->time[i];
+}
+
+static double spin_up_of(const lee_run_result *result, size_t i) {
+    return result->is_spin_up[i] ? 1.0 : 0.0;
+}
+
+static double speed_of(const lee_run_result *result, size_t i) {
+    return result->speed[i];
+}
+
+static double direction_of(const lee_run_result *result, size_t i) {
+    const double degrees = fmod(result->from[i] * 180.0 / lee_pi, 360.0);
+    return degrees < 0.0 ? degrees + 360.0 : degrees;
+}
+
+static void put_station(sheet *to, size_t i) {
+    const lee_station_series *series = &to->result->station[i];
+    const size_t start[] = {i, 0};
+    const size_t count[] = {1, to->result->n};
+    double value[SUMMARIES];
+    lee_netcdf_put_block(&to->out, to->level, start, count, series->level);
+    if (to->has_range) {
+        lee_netcdf_put_block(&to->out, to->low, start, count, series->low);
+        lee_netcdf_put_block(&to->out, to->high, start, count, series->high);
+    }
+    summarise(series, value);
+    for (size_t k = 0; k < SUMMARIES; k++) {
+        lee_netcdf_put_block(&to->out, to->summary[k], start, count, &value[k]);
+    }
+}
+
+static void put_threshold(sheet *to, size_t row, size_t station,
+                          const lee_exceedance *past) {
+    const size_t one = 1;
+    const double side = past->threshold.is_below ? 1.0 : 0.0;
+    const double value[THRESHOLD_PARTS] = {
+        (double)station,     past->threshold.level,
+        past->total,         past->longest,
+        (double)past->times, past->is_reached ? (double)past->first_time : NAN,
+    };
+    lee_netcdf_put_block(&to->out, to->threshold_side, &row, &one, &side);
+    for (size_t k = 0; k < THRESHOLD_PARTS; k++) {
+        lee_netcdf_put_block(&to->out, to->threshold[k], &row, &one, &value[k]);
+    }
+}
+
+static void put_values(sheet *to) {
+    size_t row = 0;
+    const lee_run_result *result = to->result;
+    lee_nc_put_stations(&to->out, &to->stations, &to->from->problem);
+    put_times(to, to->time, time_of);
+    put_times(to, to->spin_up, spin_up_of);
+    put_times(to, to->speed, speed_of);
+    put_times(to, to->blows_from, direction_of);
+    lee_nc_put_scalar(&to->out, to->still_water, result->still_water);
+    lee_nc_put_scalar(&to->out, to->datum,
+                      to->from->problem.lake.datum_altitude);
+    lee_nc_put_scalar(&to->out, to->height, result->method.reference_height);
+    for (size_t i = 0; i < result->station_count; i++) {
+        const lee_station_series *series = &result->station[i];
+        put_station(to, i);
+        for (size_t k = 0; k < series->exceedance_count; k++) {
+            put_threshold(to, row++, i, &series->exceedance[k]);
+        }
+    }
+}
+
+lee_status lee_netcdf_run(const lee_target *target, const lee_case *from,
+                          const lee_run_result *result, lee_error *error) {
+    const lee_nc_about about = {
+        .from = from,
+        .method = &result->method,
+        .warnings = &result->warnings,
+        .command = "run",
+        .title = "Water levels of a lake under wind",
+        .summary = "Levels at stations along the axis of a lake, computed "
+                   "from its wind; each with the range of the estimate where "
+                   "that was asked for. Planning estimates.",
+        .still_water = result->still_water,
+    };
+    sheet to = {
+        .from = from,
+        .result = result,
+        .has_range = result->station[0].low != NULL,
+        .thresholds = count_thresholds(result),
+    };
+    const size_t values =
+        result->n * result->station_count * (to.has_range ? 3 : 1);
+    const lee_status status = lee_netcdf_create(target->path, target->force,
+                                                values > large, &to.out, error);
+    if (status != LEE_OK) {
+        return status;
+    }
+    define(&to, &about, target->date);
+    put_values(&to);
+    return lee_netcdf_commit(&to.out, error);
+}
