@@ -19,11 +19,13 @@ typedef struct lee_air {
     double density;     /* kg m-3, given outright */
     double pressure;    /* Pa */
     double temperature; /* K */
+    double humidity;    /* relative, 0 to 1; not given: dry air */
 } lee_air;
 
 /* Air density, kg m-3, for a lake at `altitude` (m; NaN: sea level): given
- * outright, else dry air at the given or the standard pressure and the given
- * temperature or 288.15 K. Writes how into text[size]. */
+ * outright, else that of air at the given or the standard pressure and the
+ * given temperature or 288.15 K: moist by CIPM-2007 where humidity is given,
+ * else dry. Writes how into text[size]. */
 double lee_air_density_of(const lee_air *air, double altitude, size_t size,
                           char text[]);
 
@@ -104,6 +106,8 @@ typedef struct lee_problem {
     lee_exposure exposure;
     lee_drag drag;
     lee_air air;
+    double ice; /* share of the water under ice, 0 to 1, where no record says
+                   otherwise: the wind pulls on the rest alone */
     lee_return_flow return_flow;
     bool return_flow_given; /* by the user: an open end then keeps it */
     lee_uncertainty uncertainty;

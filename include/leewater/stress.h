@@ -15,6 +15,16 @@ double lee_water_density(double temperature);
  * p / (287.05 T) (common practice, gas constant of dry air in J kg-1 K-1). */
 double lee_air_density(double pressure, double temperature);
 
+/* Density of moist air at pressure p (Pa), temperature T (K) and relative
+ * humidity h (0 to 1), kg m-3, with 400 ppm of carbon dioxide:
+ *     rho = p Ma / (Z R T) (1 - x (1 - Mv/Ma))
+ * x being the share of vapour and Z the compressibility. NaN when p or T is
+ * not above 0 or h is outside 0 to 1.
+ * Picard et al. (2008), CIPM-2007 [picard2008]; made for 15 to 27 degC and 600
+ * to 1100 hPa, smooth and close to other formulas outside. */
+double lee_moist_air_density(double pressure, double temperature,
+                             double humidity);
+
 /* Kinematic viscosity of dry air at temperature T (K), m2 s-1; -173 to 277
  * degC, NaN outside:
  *     1.326e-5 (1 + 6.542e-3 t + 8.301e-6 t^2 - 4.84e-9 t^3), t in degC

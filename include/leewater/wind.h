@@ -463,6 +463,11 @@ lee_wind_conditions lee_wind_conditions_at(const lee_wind_record *record,
                                            int64_t step, double t,
                                            size_t *hint);
 
+/* One column of values [n] beside a record's samples, in the same way. */
+double lee_wind_column_at(const lee_wind_record *record, const double *column,
+                          const lee_gap_rule *rule, int64_t step, double t,
+                          size_t *hint);
+
 /* The same for a sample: its own value where it has one, else what
  * lee_wind_conditions_at says for the middle of its step. */
 lee_wind_conditions lee_wind_conditions_of(const lee_wind_record *record,

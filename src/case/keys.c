@@ -394,12 +394,17 @@ static const lee_key stress_rows[] = {
     KEY("air_pressure", lee_key_quantity, lee_case_draft,
         result.problem.air.pressure, OPTIONAL, BETWEEN("hPa", 300.0, 1100.0),
         STORED("Pa")),
+    KEY("humidity", lee_key_quantity, lee_case_draft,
+        result.problem.air.humidity, OPTIONAL, BETWEEN("1", 0.0, 1.0)),
+    KEY("ice", lee_key_quantity, lee_case_draft, result.problem.ice, OPTIONAL,
+        BETWEEN("1", 0.0, 1.0)),
     KEY("return_flow", lee_key_return_flow, lee_case_draft, result.problem,
         OPTIONAL, BETWEEN("1", 1.0, 3.0), .word = "computed"),
 };
 static const lee_key_pair stress_excluded[] = {
     {"air_density", "air_temperature"},
     {"air_density", "air_pressure"   },
+    {"air_density", "humidity"       },
     {NULL,          NULL             },
 };
 static const lee_key_section stress_keys =

@@ -2,6 +2,7 @@
 #include <math.h>
 
 #include "leewater/series.h"
+#include "series/air.h"
 #include "series/run_plan.h"
 #include "series/setting.h"
 
@@ -91,6 +92,22 @@ static lee_status check_record(const lee_problem *problem,
     return warn_of_refusal(problem, check, error);
 }
 
+static lee_status tell_air(const lee_problem *problem, lee_problem_check *check,
+                           lee_error *error) {
+    lee_run_air air = {0};
+    lee_status status = LEE_OK;
+    if (check->has_record) {
+        status = lee_run_air_init(problem, &problem->wind.record,
+                                  check->record.step, &air, error);
+    }
+    if (status == LEE_OK) {
+        status = lee_air_tell(problem, check->has_record ? &air : NULL,
+                              &check->method, &check->warnings, error);
+    }
+    lee_run_air_free(&air);
+    return status;
+}
+
 lee_status lee_check_problem(const lee_problem *problem,
                              lee_problem_check *check, lee_error *error) {
     *check = (lee_problem_check){0};
@@ -115,6 +132,9 @@ lee_status lee_check_problem(const lee_problem *problem,
         status =
             lee_record_tell(&check->record, &problem->wind.gap,
                             &check->method.record, &check->warnings, error);
+    }
+    if (status == LEE_OK) {
+        status = tell_air(problem, check, error);
     }
     lee_setting_free(&setting);
     if (status != LEE_OK) {

@@ -151,7 +151,8 @@ static lee_status steady_levels(leg *l, const lee_profile *profile,
         .start_level = held_level(&lake->start, begin),
         .end_level = held_level(&lake->end, begin),
     };
-    lee_drive_pull(&l->drive, wind, input.stress);
+    lee_drive_pull(&l->drive, wind, lee_drive_air(&l->drive, 0.0),
+                   input.stress);
     const lee_status status = lee_steady_solve(&input, &steady, error);
     for (size_t i = 0; i < l->channel->nodes && status == LEE_OK; i++) {
         const double found =

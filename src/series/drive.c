@@ -76,7 +76,9 @@ static lee_status find_pieces(const lee_problem *problem,
                                  &wind->piece, &wind->count, error);
     }
     lee_wind_check_free(&check);
-    return status;
+    return status == LEE_OK ? lee_run_air_init(problem, wind->record,
+                                               wind->step, &wind->air, error)
+                            : status;
 }
 
 lee_status lee_run_wind_init(const lee_problem *problem,
@@ -112,6 +114,7 @@ lee_status lee_run_wind_init(const lee_problem *problem,
 void lee_run_wind_free(lee_run_wind *wind) {
     free(wind->piece);
     lee_corrections_free(&wind->corrections);
+    lee_run_air_free(&wind->air);
     lee_wind_record_free(&wind->made);
     *wind = (lee_run_wind){0};
 }
@@ -198,6 +201,26 @@ void lee_drive_wind(lee_drive *drive, double t, double at[2]) {
                 drive->wind->step, (double)drive->zero + t, at, &drive->hint);
 }
 
+/* Every sample has air and ice, so there is nothing left to bridge further. */
+static double sampled(lee_drive *drive, const double column[], double t) {
+    const lee_gap_rule any = {.largest = INT64_MAX / 4};
+    return lee_wind_column_at(drive->wind->record, column, &any,
+                              drive->wind->step, (double)drive->zero + t,
+                              &drive->air_hint);
+}
+
+lee_air_now lee_drive_air(lee_drive *drive, double t) {
+    const lee_run_air *air = &drive->wind->air;
+    lee_air_now now = lee_air_of_case(drive->problem, drive->setting);
+    if (air->density != NULL) {
+        now.density = sampled(drive, air->density, t);
+    }
+    if (air->ice != NULL) {
+        now.open = 1.0 - sampled(drive, air->ice, t);
+    }
+    return now;
+}
+
 /* Pull over speed squared of a bound, Pa s2 m-2. */
 static double tabled(const lee_pull_table *table, const double column[],
                      double speed) {
@@ -208,21 +231,34 @@ static double tabled(const lee_pull_table *table, const double column[],
     return column[row] + share * (column[row + 1] - column[row]);
 }
 
+/* Pull of the estimate over speed, Pa s m-1, on open water. */
+static double estimate_pull(const lee_drive *drive, double speed,
+                            double density) {
+    lee_drag_input in = drive->setting->fluids;
+    in.air_density = density;
+    in.speed = speed;
+    return drive->setting->return_flow * density *
+           lee_drag_coefficient(&drive->setting->drag, &in, NULL, NULL) * speed;
+}
+
+/* Pull of a bound over speed. The table's air is the case's, and stress goes
+ * with density. Where the estimate itself is by a share of the water's density,
+ * which does not, the range still holds it: it is a member. */
+static double bound_pull(const lee_drive *drive, double speed, double density) {
+    const bool is_low = drive->pull == LEE_PULL_LOW;
+    const double *column = is_low ? drive->table->low : drive->table->high;
+    const double ratio = density / drive->setting->fluids.air_density;
+    return ratio * tabled(drive->table, column, speed) * speed;
+}
+
 void lee_drive_pull(const lee_drive *drive, const double wind[2],
-                    double pull[2]) {
+                    lee_air_now air, double pull[2]) {
     const double speed = hypot(wind[0], wind[1]);
     double per_speed = 0.0; /* pull over speed, Pa s m-1 */
-    if (speed > 0.0 && drive->pull == LEE_PULL_MAIN) {
-        lee_drag_input in = drive->setting->fluids;
-        in.speed = speed;
-        per_speed =
-            drive->setting->return_flow * in.air_density *
-            lee_drag_coefficient(&drive->setting->drag, &in, NULL, NULL) *
-            speed;
-    } else if (speed > 0.0) {
-        const double *column = drive->pull == LEE_PULL_LOW ? drive->table->low
-                                                           : drive->table->high;
-        per_speed = tabled(drive->table, column, speed) * speed;
+    if (speed > 0.0) {
+        per_speed = air.open * (drive->pull == LEE_PULL_MAIN
+                                    ? estimate_pull(drive, speed, air.density)
+                                    : bound_pull(drive, speed, air.density));
     }
     pull[0] = per_speed * wind[0];
     pull[1] = per_speed * wind[1];
@@ -233,7 +269,7 @@ void lee_drive_forcing(void *user, double t, lee_forcing *forcing) {
     double wind[2];
     double pull[2];
     lee_drive_wind(drive, t, wind);
-    lee_drive_pull(drive, wind, pull);
+    lee_drive_pull(drive, wind, lee_drive_air(drive, t), pull);
     for (size_t i = 0; i < drive->links; i++) {
         forcing->stress[i] =
             pull[0] * drive->sine[i] + pull[1] * drive->cosine[i];

@@ -3,11 +3,12 @@
 #define LEEWATER_SERIES_DRIVE_H
 
 #include "leewater/series.h"
+#include "series/air.h"
 #include "series/members.h"
 #include "series/setting.h"
 
 /* The wind of a run: the problem's own record, or one made from a storm or a
- * given wind. Owns `made`, `corrections` and `piece`. */
+ * given wind. Owns `made`, `corrections`, `piece` and `air`. */
 typedef struct lee_run_wind {
     const lee_wind_record *record; /* as measured: the problem's, or &made */
     lee_wind_record made;
@@ -16,6 +17,7 @@ typedef struct lee_run_wind {
     size_t count;
     lee_wind_piece *piece; /* [count] */
     bool starts_calm;      /* made: rest is the true state at its begin */
+    lee_run_air air;
 } lee_run_wind;
 
 /* Finds the record, corrects it and parts it into its pieces. `calm` is how
@@ -29,8 +31,8 @@ void lee_run_wind_free(lee_run_wind *wind);
 /* Pull by the 10 m speed over open water for the bounds of a range, as a share
  * of speed squared; tables by speed, linear between rows. A bound corrects the
  * measured speed behind a row by its own drag; where stability goes by
- * temperatures of the record, its factor is that of the estimate. Owns its
- * table. */
+ * temperatures of the record, its factor is that of the estimate. In the case's
+ * air and without ice. Owns its table. */
 typedef struct lee_pull_table {
     const lee_problem *problem;
     const lee_setting *setting;
@@ -53,6 +55,7 @@ typedef struct lee_drive {
     lee_wind_piece piece;
     int64_t zero; /* s since 1970 of the engine's time 0 */
     size_t hint;
+    size_t air_hint;
     size_t links;
     double *sine; /* [links] of the bearing */
     double *cosine;
@@ -64,9 +67,12 @@ void lee_drive_free(lee_drive *drive);
 /* Wind at 10 m over open water (east, north) at engine time t. */
 void lee_drive_wind(lee_drive *drive, double t, double at[2]);
 
+/* Air and ice at engine time t. */
+lee_air_now lee_drive_air(lee_drive *drive, double t);
+
 /* Pull vector (east, north), Pa, of a wind at 10 m over open water. */
 void lee_drive_pull(const lee_drive *drive, const double wind[2],
-                    double pull[2]);
+                    lee_air_now air, double pull[2]);
 
 /* The engine's callback: user is a lee_drive. */
 void lee_drive_forcing(void *user, double t, lee_forcing *forcing);

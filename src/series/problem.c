@@ -25,7 +25,7 @@ lee_problem lee_problem_default(void) {
     problem.wind.gap.largest = USUAL_GAP;
     problem.exposure = lee_exposure_default();
     problem.drag = lee_drag_default();
-    problem.air = (lee_air){NAN, NAN, NAN};
+    problem.air = (lee_air){NAN, NAN, NAN, NAN};
     problem.return_flow = (lee_return_flow){true, 1.0};
     problem.uncertainty = (lee_uncertainty){NAN, NAN, NAN};
     problem.run.start = LEE_START_REST;

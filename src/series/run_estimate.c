@@ -415,6 +415,10 @@ static lee_status tell_method(workshop *shop, lee_error *error) {
         }
         lee_wind_check_free(&check);
     }
+    if (status == LEE_OK) {
+        status = lee_air_tell(problem, &shop->plan.wind.air, &result->method,
+                              &result->warnings, error);
+    }
     return status == LEE_OK
                ? lee_setting_warn_of_drag(problem, &shop->plan.setting,
                                           shop->strongest, &result->warnings,

@@ -300,6 +300,7 @@ static lee_status find_pull(const lee_problem *problem, lee_run_plan *plan,
     const lee_wind_record *record = &plan->wind.corrections.water;
     const lee_drive drive = {
         .problem = problem, .setting = &plan->setting, .pull = LEE_PULL_MAIN};
+    const lee_air_now usual = lee_air_of_case(problem, &plan->setting);
     plan->pull = calloc(record->n, sizeof *plan->pull);
     if (plan->pull == NULL) {
         return lee_fail(error, LEE_ERR_MEMORY, "no room for %zu samples",
@@ -309,7 +310,8 @@ static lee_status find_pull(const lee_problem *problem, lee_run_plan *plan,
         const double wind[2] = {record->east[i], record->north[i]};
         double pull[2] = {NAN, NAN};
         if (!isnan(wind[0]) && !isnan(wind[1])) {
-            lee_drive_pull(&drive, wind, pull);
+            lee_drive_pull(&drive, wind,
+                           lee_air_of_sample(&plan->wind.air, usual, i), pull);
         }
         plan->pull[i] = hypot(pull[0], pull[1]);
     }

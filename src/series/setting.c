@@ -5,36 +5,7 @@
 #include <stdio.h>
 #include <stdlib.h>
 
-#include "base/constants.h"
-
-/* Of the standard atmosphere at sea level, K (ISO 2533:1975) [iso2533]. */
-static const double usual_air_temperature = 288.15;
-
-static double air_temperature(const lee_air *air) {
-    return isnan(air->temperature) ? usual_air_temperature : air->temperature;
-}
-
-double lee_air_density_of(const lee_air *air, double altitude, size_t size,
-                          char text[]) {
-    if (!isnan(air->density)) {
-        (void)snprintf(text, size, "given");
-        return air->density;
-    }
-    const bool has_pressure = !isnan(air->pressure);
-    const bool has_temperature = !isnan(air->temperature);
-    const double height = isnan(altitude) ? 0.0 : altitude;
-    const double pressure =
-        has_pressure ? air->pressure : lee_standard_pressure(height);
-    const double temperature = air_temperature(air);
-    (void)snprintf(text, size, "dry air at %.1f hPa (%s) and %.1f degC (%s)",
-                   pressure / 100.0,
-                   has_pressure      ? "given"
-                   : isnan(altitude) ? "standard, sea level"
-                                     : "standard at the lake's altitude",
-                   temperature - lee_celsius_zero,
-                   has_temperature ? "given" : "assumed");
-    return lee_air_density(pressure, temperature);
-}
+#include "series/air.h"
 
 static double highest_return_flow(const lee_problem *problem,
                                   const lee_setting *setting) {
@@ -138,7 +109,8 @@ lee_status lee_setting_init(const lee_problem *problem, double time,
             lee_air_density_of(&problem->air, lake->altitude, sizeof how, how),
         .water_density = lake->water_density,
         .gravity = lake->gravity,
-        .air_viscosity = lee_air_viscosity(air_temperature(&problem->air)),
+        .air_viscosity =
+            lee_air_viscosity(lee_air_temperature_of(&problem->air)),
     };
     setting->lake = lee_profile_summary(&lake->profile, setting->still_water);
     if (!(setting->lake.volume > 0.0)) {

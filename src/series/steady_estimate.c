@@ -4,6 +4,7 @@
 
 #include "base/constants.h"
 #include "leewater/series.h"
+#include "series/air.h"
 #include "series/members.h"
 #include "series/setting.h"
 
@@ -62,8 +63,9 @@ static lee_status solve_all(const lee_problem *problem,
     const double from = lee_exposure_from(&problem->exposure, wind->from);
     for (size_t i = 0; i < all->count; i++) {
         double pull[2];
-        lee_wind_components(lee_pull_of(&range, member[i].pull), from, &pull[0],
-                            &pull[1]);
+        lee_wind_components((1.0 - problem->ice) *
+                                lee_pull_of(&range, member[i].pull),
+                            from, &pull[0], &pull[1]);
         const lee_status status = solve_member(problem, setting, &member[i],
                                                pull, &all->steady[i], error);
         if (status != LEE_OK) {
@@ -324,8 +326,8 @@ static lee_status tell_wind(const lee_problem *problem,
     lee_drag_input in = setting->fluids;
     in.speed = wind->speed;
     wind->coefficient = lee_drag_coefficient(&setting->drag, &in, NULL, NULL);
-    wind->stress =
-        in.air_density * wind->coefficient * wind->speed * wind->speed;
+    wind->stress = (1.0 - problem->ice) * in.air_density * wind->coefficient *
+                   wind->speed * wind->speed;
     lee_status status = lee_setting_warn_of_drag(problem, setting, wind->speed,
                                                  &wind->warnings, error);
     if (status == LEE_OK) {
@@ -451,6 +453,10 @@ lee_status lee_estimate_steady(const lee_problem *problem,
         status = warn_of_levels(problem, &setting, result, error);
     }
     lee_setting_free(&setting);
+    if (status == LEE_OK) {
+        status = lee_air_tell(problem, NULL, &result->method, &result->warnings,
+                              error);
+    }
     if (status != LEE_OK) {
         lee_steady_result_free(result);
     }

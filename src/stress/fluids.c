@@ -27,6 +27,43 @@ double lee_air_density(double pressure, double temperature) {
     return pressure / (lee_dry_air_gas_constant * temperature);
 }
 
+/* Share of vapour in moist air: saturation pressure and enhancement factor of
+ * CIPM-2007, appendix A. */
+static double share_of_vapour(double p, double temperature, double humidity) {
+    const double t = temperature - lee_celsius_zero;
+    const double saturation =
+        exp(temperature * (1.2378847e-5 * temperature - 1.9121316e-2) +
+            33.93711047 - 6.3431645e3 / temperature);
+    const double enhancement = 1.00062 + 3.14e-8 * p + 5.6e-7 * t * t;
+    return humidity * enhancement * saturation / p;
+}
+
+/* Z of CIPM-2007; its last term from memory (3e-6 kg m-3 at most). */
+static double compressibility(double p, double temperature, double x) {
+    const double t = temperature - lee_celsius_zero;
+    const double ratio = p / temperature;
+    const double first = 1.58123e-6 + t * (-2.9331e-8 + 1.1043e-10 * t) +
+                         x * (5.707e-6 - 2.051e-8 * t) +
+                         x * x * (1.9898e-4 - 2.376e-6 * t);
+    const double second = 1.83e-11 - 0.765e-8 * x * x;
+    return 1.0 - ratio * (first - ratio * second);
+}
+
+double lee_moist_air_density(double pressure, double temperature,
+                             double humidity) {
+    const double gas_constant = 8.314472;  /* J mol-1 K-1 */
+    const double dry_mass = 28.96546e-3;   /* kg mol-1, 400 ppm of CO2 */
+    const double water_mass = 18.01528e-3; /* kg mol-1 */
+    if (!(pressure > 0.0 && temperature > 0.0 && humidity >= 0.0 &&
+          humidity <= 1.0)) {
+        return NAN;
+    }
+    const double x = share_of_vapour(pressure, temperature, humidity);
+    const double z = compressibility(pressure, temperature, x);
+    return pressure * dry_mass / (z * gas_constant * temperature) *
+           (1.0 - x * (1.0 - water_mass / dry_mass));
+}
+
 double lee_standard_pressure(double altitude) {
     if (!(altitude >= -500.0 && altitude <= 9000.0)) {
         return NAN;

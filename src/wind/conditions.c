@@ -96,16 +96,12 @@ static double value_at(request r, const double *column) {
     return NAN;
 }
 
-lee_wind_conditions lee_wind_conditions_at(const lee_wind_record *record,
-                                           const lee_gap_rule *rule,
-                                           int64_t step, double t,
-                                           size_t *hint) {
-    if (record->n == 0 || isnan(t)) {
-        return (lee_wind_conditions){NAN, NAN, NAN, NAN, NAN};
-    }
+/* The record has a sample and t is a time. */
+static request ask(const lee_wind_record *record, const lee_gap_rule *rule,
+                   int64_t step, double t, size_t *hint) {
     const lee_wind_piece whole = {0, record->n};
     *hint = lee_wind_locate(record, &whole, t, *hint);
-    const request r = {
+    return (request){
         .record = record,
         .step = step,
         .largest = rule->largest,
@@ -113,6 +109,26 @@ lee_wind_conditions lee_wind_conditions_at(const lee_wind_record *record,
         .place = *hint,
         .horizon = (double)rule->largest + (double)step,
     };
+}
+
+/* NOLINTNEXTLINE(readability-function-size): the five of a look-up */
+double lee_wind_column_at(const lee_wind_record *record, const double *column,
+                          const lee_gap_rule *rule, int64_t step, double t,
+                          size_t *hint) {
+    if (record->n == 0 || isnan(t)) {
+        return NAN;
+    }
+    return value_at(ask(record, rule, step, t, hint), column);
+}
+
+lee_wind_conditions lee_wind_conditions_at(const lee_wind_record *record,
+                                           const lee_gap_rule *rule,
+                                           int64_t step, double t,
+                                           size_t *hint) {
+    if (record->n == 0 || isnan(t)) {
+        return (lee_wind_conditions){NAN, NAN, NAN, NAN, NAN};
+    }
+    const request r = ask(record, rule, step, t, hint);
     return (lee_wind_conditions){
         .pressure = value_at(r, record->pressure),
         .air_temperature = value_at(r, record->air_temperature),

@@ -121,6 +121,41 @@ static void air_density_stands_alone(void **state) {
                 "each other in 'stress'");
 }
 
+static void moist_air_and_ice_are_read_in_their_units(void **state) {
+    lee_case c = read_case(state, LAKE
+                           "stress: {air_pressure: 970 hPa, air_temperature: "
+                           "-4 degC, humidity: 85 percent, ice: 0.3}\n");
+    assert_near(c.problem.air.pressure, 97000.0, 1e-9);
+    assert_near(c.problem.air.temperature, 269.15, 1e-9);
+    assert_near(c.problem.air.humidity, 0.85, 1e-12);
+    assert_near(c.problem.ice, 0.3, 1e-12);
+    lee_case_free(&c);
+}
+
+static void a_case_without_them_has_dry_air_and_no_ice(void **state) {
+    lee_case c = read_case(state, LAKE);
+    assert_true(isnan(c.problem.air.humidity));
+    assert_near(c.problem.ice, 0.0, 0.0);
+    lee_case_free(&c);
+}
+
+static void humidity_and_ice_are_shares(void **state) {
+    static const case_slip slips[] = {
+        SLIP(LAKE "stress: {humidity: 120 percent}\n",
+             "a.yaml:4:20: 'stress.humidity' is '120 percent'; expected 0 to "
+             "1"),
+        SLIP(LAKE "stress: {ice: -5 percent}\n",
+             "a.yaml:4:15: 'stress.ice' is '-5 percent'; expected 0 to 1"),
+        SLIP(LAKE "stress: {ice: 30 cm}\n",
+             "a.yaml:4:15: 'stress.ice' cannot be read: unit 'cm' cannot be "
+             "converted to a plain number"),
+        SLIP(LAKE "stress: {air_density: 1.2 kg m-3, humidity: 0.8}\n",
+             "a.yaml:4:35: 'air_density' and 'humidity' exclude each other in "
+             "'stress'"),
+    };
+    assert_all_told(state, slips);
+}
+
 static void a_return_flow_below_one_is_refused(void **state) {
     assert_told(state, LAKE "stress: {return_flow: 0.9}\n",
                 "a.yaml:4:23: 'stress.return_flow' is '0.9'; expected "
@@ -138,6 +173,9 @@ int main(void) {
         CASE_TEST(a_bad_table_is_told_with_its_line),
         CASE_TEST(a_table_without_a_unit_of_speed_is_refused),
         CASE_TEST(air_density_stands_alone),
+        CASE_TEST(moist_air_and_ice_are_read_in_their_units),
+        CASE_TEST(a_case_without_them_has_dry_air_and_no_ice),
+        CASE_TEST(humidity_and_ice_are_shares),
         CASE_TEST(a_return_flow_below_one_is_refused),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
