@@ -173,8 +173,9 @@ void lee_nc_put_stations(lee_netcdf_out *out, const lee_nc_stations *stations,
 }
 
 const char *lee_nc_station_coordinates(const lee_nc_stations *stations) {
-    return stations->longitude >= 0 ? "lat lon station_name station_chainage"
-                                    : "station_name station_chainage";
+    /* The chainage is left out, though CF would allow it: CDO warns of a
+     * coordinate that is no longitude, latitude, height or time. */
+    return stations->longitude >= 0 ? "lat lon station_name" : "station_name";
 }
 
 int lee_nc_define_datum(lee_netcdf_out *out, const lee_lake *lake) {

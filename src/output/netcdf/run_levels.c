@@ -1,5 +1,6 @@
 /* run_levels.c - level series at stations as NetCDF: CF discrete sampling
- * geometry, orthogonal (CF Conventions 9.3.1, H.2.1). */
+ * geometry, orthogonal (CF Conventions 9.3.1, H.2.1). Time stands first: CDO
+ * reads no variable in which it does not. */
 #include "output/netcdf/levels.h"
 
 #include <math.h>
@@ -124,8 +125,8 @@ static void define_series(sheet *to, int time_dimension) {
     const size_t n = to->result->n;
     const lee_netcdf_shape shape = {
         .dimensions = 2,
-        .dimension = {to->stations.dimension, time_dimension       },
-        .chunk = {1,                      n < CHUNK ? n : CHUNK},
+        .dimension = {time_dimension,        to->stations.dimension},
+        .chunk = {n < CHUNK ? n : CHUNK, 1                     },
     };
     to->level = define_level(to, "water_level", "water level", &shape);
     if (to->has_range) {
@@ -301,19 +302,62 @@ static double direction_of(const lee_run_result *result, size_t i) {
     return degrees < 0.0 ? degrees + 360.0 : degrees;
 }
 
-static void put_station(sheet *to, size_t i) {
-    const lee_station_series *series = &to->result->station[i];
-    const size_t start[] = {i, 0};
-    const size_t count[] = {1, to->result->n};
-    double value[SUMMARIES];
-    lee_netcdf_put_block(&to->out, to->level, start, count, series->level);
-    if (to->has_range) {
-        lee_netcdf_put_block(&to->out, to->low, start, count, series->low);
-        lee_netcdf_put_block(&to->out, to->high, start, count, series->high);
+typedef const double *level_of(const lee_station_series *series);
+
+static const double *middle_of(const lee_station_series *series) {
+    return series->level;
+}
+
+static const double *low_of(const lee_station_series *series) {
+    return series->low;
+}
+
+static const double *high_of(const lee_station_series *series) {
+    return series->high;
+}
+
+/* Writes a level of all stations, station by station within a time: whole
+ * chunks of times, so that none is packed twice. `block` has room for them. */
+static void put_levels(sheet *to, int variable, level_of *of, double block[]) {
+    const lee_run_result *result = to->result;
+    const size_t stations = result->station_count;
+    for (size_t at = 0; at < result->n; at += CHUNK) {
+        const size_t left = result->n - at;
+        const size_t start[] = {at, 0};
+        const size_t count[] = {left < CHUNK ? left : CHUNK, stations};
+        for (size_t i = 0; i < stations; i++) {
+            const double *level = of(&result->station[i]);
+            for (size_t t = 0; t < count[0]; t++) {
+                block[t * stations + i] = level[at + t];
+            }
+        }
+        lee_netcdf_put_block(&to->out, variable, start, count, block);
     }
-    summarise(series, value);
+}
+
+static lee_status put_series(sheet *to, lee_error *error) {
+    const size_t n = to->result->n < CHUNK ? to->result->n : CHUNK;
+    double *block = calloc(n * to->result->station_count, sizeof *block);
+    if (block == NULL) {
+        return lee_fail(error, LEE_ERR_MEMORY,
+                        "no room for %zu times of %zu stations", n,
+                        to->result->station_count);
+    }
+    put_levels(to, to->level, middle_of, block);
+    if (to->has_range) {
+        put_levels(to, to->low, low_of, block);
+        put_levels(to, to->high, high_of, block);
+    }
+    free(block);
+    return LEE_OK;
+}
+
+static void put_station(sheet *to, size_t i) {
+    const size_t one = 1;
+    double value[SUMMARIES];
+    summarise(&to->result->station[i], value);
     for (size_t k = 0; k < SUMMARIES; k++) {
-        lee_netcdf_put_block(&to->out, to->summary[k], start, count, &value[k]);
+        lee_netcdf_put_block(&to->out, to->summary[k], &i, &one, &value[k]);
     }
 }
 
@@ -332,7 +376,7 @@ static void put_threshold(sheet *to, size_t row, size_t station,
     }
 }
 
-static void put_values(sheet *to) {
+static lee_status put_values(sheet *to, lee_error *error) {
     size_t row = 0;
     const lee_run_result *result = to->result;
     lee_nc_put_stations(&to->out, &to->stations, &to->from->problem);
@@ -351,6 +395,7 @@ static void put_values(sheet *to) {
             put_threshold(to, row++, i, &series->exceedance[k]);
         }
     }
+    return put_series(to, error);
 }
 
 lee_status lee_netcdf_run(const lee_target *target, const lee_case *from,
@@ -374,12 +419,16 @@ lee_status lee_netcdf_run(const lee_target *target, const lee_case *from,
     };
     const size_t values =
         result->n * result->station_count * (to.has_range ? 3 : 1);
-    const lee_status status = lee_netcdf_create(target->path, target->force,
-                                                values > large, &to.out, error);
+    lee_status status = lee_netcdf_create(target->path, target->force,
+                                          values > large, &to.out, error);
     if (status != LEE_OK) {
         return status;
     }
     define(&to, &about, target->date);
-    put_values(&to);
+    status = put_values(&to, error);
+    if (status != LEE_OK) {
+        lee_netcdf_discard(&to.out);
+        return status;
+    }
     return lee_netcdf_commit(&to.out, error);
 }

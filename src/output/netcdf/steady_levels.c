@@ -118,7 +118,7 @@ static void define_levels(sheet *to, int wind) {
     };
     const lee_netcdf_shape shape = {
         .dimensions = 2,
-        .dimension = {to->stations.dimension, wind},
+        .dimension = {wind, to->stations.dimension},
     };
     for (size_t k = 0; k < 3; k++) {
         const lee_nc_level level = {
@@ -176,7 +176,7 @@ static void put_wind(sheet *to, size_t row) {
     for (size_t i = 0; i < to->result->station_count; i++) {
         const lee_ranged *level = &wind->station[i].level;
         const double value[] = {level->value, level->low, level->high};
-        const size_t start[] = {i, row};
+        const size_t start[] = {row, i};
         const size_t count[] = {1, 1};
         for (size_t k = 0; k < 3; k++) {
             lee_netcdf_put_block(&to->out, to->level[k], start, count,
