@@ -54,6 +54,7 @@ typedef struct lee_netcdf_shape {
     int dimension[LEE_NETCDF_MOST_DIMENSIONS];
     size_t chunk[LEE_NETCDF_MOST_DIMENSIONS]; /* of a large file; 0: the
                                                   library's own choice */
+    double fill; /* stands for NaN; 0: the library's own value */
 } lee_netcdf_shape;
 
 /* Defines a variable. Numbers that can be missing get a _FillValue, which

@@ -124,7 +124,7 @@ int lee_netcdf_variable(lee_netcdf_out *out, const char *name,
         store(out, variable, name, shape);
     }
     if (may_miss && shape->kind == LEE_NETCDF_DOUBLE) {
-        const double fill = NC_FILL_DOUBLE;
+        const double fill = shape->fill != 0.0 ? shape->fill : NC_FILL_DOUBLE;
         keep(out,
              nc_put_att_double(out->id, variable, _FillValue, NC_DOUBLE, 1,
                                &fill),

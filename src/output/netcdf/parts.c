@@ -233,6 +233,10 @@ int lee_nc_define_height(lee_netcdf_out *out) {
     return id;
 }
 
+/* Stands for a time that is not: in the year -1199, which no record has, and
+ * still a time. Readers of dates choke on the library's own value. */
+static const double no_time = -99999999999.0; /* s since 1970 */
+
 int lee_nc_define_time(lee_netcdf_out *out, const char *name,
                        const char *long_name, const lee_netcdf_shape *shape,
                        bool is_axis) {
@@ -244,7 +248,9 @@ int lee_nc_define_time(lee_netcdf_out *out, const char *name,
         .content = is_axis ? "coordinate" : "modelResult",
         .may_miss = !is_axis,
     };
-    const int id = lee_nc_define(out, &time, shape);
+    lee_netcdf_shape timed = *shape;
+    timed.fill = no_time;
+    const int id = lee_nc_define(out, &time, &timed);
     lee_netcdf_put_text(out, id, "calendar", "proleptic_gregorian");
     lee_netcdf_put_text(out, id, "axis", is_axis ? "T" : NULL);
     return id;
