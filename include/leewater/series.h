@@ -266,6 +266,12 @@ typedef struct lee_station_series {
     lee_exceedance *exceedance;
 } lee_station_series;
 
+/* Least depth over the station's own bed, m; NaN when it has none, when the
+ * level falls to it, or when the section falls dry: its level is not known
+ * then. */
+double lee_least_depth(const lee_station *station,
+                       const lee_station_series *series);
+
 typedef struct lee_run_options {
     bool has_range;     /* run the members of the range: on by default */
     bool keep_range;    /* keep low and high series */

@@ -170,9 +170,11 @@ void lee_key_read_mapping(lee_case_reader *reader, const lee_yaml_node *node,
                           void *into) {
     if (node->kind != LEE_YAML_MAPPING) {
         char text[LEE_PROBLEM_TEXT];
-        (void)snprintf(text, sizeof text, "%s%s%s should hold keys, but is %s",
-                       where[0] == '\0' ? "the case file" : "'", where,
-                       where[0] == '\0' ? "" : "'", lee_key_kind(node));
+        const bool is_whole = where[0] == '\0';
+        (void)snprintf(
+            text, sizeof text, "%s%s%s should hold keys%s, but is %s",
+            is_whole ? "the case file" : "'", where, is_whole ? "" : "'",
+            is_whole ? " such as 'lake:' and 'wind:'" : "", lee_key_kind(node));
         add_problem(reader, node->line, node->column, text);
         return;
     }

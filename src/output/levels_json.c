@@ -168,6 +168,20 @@ static void put_residual(lee_json *json, const lee_station_series *series) {
     }
 }
 
+static void put_least_depth(lee_json *json, const lee_station *station,
+                            const lee_station_series *series) {
+    const double depth = lee_least_depth(station, series);
+    if (isnan(station->bed)) {
+        return;
+    }
+    lee_json_put_number(json, "least_depth_m", depth);
+    if (isnan(depth)) {
+        lee_json_put_text(json, "least_depth_reason",
+                          series->dry_time > 0.0 ? "the section falls dry"
+                                                 : "its bed falls dry");
+    }
+}
+
 static void put_station_series(lee_json *json, const lee_station *station,
                                const lee_station_series *series) {
     const bool is_wet = !isnan(series->max.value);
@@ -178,6 +192,7 @@ static void put_station_series(lee_json *json, const lee_station *station,
     lee_json_put_time(json, "max_time", is_wet, series->max_time);
     lee_json_put_ranged(json, "min_m", "min_range_m", &series->min);
     lee_json_put_time(json, "min_time", is_wet, series->min_time);
+    put_least_depth(json, station, series);
     lee_json_put_number(json, "dry_s", series->dry_time);
     put_residual(json, series);
     lee_json_open_list(json, "thresholds");
@@ -185,6 +200,22 @@ static void put_station_series(lee_json *json, const lee_station *station,
         put_exceedance(json, &series->exceedance[i]);
     }
     lee_json_close(json);
+    lee_json_close(json);
+}
+
+static void put_strongest(lee_json *json, const lee_run_result *result) {
+    const bool blows = result->strongest > 0.0;
+    lee_json_open_object(json, "strongest_wind");
+    lee_json_put_number(json, "speed_10_m_over_water_m_s", result->strongest);
+    if (blows) {
+        lee_json_put_degrees(json, "from_degree", result->strongest_from);
+    } else {
+        lee_json_put_number(json, "from_degree", NAN);
+    }
+    lee_json_put_time(json, "time", blows, result->strongest_time);
+    if (!blows) {
+        lee_json_put_text(json, "reason", "calm throughout");
+    }
     lee_json_close(json);
 }
 
@@ -214,6 +245,7 @@ lee_status lee_json_run(FILE *stream, const lee_case *from,
     lee_json_put_time(&json, "to", result->n > 0,
                       result->n > 0 ? result->time[result->n - 1] : 0);
     lee_json_put_count(&json, "times", result->n);
+    put_strongest(&json, result);
     lee_json_open_list(&json, "stations");
     for (size_t i = 0; i < result->station_count; i++) {
         put_station_series(&json, &from->problem.station[i],

@@ -68,6 +68,25 @@ static void print_exceedance(const lee_printer *to,
                   lee_show_duration(seen->total).text, end.text);
 }
 
+static void print_least_depth(const lee_printer *to, const lee_station *station,
+                              const lee_station_series *series) {
+    const double depth = lee_least_depth(station, series);
+    if (isnan(station->bed) || isnan(series->min.value)) {
+        return;
+    }
+    if (!isnan(depth)) {
+        lee_print_row(to, "least depth", "%s over its bed",
+                      lee_show_length(to, depth).text);
+        return;
+    }
+    if (series->dry_time > 0.0) {
+        lee_print_row(to, "least depth", "none, the section falls dry");
+        return;
+    }
+    lee_print_row(to, "least depth", "none, its bed of %s falls dry",
+                  lee_show_length(to, station->bed).text);
+}
+
 static void print_station(const lee_printer *to, const lee_station *station,
                           const lee_station_series *series) {
     (void)fputc('\n', to->stream);
@@ -75,11 +94,7 @@ static void print_station(const lee_printer *to, const lee_station *station,
                        lee_show_distance(to, station->at).text);
     print_extreme(to, "highest", &series->max, series->max_time);
     print_extreme(to, "lowest", &series->min, series->min_time);
-    if (!isnan(station->bed) && !isnan(series->min.value)) {
-        lee_print_row(
-            to, "least depth", "%s over its bed",
-            lee_show_length(to, series->min.value - station->bed).text);
-    }
+    print_least_depth(to, station, series);
     for (size_t i = 0; i < series->exceedance_count; i++) {
         print_exceedance(to, &series->exceedance[i]);
     }

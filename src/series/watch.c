@@ -211,3 +211,9 @@ lee_status lee_watch_tell(const lee_watched_station *seen,
     }
     return LEE_OK;
 }
+
+double lee_least_depth(const lee_station *station,
+                       const lee_station_series *series) {
+    const double depth = series->min.value - station->bed;
+    return depth > 0.0 && !(series->dry_time > 0.0) ? depth : NAN;
+}

@@ -54,10 +54,11 @@ static void a_required_key_is_missed(void **state) {
 static void a_value_of_the_wrong_kind_is_told(void **state) {
     static const case_slip slips[] = {
         SLIP("- lake\n",
-             "a.yaml:1:1: the case file should hold keys, but is a list"),
+             "a.yaml:1:1: the case file should hold keys such as 'lake:' and "
+             "'wind:', but is a list"),
         SLIP("lake\n",
-             "a.yaml:1:1: the case file should hold keys, but is a single "
-             "value"),
+             "a.yaml:1:1: the case file should hold keys such as 'lake:' and "
+             "'wind:', but is a single value"),
         SLIP("lake: 3 m\n",
              "a.yaml:1:7: 'lake' should hold keys, but is a single value"),
         SLIP(LAKE "  altitude: [3 m]\n",

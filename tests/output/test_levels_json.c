@@ -136,6 +136,56 @@ static void a_run_has_extremes_with_times_and_ranges(void **state) {
     json_decref(root);
 }
 
+static void a_run_names_its_strongest_wind(void **state) {
+    (void)state;
+    hand_made made;
+    make(&made);
+    json_t *root = run_of(&made);
+    json_t *wind = json_object_get(root, "strongest_wind");
+    assert_near(number(wind, "speed_10_m_over_water_m_s"), 23.0, 1e-9);
+    assert_near(number(wind, "from_degree"), 243.0, 1e-6);
+    assert_string_equal(text(wind, "time"), "2031-01-14T00:19:00Z");
+    json_decref(root);
+}
+
+static void a_run_in_a_calm_has_no_strongest_wind(void **state) {
+    (void)state;
+    hand_made made;
+    make(&made);
+    made.run.strongest = 0.0;
+    json_t *root = run_of(&made);
+    json_t *wind = json_object_get(root, "strongest_wind");
+    assert_near(number(wind, "speed_10_m_over_water_m_s"), 0.0, 0.0);
+    assert_true(json_is_null(json_object_get(wind, "from_degree")));
+    assert_true(json_is_null(json_object_get(wind, "time")));
+    assert_string_equal(text(wind, "reason"), "calm throughout");
+    json_decref(root);
+}
+
+/* Lowest level 101.0 m over a bed at 99.1 m; the other station has no bed. */
+static void a_run_has_the_least_depth_over_a_stations_bed(void **state) {
+    (void)state;
+    hand_made made;
+    make(&made);
+    json_t *root = run_of(&made);
+    json_t *quay = item(root, "stations", 0);
+    assert_near(number(quay, "least_depth_m"), 1.9, 1e-9);
+    assert_null(json_object_get(item(root, "stations", 1), "least_depth_m"));
+    json_decref(root);
+}
+
+static void a_bed_that_falls_dry_has_a_reason_for_no_least_depth(void **state) {
+    (void)state;
+    hand_made made;
+    make(&made);
+    made.station[0].bed = 101.5;
+    json_t *root = run_of(&made);
+    json_t *quay = item(root, "stations", 0);
+    assert_true(json_is_null(json_object_get(quay, "least_depth_m")));
+    assert_string_equal(text(quay, "least_depth_reason"), "its bed falls dry");
+    json_decref(root);
+}
+
 static void a_threshold_that_was_reached_has_times(void **state) {
     (void)state;
     hand_made made;
@@ -268,6 +318,10 @@ int main(void) {
         cmocka_unit_test(a_wind_has_its_levels_with_ranges),
         cmocka_unit_test(a_dry_level_is_null_and_says_why),
         cmocka_unit_test(a_run_has_extremes_with_times_and_ranges),
+        cmocka_unit_test(a_run_names_its_strongest_wind),
+        cmocka_unit_test(a_run_in_a_calm_has_no_strongest_wind),
+        cmocka_unit_test(a_run_has_the_least_depth_over_a_stations_bed),
+        cmocka_unit_test(a_bed_that_falls_dry_has_a_reason_for_no_least_depth),
         cmocka_unit_test(a_threshold_that_was_reached_has_times),
         cmocka_unit_test(a_threshold_that_was_not_reached_has_none),
         cmocka_unit_test(an_own_error_that_was_left_out_is_null_with_a_reason),

@@ -74,6 +74,32 @@ static void a_station_with_a_bed_has_its_least_depth(void **state) {
     capture_free(&out);
 }
 
+/* The water beside it may stand lower than the bed at the station. */
+static void a_bed_above_the_lowest_level_has_no_least_depth(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    made.station[0].bed = 101.0;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "least depth       none, its bed of 101.000 m falls "
+                          "dry\n");
+    assert_lacks(text, "over its bed");
+    capture_free(&out);
+}
+
+static void a_section_that_falls_dry_has_no_least_depth(void **state) {
+    (void)state;
+    hand_made made;
+    captured out;
+    make(&made);
+    made.series[0].dry_time = 1.0;
+    const char *text = printed(&out, &made, LEE_UNITS_SI);
+    assert_contains(text, "least depth       none, the section falls dry\n");
+    assert_lacks(text, "over its bed");
+    capture_free(&out);
+}
+
 static void a_threshold_tells_first_time_durations_and_return(void **state) {
     (void)state;
     hand_made made;
@@ -197,6 +223,8 @@ int main(void) {
         cmocka_unit_test(a_low_end_that_falls_dry_is_told_as_dry),
         cmocka_unit_test(each_station_has_highest_and_lowest_with_their_times),
         cmocka_unit_test(a_station_with_a_bed_has_its_least_depth),
+        cmocka_unit_test(a_bed_above_the_lowest_level_has_no_least_depth),
+        cmocka_unit_test(a_section_that_falls_dry_has_no_least_depth),
         cmocka_unit_test(a_threshold_tells_first_time_durations_and_return),
         cmocka_unit_test(a_threshold_crossed_once_has_one_duration),
         cmocka_unit_test(a_threshold_that_is_never_left_says_so),
