@@ -95,4 +95,32 @@ lee_status lee_write_run(const lee_target *target, const lee_case *from,
 lee_status lee_check_target(const lee_target *target, const lee_case *from,
                             lee_error *error);
 
+/* The water along the axis at every output time of a run as NetCDF, written
+ * while the run goes on: memory holds one block of times. Levels at the nodes,
+ * transports and wind stress at the links of the channel, wind, still water,
+ * stations, thresholds, method (docs/formats.md). */
+typedef struct lee_field_file lee_field_file;
+
+/* Asks whether the target can be written and nothing more; `target->path` and
+ * `from` are borrowed until the file is freed.
+ * Errors: LEE_ERR_ARGUMENT for an ending other than .nc; LEE_ERR_FILE,
+ * LEE_ERR_MEMORY. */
+lee_status lee_field_file_new(const lee_target *target, const lee_case *from,
+                              lee_field_file **file, lee_error *error);
+
+/* For lee_run_options.take_field; field_user is the file.
+ * Errors: LEE_ERR_FILE, LEE_ERR_MEMORY. */
+lee_status lee_field_file_take(void *file, const lee_field *field,
+                               lee_error *error);
+
+/* Adds what is known when the run has ended and gives the file its name.
+ * Errors: LEE_ERR_FILE, LEE_ERR_MEMORY; LEE_ERR_ARGUMENT when the run was
+ * another one. */
+lee_status lee_field_file_finish(lee_field_file *file,
+                                 const lee_run_result *result,
+                                 lee_error *error);
+
+/* Without a finish nothing is left of the file. NULL is allowed. */
+void lee_field_file_free(lee_field_file *file);
+
 #endif

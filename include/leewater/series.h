@@ -272,6 +272,21 @@ typedef struct lee_station_series {
 double lee_least_depth(const lee_station *station,
                        const lee_station_series *series);
 
+/* Water along the axis at one output time of the estimate itself. The arrays
+ * belong to the run and hold for one call. */
+typedef struct lee_field {
+    const lee_channel *channel;
+    size_t index;            /* of the output time */
+    size_t count;            /* of output times */
+    int64_t time;            /* s since 1970 */
+    double still_water;      /* m above the datum */
+    double wind[2];          /* east, north; 10 m over open water, m s-1 */
+    const double *level;     /* [nodes] m above the datum; NaN where dry */
+    const double *transport; /* [links] m3 s-1 along growing chainage, mean of
+                                the step that ends there; 0 at a start      */
+    const double *stress; /* [links] of the wind, Pa along growing chainage */
+} lee_field;
+
 typedef struct lee_run_options {
     bool has_range;     /* run the members of the range: on by default */
     bool keep_range;    /* keep low and high series */
@@ -280,6 +295,11 @@ typedef struct lee_run_options {
      * to 1; false stops the run with LEE_ERR_INTERRUPTED. May be NULL. */
     bool (*keep_going)(void *user, double share);
     void *user;
+    /* Called at every output time, in order; a status that is not LEE_OK ends
+     * the run with it. May be NULL. */
+    lee_status (*take_field)(void *field_user, const lee_field *field,
+                             lee_error *error);
+    void *field_user;
 } lee_run_options;
 
 lee_run_options lee_run_options_default(void);

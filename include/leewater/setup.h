@@ -288,7 +288,9 @@ double lee_transient_time(const lee_transient *engine);
 const double *
 lee_transient_level(const lee_transient *engine); /* [nodes] m; bed where dry */
 const double *
-lee_transient_speed(const lee_transient *engine);         /* [links] m s-1 */
+lee_transient_speed(const lee_transient *engine); /* [links] m s-1 */
+/* [links] m3 s-1, mean of the last step taken; 0 before the first */
+const double *lee_transient_transport(const lee_transient *engine);
 double lee_transient_volume(const lee_transient *engine); /* m3 */
 /* m3 through held ends and poured, since the start */
 double lee_transient_inflow(const lee_transient *engine);

@@ -1,5 +1,6 @@
 /* cmd_run.c - "run": levels in time from a wind record or a storm. */
 #include <stdio.h>
+#include <string.h>
 
 #include "cli/commands.h"
 #include "cli/options.h"
@@ -12,6 +13,7 @@
 /* What to leave out or to add. */
 typedef struct run_choice {
     lee_target output;
+    const char *field; /* NULL: none */
     bool has_no_range;
     bool has_no_error;
     bool with_range; /* columns of low and high */
@@ -37,9 +39,25 @@ static lee_status show_levels(const void *what, const request *asked,
                                           asked->units, error);
 }
 
+/* The file that takes the field of the run, when one is wanted. */
+static lee_status open_field(const run_choice *choice, const lee_case *from,
+                             lee_run_options *options, lee_field_file **field,
+                             lee_error *error) {
+    lee_target target = choice->output;
+    target.path = choice->field;
+    if (target.path == NULL) {
+        return LEE_OK;
+    }
+    const lee_status status = lee_field_file_new(&target, from, field, error);
+    options->take_field = lee_field_file_take;
+    options->field_user = *field;
+    return status;
+}
+
 static lee_status run_case(const request *asked, const run_choice *choice,
                            const lee_case *from, lee_error *error) {
     progress at;
+    lee_field_file *field = NULL;
     outcome out = {.from = from};
     const delivery results = {&out, write_levels, show_levels};
     lee_run_options options = lee_run_options_default();
@@ -48,10 +66,17 @@ static lee_status run_case(const request *asked, const run_choice *choice,
     options.has_own_error = !choice->has_no_error;
     options.keep_going = progress_goes_on;
     options.user = &at;
+    lee_status status = open_field(choice, from, &options, &field, error);
+    if (status != LEE_OK) {
+        return status;
+    }
     progress_begin(&at, asked->command, asked->is_quiet);
-    lee_status status =
-        lee_estimate_run(&from->problem, &options, &out.result, error);
+    status = lee_estimate_run(&from->problem, &options, &out.result, error);
     progress_clear(&at);
+    if (status == LEE_OK && field != NULL) {
+        status = lee_field_file_finish(field, &out.result, error);
+    }
+    lee_field_file_free(field);
     if (status == LEE_ERR_INTERRUPTED) {
         return lee_fail(error, status, "interrupted; nothing was written");
     }
@@ -78,7 +103,12 @@ static lee_status check_run_choice(const request *asked, run_choice *choice,
                         "--%s adds columns to a file: name it with -o",
                         choice->with_range ? "range" : "with-wind");
     }
-    return check_choice(asked, &choice->output, error);
+    if (choice->field != NULL && has_file &&
+        strcmp(choice->field, choice->output.path) == 0) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "-o and --field name the same file, %s", choice->field);
+    }
+    return check_choice(asked, &choice->output, choice->field != NULL, error);
 }
 
 lee_status cmd_run(int argc, char *argv[], lee_error *error) {
@@ -91,6 +121,9 @@ lee_status cmd_run(int argc, char *argv[], lee_error *error) {
                     &choice.output.force),
         flag_option("range", "in FILE: low and high beside each level",
                     &choice.with_range),
+        text_option("field", "FILE.nc",
+                    "also write levels and currents along the axis",
+                    &choice.field),
         flag_option("with-wind", "in FILE: the wind at 10 m over water",
                     &choice.output.with_wind),
         flag_option("no-range", "faster: without the range",

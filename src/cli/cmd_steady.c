@@ -131,7 +131,7 @@ lee_status cmd_steady(int argc, char *argv[], lee_error *error) {
     if (status != LEE_OK || asked.is_done) {
         return status;
     }
-    status = check_choice(&asked, &output, error);
+    status = check_choice(&asked, &output, false, error);
     if (status == LEE_OK && other.directions > 0 && !isnan(other.from)) {
         status = lee_fail(error, LEE_ERR_ARGUMENT,
                           "--from and --scan exclude each other");

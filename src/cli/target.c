@@ -37,8 +37,8 @@ static lee_status find_date(int64_t *date, lee_error *error) {
 }
 
 lee_status check_choice(const request *asked, lee_target *output,
-                        lee_error *error) {
-    if (output->force && output->path == NULL) {
+                        bool has_other_file, lee_error *error) {
+    if (output->force && output->path == NULL && !has_other_file) {
         return lee_fail(error, LEE_ERR_ARGUMENT, "--force goes with -o FILE");
     }
     if (asked->is_json && is_stdout(output->path)) {

@@ -16,7 +16,7 @@ bool is_stdout(const char *path);
  * reproducible-builds.org), else now. A path of NULL is no file.
  * Errors: LEE_ERR_ARGUMENT. */
 lee_status check_choice(const request *asked, lee_target *output,
-                        lee_error *error);
+                        bool has_other_file, lee_error *error);
 
 /* A file that cannot be written, or that the case itself is read from: better
  * told before a long run than after. Errors: LEE_ERR_ARGUMENT, LEE_ERR_FILE. */

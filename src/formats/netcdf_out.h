@@ -76,8 +76,10 @@ void lee_netcdf_put_number(lee_netcdf_out *out, int variable, const char *name,
 void lee_netcdf_put_bytes(lee_netcdf_out *out, int variable, const char *name,
                           size_t n, const signed char value[]);
 
-/* Ends the definitions; data follows. */
-void lee_netcdf_end_definitions(lee_netcdf_out *out);
+/* Ends the definitions; data follows. `reserve` bytes stay free for attributes
+ * that are put later, after lee_netcdf_begin_definitions. */
+void lee_netcdf_end_definitions(lee_netcdf_out *out, size_t reserve);
+void lee_netcdf_begin_definitions(lee_netcdf_out *out);
 
 /* Writes a block: start[] and count[] by dimension, the last fastest. A
  * variable without dimensions takes one value. NaN becomes the fill value of
@@ -90,6 +92,12 @@ void lee_netcdf_put_block(lee_netcdf_out *out, int variable,
  * longer text is cut at a whole character. */
 void lee_netcdf_put_name(lee_netcdf_out *out, int variable, size_t index,
                          size_t length, const char *text);
+
+/* Tells a caller's own lack of memory to the file. */
+void lee_netcdf_lacks_memory(lee_netcdf_out *out);
+
+/* The first failure so far; LEE_OK when there is none. */
+lee_status lee_netcdf_failure(const lee_netcdf_out *out, lee_error *error);
 
 /* Closes, syncs, renames; on any failure so far there is no file.
  * Errors: the first that happened. */

@@ -36,6 +36,8 @@ typedef struct leg {
     double *at_stations; /* [stations] scratch */
     double *bed_at;      /* [stations] of the profile itself, m */
     double *poured;      /* [nodes] m3, scratch */
+    double *along_nodes; /* [nodes] scratch of a field */
+    double *along_links; /* [links] */
     double pool;         /* still water at the engine's time, m */
     double start_volume;
     double largest_loss;   /* |V - V0 - inflow|, m3 */
@@ -247,18 +249,55 @@ static void look(leg *l) {
                   time >= (double)l->span->judged_from);
 }
 
-/* Writes levels when `time` is an output time. */
-static void write_levels(leg *l, int64_t time) {
+/* Gives the water along the axis to who takes it. */
+static lee_status give_field(leg *l, int64_t time, lee_error *error) {
     const lee_course *course = l->course;
+    const lee_run_options *options = course->progress->options;
+    const double *level = lee_transient_level(l->engine);
+    const double dry_depth = course->problem->solver.dry_depth;
+    lee_field field = {
+        .channel = l->channel,
+        .index = l->next_output,
+        .count = course->time_count,
+        .time = time,
+        .still_water = l->pool,
+        .level = l->along_nodes,
+        .transport = lee_transient_transport(l->engine),
+        .stress = l->along_links,
+    };
+    double pull[2];
+    for (size_t i = 0; i < l->channel->nodes; i++) {
+        const bool is_dry = level[i] - l->channel->bed[i] < dry_depth;
+        l->along_nodes[i] = is_dry ? NAN : level[i];
+    }
+    const double now = lee_transient_time(l->engine);
+    lee_drive_wind(&l->drive, now, field.wind);
+    lee_drive_pull(&l->drive, field.wind, lee_drive_air(&l->drive, now), pull);
+    for (size_t i = 0; i < l->channel->links; i++) {
+        l->along_links[i] =
+            (pull[0] * l->drive.sine[i] + pull[1] * l->drive.cosine[i]) /
+            course->setting->return_flow;
+    }
+    return options->take_field(options->field_user, &field, error);
+}
+
+/* Writes levels when `time` is an output time. */
+static lee_status write_levels(leg *l, int64_t time, lee_error *error) {
+    const lee_course *course = l->course;
+    lee_status status = LEE_OK;
     if (l->next_output >= course->time_count ||
         course->time[l->next_output] != time) {
-        return;
+        return status;
     }
     audit(l);
     for (size_t i = 0; course->level != NULL && i < course->watch->count; i++) {
         course->level[i][l->next_output] = l->at_stations[i];
     }
+    if (course->gives_field && course->progress->options->take_field != NULL) {
+        status = give_field(l, time, error);
+    }
     l->next_output++;
+    return status;
 }
 
 /* Steps to `end`; where the engine's own halvings do not suffice, in four
@@ -332,17 +371,16 @@ static lee_status run_leg(leg *l, lee_error *error) {
         l->next_output++;
     }
     look(l);
-    write_levels(l, l->span->from);
-    for (size_t i = 1; i < l->break_count; i++) {
-        const lee_status status =
-            go_to(l, l->breaks[i - 1], l->breaks[i], error);
-        if (status != LEE_OK) {
-            return status;
+    lee_status status = write_levels(l, l->span->from, error);
+    for (size_t i = 1; i < l->break_count && status == LEE_OK; i++) {
+        status = go_to(l, l->breaks[i - 1], l->breaks[i], error);
+        if (status == LEE_OK) {
+            status = write_levels(l, l->breaks[i], error);
         }
-        write_levels(l, l->breaks[i]);
     }
     audit(l);
-    return tell_progress(l->course->progress, error);
+    return status == LEE_OK ? tell_progress(l->course->progress, error)
+                            : status;
 }
 
 static lee_transient_options engine_options(const lee_course *course) {
@@ -376,7 +414,10 @@ static lee_status prepare_leg(leg *l, const lee_profile *profile,
     l->at_stations = calloc(course->watch->count + 1, sizeof(double));
     l->bed_at = calloc(course->watch->count + 1, sizeof(double));
     l->poured = calloc(l->channel->nodes, sizeof *l->poured);
-    if (l->at_stations == NULL || l->bed_at == NULL || l->poured == NULL) {
+    l->along_nodes = calloc(l->channel->nodes, sizeof *l->along_nodes);
+    l->along_links = calloc(l->channel->links, sizeof *l->along_links);
+    if (l->at_stations == NULL || l->bed_at == NULL || l->poured == NULL ||
+        l->along_nodes == NULL || l->along_links == NULL) {
         return lee_fail(error, LEE_ERR_MEMORY, "no room for stations");
     }
     for (size_t i = 0; i < course->watch->count; i++) {
@@ -411,6 +452,8 @@ static lee_status run_span(const lee_course *course, const lee_span *span,
     free(l.at_stations);
     free(l.bed_at);
     free(l.poured);
+    free(l.along_nodes);
+    free(l.along_links);
     return status;
 }
 

@@ -39,7 +39,8 @@ typedef struct lee_course {
     size_t time_count;
     const int64_t *time; /* [time_count] output times, increasing; all hit */
     lee_watch *watch;
-    double **level; /* [stations][time_count] out, NaN where dry; or NULL */
+    double **level;   /* [stations][time_count] out, NaN where dry; or NULL */
+    bool gives_field; /* to the caller of the run, when it takes one */
     lee_progress *progress;
 } lee_course;
 

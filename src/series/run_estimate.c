@@ -214,6 +214,7 @@ static lee_status run_main(workshop *shop, lee_watch *watch, double **level,
     lee_course course = course_of(shop, &shop->member[0]);
     course.watch = watch;
     course.level = level;
+    course.gives_field = true;
     watch->residual_from = shop->residual_from;
     watch->residual_to = shop->residual_to;
     lee_course_report report;

@@ -148,6 +148,7 @@ void lee_transient_start(lee_transient *engine, double t,
     }
     for (size_t f = 0; f < engine->links; f++) {
         now->speed[f] = 0.0;
+        engine->transport[f] = 0.0;
     }
     engine->time = t;
     engine->inflow = (lee_sum){0};
@@ -180,6 +181,10 @@ const double *lee_transient_level(const lee_transient *engine) {
 
 const double *lee_transient_speed(const lee_transient *engine) {
     return engine->now.speed;
+}
+
+const double *lee_transient_transport(const lee_transient *engine) {
+    return engine->transport;
 }
 
 double lee_transient_volume(const lee_transient *engine) {

@@ -44,7 +44,7 @@ static lee_status write_small(const char *path, bool is_large, double odd,
     lee_netcdf_put_text(&out, level, "units", "m");
     lee_netcdf_put_text(&out, LEE_NETCDF_GLOBAL, "title", "a\tb\xFFz");
     lee_netcdf_put_text(&out, LEE_NETCDF_GLOBAL, "absent", NULL);
-    lee_netcdf_end_definitions(&out);
+    lee_netcdf_end_definitions(&out, 0);
     const size_t start[] = {0, 0};
     const size_t count[] = {2, 3};
     const double values[] = {1.0, (double)NAN, 3.0, 4.0, 5.0, 6.0};

@@ -176,9 +176,15 @@ void lee_netcdf_put_bytes(lee_netcdf_out *out, int variable, const char *name,
     }
 }
 
-void lee_netcdf_end_definitions(lee_netcdf_out *out) {
+void lee_netcdf_end_definitions(lee_netcdf_out *out, size_t reserve) {
     if (is_usable(out)) {
-        keep(out, nc_enddef(out->id), "definitions");
+        keep(out, nc__enddef(out->id, reserve, 4, 0, 4), "definitions");
+    }
+}
+
+void lee_netcdf_begin_definitions(lee_netcdf_out *out) {
+    if (is_usable(out)) {
+        keep(out, nc_redef(out->id), "definitions");
     }
 }
 
@@ -268,6 +274,17 @@ void lee_netcdf_put_name(lee_netcdf_out *out, int variable, size_t index,
     }
     free(clean);
     free(padded);
+}
+
+void lee_netcdf_lacks_memory(lee_netcdf_out *out) {
+    keep(out, NC_ENOMEM, "memory");
+}
+
+lee_status lee_netcdf_failure(const lee_netcdf_out *out, lee_error *error) {
+    if (out->status != LEE_OK && error != NULL) {
+        *error = out->error;
+    }
+    return out->status;
 }
 
 lee_status lee_netcdf_commit(lee_netcdf_out *out, lee_error *error) {

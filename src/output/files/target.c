@@ -2,6 +2,8 @@
  * written. */
 #include <string.h>
 
+#include "output/files/target.h"
+
 #include "formats/atomic_file.h"
 #include "formats/regular_file.h"
 
@@ -71,15 +73,29 @@ static lee_status judge(const char *path, const lee_case *from,
     return status == LEE_OK ? check_stations(path, from, error) : status;
 }
 
-lee_status lee_check_target(const lee_target *target, const lee_case *from,
-                            lee_error *error) {
+static lee_status try_to_open(const lee_target *target, lee_error *error) {
     lee_atomic_file file = {0};
-    lee_status status = judge(target->path, from, error);
-    if (status == LEE_OK) {
-        status = lee_atomic_open(target->path, target->force, &file, error);
-    }
+    const lee_status status =
+        lee_atomic_open(target->path, target->force, &file, error);
     lee_atomic_discard(&file);
     return status;
+}
+
+lee_status lee_target_check_field(const lee_target *target,
+                                  const lee_case *from, lee_error *error) {
+    if (!is_netcdf(target->path)) {
+        return lee_fail(error, LEE_ERR_ARGUMENT,
+                        "%s: a field is written as .nc; name the file so",
+                        target->path);
+    }
+    const lee_status status = spare_inputs(target->path, from, error);
+    return status == LEE_OK ? try_to_open(target, error) : status;
+}
+
+lee_status lee_check_target(const lee_target *target, const lee_case *from,
+                            lee_error *error) {
+    const lee_status status = judge(target->path, from, error);
+    return status == LEE_OK ? try_to_open(target, error) : status;
 }
 
 lee_status lee_write_steady(const lee_target *target, const lee_case *from,

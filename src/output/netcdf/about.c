@@ -122,10 +122,23 @@ void lee_nc_put_about(lee_netcdf_out *out, const lee_nc_about *about,
     put_limits(out);
 }
 
-void lee_nc_put_coverage(lee_netcdf_out *out, int64_t first, int64_t last,
-                         int64_t step) {
+/* Step of the output times; 0 when they are uneven. */
+static int64_t even_step(const lee_run_result *result) {
+    const int64_t step = result->n > 1 ? result->time[1] - result->time[0] : 0;
+    for (size_t i = 2; i < result->n; i++) {
+        if (result->time[i] - result->time[i - 1] != step) {
+            return 0;
+        }
+    }
+    return step;
+}
+
+void lee_nc_put_run(lee_netcdf_out *out, const lee_run_result *result) {
     char text[LEE_TIME_TEXT];
     const int all = LEE_NETCDF_GLOBAL;
+    const int64_t first = result->time[0];
+    const int64_t last = result->time[result->n - 1];
+    const int64_t step = even_step(result);
     lee_netcdf_put_text(out, all, "time_coverage_start",
                         lee_time_format(first, text));
     lee_netcdf_put_text(out, all, "time_coverage_end",
@@ -136,4 +149,6 @@ void lee_nc_put_coverage(lee_netcdf_out *out, int64_t first, int64_t last,
         (void)snprintf(text, sizeof text, "PT%lldS", (long long)step);
         lee_netcdf_put_text(out, all, "time_coverage_resolution", text);
     }
+    lee_netcdf_put_number(out, all, "numerical_error_m",
+                          result->numerical_error);
 }

@@ -5,6 +5,8 @@
 #include <stdio.h>
 #include <string.h>
 
+#include "base/constants.h"
+
 int lee_nc_define(lee_netcdf_out *out, const lee_nc_variable *variable,
                   const lee_netcdf_shape *shape) {
     const int id =
@@ -254,4 +256,65 @@ int lee_nc_define_time(lee_netcdf_out *out, const char *name,
     lee_netcdf_put_text(out, id, "calendar", "proleptic_gregorian");
     lee_netcdf_put_text(out, id, "axis", is_axis ? "T" : NULL);
     return id;
+}
+
+int lee_nc_define_wind_speed(lee_netcdf_out *out,
+                             const lee_netcdf_shape *shape) {
+    static const lee_nc_variable speed = {
+        .name = "wind_speed",
+        .units = "m s-1",
+        .standard_name = "wind_speed",
+        .long_name = "wind speed at 10 m over open water",
+        .coordinates = "wind_height",
+        .content = "auxiliaryInformation",
+        .may_miss = true,
+    };
+    return lee_nc_define(out, &speed, shape);
+}
+
+int lee_nc_define_wind_direction(lee_netcdf_out *out,
+                                 const lee_netcdf_shape *shape) {
+    static const lee_nc_variable direction = {
+        .name = "wind_from_direction",
+        .units = "degree",
+        .standard_name = "wind_from_direction",
+        .long_name = "direction the wind blows from, clockwise from north",
+        .coordinates = "wind_height",
+        .content = "auxiliaryInformation",
+        .may_miss = true,
+    };
+    return lee_nc_define(out, &direction, shape);
+}
+
+double lee_nc_degrees(double radians) {
+    const double degrees = fmod(radians * 180.0 / lee_pi, 360.0);
+    return degrees < 0.0 ? degrees + 360.0 : degrees;
+}
+
+int lee_nc_define_spin_up(lee_netcdf_out *out, int time_dimension) {
+    static const lee_nc_variable spin_up = {
+        .name = "spin_up",
+        .standard_name = "status_flag",
+        .long_name = "does the level still feel the start at rest",
+        .content = "qualityInformation",
+    };
+    static const signed char values[] = {0, 1};
+    const lee_netcdf_shape shape = {
+        .kind = LEE_NETCDF_BYTE,
+        .dimensions = 1,
+        .dimension = {time_dimension},
+    };
+    const int id = lee_nc_define(out, &spin_up, &shape);
+    lee_netcdf_put_bytes(out, id, "flag_values", 2, values);
+    lee_netcdf_put_text(out, id, "flag_meanings", "settled spin_up");
+    return id;
+}
+
+void lee_nc_put_spin_up(lee_netcdf_out *out, int variable,
+                        const lee_run_result *result) {
+    for (size_t i = 0; i < result->n; i++) {
+        const size_t one = 1;
+        const double flag = result->is_spin_up[i] ? 1.0 : 0.0;
+        lee_netcdf_put_block(out, variable, &i, &one, &flag);
+    }
 }

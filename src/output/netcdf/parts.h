@@ -11,6 +11,9 @@
 #include "leewater/case.h"
 #include "leewater/series.h"
 
+/* Files of more values than this, 10 MB, are NetCDF-4 and deflated. */
+enum { LEE_NC_LARGE = 1250000 };
+
 /* What a file is about. Borrows everything. */
 typedef struct lee_nc_about {
     const lee_case *from;
@@ -19,17 +22,14 @@ typedef struct lee_nc_about {
     const char *command;       /* "run" */
     const char *title;         /* what it holds, when the case has no title */
     const char *summary;
-    double still_water; /* m above the datum */
 } lee_nc_about;
 
 /* Attributes of the whole; the date is the file's. */
 void lee_nc_put_about(lee_netcdf_out *out, const lee_nc_about *about,
                       int64_t date);
 
-/* First, last and step of the times held, as ACDD names them; step 0 when
- * they are uneven. */
-void lee_nc_put_coverage(lee_netcdf_out *out, int64_t first, int64_t last,
-                         int64_t step);
+/* Times that a run covers, as ACDD names them, and its own error. */
+void lee_nc_put_run(lee_netcdf_out *out, const lee_run_result *result);
 
 /* A variable with its units (NULL: none), names and coordinates. */
 typedef struct lee_nc_variable {
@@ -86,6 +86,34 @@ void lee_nc_put_scalar(lee_netcdf_out *out, int variable, double value);
 
 /* A height above ground of 10 m, the coordinate of winds. Its number. */
 int lee_nc_define_height(lee_netcdf_out *out);
+
+/* Winds of that height: numbers of their variables. */
+int lee_nc_define_wind_speed(lee_netcdf_out *out,
+                             const lee_netcdf_shape *shape);
+int lee_nc_define_wind_direction(lee_netcdf_out *out,
+                                 const lee_netcdf_shape *shape);
+
+/* Radians as degrees of [0, 360). */
+double lee_nc_degrees(double radians);
+
+/* Does the level at a time still feel the start at rest? */
+int lee_nc_define_spin_up(lee_netcdf_out *out, int time_dimension);
+void lee_nc_put_spin_up(lee_netcdf_out *out, int variable,
+                        const lee_run_result *result);
+
+/* The thresholds of all stations: station, level, side. {0} is none. */
+typedef struct lee_nc_thresholds {
+    size_t n;
+    int dimension;
+    int station;
+    int level;
+    int side;
+} lee_nc_thresholds;
+lee_nc_thresholds lee_nc_define_thresholds(lee_netcdf_out *out,
+                                           const lee_problem *problem);
+void lee_nc_put_thresholds(lee_netcdf_out *out,
+                           const lee_nc_thresholds *thresholds,
+                           const lee_problem *problem);
 
 /* Times as doubles since 1970 in the calendar of this library. */
 int lee_nc_define_time(lee_netcdf_out *out, const char *name,

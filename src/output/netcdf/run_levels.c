@@ -7,11 +7,7 @@
 #include <stdlib.h>
 #include <string.h>
 
-#include "base/constants.h"
 #include "output/netcdf/parts.h"
-
-/* Files of more values than this, 10 MB, are NetCDF-4 and deflated. */
-static const size_t large = 1250000;
 
 /* Times in a chunk of a large file. */
 enum { CHUNK = 8192 };
@@ -57,8 +53,6 @@ static void summarise(const lee_station_series *series,
 }
 
 static const number threshold_parts[] = {
-    {"threshold_station",    "1",  "number of its station, counted from 0"  },
-    {"threshold_level",      "m",  "threshold above the datum of levels"    },
     {"threshold_total",      "s",  "time that the level was past it in all" },
     {"threshold_longest",    "s",  "longest time that the level was past it"},
     {"threshold_times",      "1",  "separate occasions"                     },
@@ -73,7 +67,7 @@ typedef struct sheet {
     const lee_run_result *result;
     lee_nc_stations stations;
     bool has_range;
-    size_t thresholds;
+    lee_nc_thresholds thresholds;
     int time;
     int level;
     int low;
@@ -86,26 +80,7 @@ typedef struct sheet {
     int height;
     int summary[SUMMARIES];
     int threshold[THRESHOLD_PARTS];
-    int threshold_side;
 } sheet;
-
-static size_t count_thresholds(const lee_run_result *result) {
-    size_t count = 0;
-    for (size_t i = 0; i < result->station_count; i++) {
-        count += result->station[i].exceedance_count;
-    }
-    return count;
-}
-
-static int64_t even_step(const lee_run_result *result) {
-    const int64_t step = result->n > 1 ? result->time[1] - result->time[0] : 0;
-    for (size_t i = 2; i < result->n; i++) {
-        if (result->time[i] - result->time[i - 1] != step) {
-            return 0;
-        }
-    }
-    return step;
-}
 
 static int define_level(sheet *to, const char *name, const char *what,
                         const lee_netcdf_shape *shape) {
@@ -140,49 +115,6 @@ static void define_series(sheet *to, int time_dimension) {
         to->has_range ? "spin_up water_level_low water_level_high" : "spin_up");
 }
 
-static void define_wind(sheet *to, const lee_netcdf_shape *shape) {
-    static const lee_nc_variable speed = {
-        .name = "wind_speed",
-        .units = "m s-1",
-        .standard_name = "wind_speed",
-        .long_name = "wind speed at 10 m over open water",
-        .coordinates = "wind_height",
-        .content = "auxiliaryInformation",
-        .may_miss = true,
-    };
-    static const lee_nc_variable blows_from = {
-        .name = "wind_from_direction",
-        .units = "degree",
-        .standard_name = "wind_from_direction",
-        .long_name = "direction the wind blows from, clockwise from north",
-        .coordinates = "wind_height",
-        .content = "auxiliaryInformation",
-        .may_miss = true,
-    };
-    to->speed = lee_nc_define(&to->out, &speed, shape);
-    to->blows_from = lee_nc_define(&to->out, &blows_from, shape);
-    to->height = lee_nc_define_height(&to->out);
-}
-
-static void define_spin_up(sheet *to, int time_dimension) {
-    static const lee_nc_variable spin_up = {
-        .name = "spin_up",
-        .standard_name = "status_flag",
-        .long_name = "does the level still feel the start at rest",
-        .content = "qualityInformation",
-    };
-    static const signed char values[] = {0, 1};
-    const lee_netcdf_shape shape = {
-        .kind = LEE_NETCDF_BYTE,
-        .dimensions = 1,
-        .dimension = {time_dimension},
-    };
-    to->spin_up = lee_nc_define(&to->out, &spin_up, &shape);
-    lee_netcdf_put_bytes(&to->out, to->spin_up, "flag_values", 2, values);
-    lee_netcdf_put_text(&to->out, to->spin_up, "flag_meanings",
-                        "settled spin_up");
-}
-
 static int define_number(sheet *to, const number *is, const char *coordinates,
                          const lee_netcdf_shape *shape) {
     const lee_nc_variable variable = {
@@ -210,31 +142,15 @@ static void define_summaries(sheet *to) {
     }
 }
 
-static int define_side(sheet *to, const lee_netcdf_shape *shape) {
-    static const lee_nc_variable side = {
-        .name = "threshold_side",
-        .long_name = "does it count when the level goes over or under it",
-        .content = "referenceInformation",
-    };
-    static const signed char values[] = {0, 1};
-    lee_netcdf_shape bytes = *shape;
-    bytes.kind = LEE_NETCDF_BYTE;
-    const int id = lee_nc_define(&to->out, &side, &bytes);
-    lee_netcdf_put_bytes(&to->out, id, "flag_values", 2, values);
-    lee_netcdf_put_text(&to->out, id, "flag_meanings", "above below");
-    return id;
-}
-
 static void define_thresholds(sheet *to) {
-    if (to->thresholds == 0) {
+    to->thresholds = lee_nc_define_thresholds(&to->out, &to->from->problem);
+    if (to->thresholds.n == 0) {
         return;
     }
     const lee_netcdf_shape shape = {
         .dimensions = 1,
-        .dimension = {lee_netcdf_dimension(&to->out, "threshold",
-                                           to->thresholds)},
+        .dimension = {to->thresholds.dimension},
     };
-    to->threshold_side = define_side(to, &shape);
     for (size_t i = 0; i < THRESHOLD_PARTS; i++) {
         to->threshold[i] = define_number(to, &threshold_parts[i], NULL, &shape);
     }
@@ -249,8 +165,7 @@ static void define(sheet *to, const lee_nc_about *about, int64_t date) {
     const lee_lake *lake = &to->from->problem.lake;
     const lee_netcdf_shape scalar = {.dimensions = 0};
     lee_nc_put_about(&to->out, about, date);
-    lee_nc_put_coverage(&to->out, result->time[0], result->time[result->n - 1],
-                        even_step(result));
+    lee_nc_put_run(&to->out, result);
     to->stations = lee_nc_define_stations(&to->out, &to->from->problem, true);
     const lee_netcdf_shape times = {
         .dimensions = 1,
@@ -258,16 +173,16 @@ static void define(sheet *to, const lee_nc_about *about, int64_t date) {
     };
     to->time = lee_nc_define_time(&to->out, "time", "time", &times, true);
     define_series(to, times.dimension[0]);
-    define_spin_up(to, times.dimension[0]);
-    define_wind(to, &times);
+    to->spin_up = lee_nc_define_spin_up(&to->out, times.dimension[0]);
+    to->speed = lee_nc_define_wind_speed(&to->out, &times);
+    to->blows_from = lee_nc_define_wind_direction(&to->out, &times);
+    to->height = lee_nc_define_height(&to->out);
     to->still_water =
         lee_nc_define_level(&to->out, lake, &still_water, &scalar);
     to->datum = lee_nc_define_datum(&to->out, lake);
     define_summaries(to);
     define_thresholds(to);
-    lee_netcdf_put_number(&to->out, LEE_NETCDF_GLOBAL, "numerical_error_m",
-                          result->numerical_error);
-    lee_netcdf_end_definitions(&to->out);
+    lee_netcdf_end_definitions(&to->out, 0);
 }
 
 /* Writes one value a time, converted, in blocks. */
@@ -289,17 +204,12 @@ static double time_of(const lee_run_result *result, size_t i) {
     return (double)result->time[i];
 }
 
-static double spin_up_of(const lee_run_result *result, size_t i) {
-    return result->is_spin_up[i] ? 1.0 : 0.0;
-}
-
 static double speed_of(const lee_run_result *result, size_t i) {
     return result->speed[i];
 }
 
 static double direction_of(const lee_run_result *result, size_t i) {
-    const double degrees = fmod(result->from[i] * 180.0 / lee_pi, 360.0);
-    return degrees < 0.0 ? degrees + 360.0 : degrees;
+    return lee_nc_degrees(result->from[i]);
 }
 
 typedef const double *level_of(const lee_station_series *series);
@@ -361,16 +271,14 @@ static void put_station(sheet *to, size_t i) {
     }
 }
 
-static void put_threshold(sheet *to, size_t row, size_t station,
-                          const lee_exceedance *past) {
+static void put_threshold(sheet *to, size_t row, const lee_exceedance *past) {
     const size_t one = 1;
-    const double side = past->threshold.is_below ? 1.0 : 0.0;
     const double value[THRESHOLD_PARTS] = {
-        (double)station,     past->threshold.level,
-        past->total,         past->longest,
-        (double)past->times, past->is_reached ? (double)past->first_time : NAN,
+        past->total,
+        past->longest,
+        (double)past->times,
+        past->is_reached ? (double)past->first_time : NAN,
     };
-    lee_netcdf_put_block(&to->out, to->threshold_side, &row, &one, &side);
     for (size_t k = 0; k < THRESHOLD_PARTS; k++) {
         lee_netcdf_put_block(&to->out, to->threshold[k], &row, &one, &value[k]);
     }
@@ -381,7 +289,8 @@ static lee_status put_values(sheet *to, lee_error *error) {
     const lee_run_result *result = to->result;
     lee_nc_put_stations(&to->out, &to->stations, &to->from->problem);
     put_times(to, to->time, time_of);
-    put_times(to, to->spin_up, spin_up_of);
+    lee_nc_put_spin_up(&to->out, to->spin_up, result);
+    lee_nc_put_thresholds(&to->out, &to->thresholds, &to->from->problem);
     put_times(to, to->speed, speed_of);
     put_times(to, to->blows_from, direction_of);
     lee_nc_put_scalar(&to->out, to->still_water, result->still_water);
@@ -392,7 +301,7 @@ static lee_status put_values(sheet *to, lee_error *error) {
         const lee_station_series *series = &result->station[i];
         put_station(to, i);
         for (size_t k = 0; k < series->exceedance_count; k++) {
-            put_threshold(to, row++, i, &series->exceedance[k]);
+            put_threshold(to, row++, &series->exceedance[k]);
         }
     }
     return put_series(to, error);
@@ -409,18 +318,16 @@ lee_status lee_netcdf_run(const lee_target *target, const lee_case *from,
         .summary = "Levels at stations along the axis of a lake, computed "
                    "from its wind; each with the range of the estimate where "
                    "that was asked for. Planning estimates.",
-        .still_water = result->still_water,
     };
     sheet to = {
         .from = from,
         .result = result,
         .has_range = result->station[0].low != NULL,
-        .thresholds = count_thresholds(result),
     };
     const size_t values =
         result->n * result->station_count * (to.has_range ? 3 : 1);
-    lee_status status = lee_netcdf_create(target->path, target->force,
-                                          values > large, &to.out, error);
+    lee_status status = lee_netcdf_create(
+        target->path, target->force, values > LEE_NC_LARGE, &to.out, error);
     if (status != LEE_OK) {
         return status;
     }

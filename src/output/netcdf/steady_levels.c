@@ -2,10 +2,8 @@
  * one a station and wind. */
 #include "output/netcdf/levels.h"
 
-#include <math.h>
 #include <string.h>
 
-#include "base/constants.h"
 #include "output/netcdf/parts.h"
 
 #define AT(member) offsetof(lee_wind_estimate, member)
@@ -105,6 +103,8 @@ typedef struct sheet {
     lee_nc_stations stations;
     int number[NUMBERS];
     int level[3]; /* value, low, high */
+    lee_nc_thresholds thresholds;
+    int reached;
     int still_water;
     int datum;
     int height;
@@ -132,6 +132,30 @@ static void define_levels(sheet *to, int wind) {
     }
 }
 
+static void define_thresholds(sheet *to, int wind) {
+    static const lee_nc_variable reached = {
+        .name = "threshold_reached",
+        .long_name = "is the level past the threshold: the estimate, or only "
+                     "an end of its range",
+        .content = "modelResult",
+    };
+    static const signed char values[] = {LEE_REACH_NOT, LEE_REACH_RANGE,
+                                         LEE_REACH_VALUE};
+    to->thresholds = lee_nc_define_thresholds(&to->out, &to->from->problem);
+    if (to->thresholds.n == 0) {
+        return;
+    }
+    const lee_netcdf_shape shape = {
+        .kind = LEE_NETCDF_BYTE,
+        .dimensions = 2,
+        .dimension = {to->thresholds.dimension, wind},
+    };
+    to->reached = lee_nc_define(&to->out, &reached, &shape);
+    lee_netcdf_put_bytes(&to->out, to->reached, "flag_values", 3, values);
+    lee_netcdf_put_text(&to->out, to->reached, "flag_meanings",
+                        "no range_only yes");
+}
+
 static void define(sheet *to, const lee_nc_about *about, int64_t date) {
     static const lee_nc_level still_water = {
         .name = "still_water",
@@ -150,16 +174,29 @@ static void define(sheet *to, const lee_nc_about *about, int64_t date) {
         to->number[i] = lee_nc_define(&to->out, &numbers[i].is, &winds);
     }
     define_levels(to, winds.dimension[0]);
+    define_thresholds(to, winds.dimension[0]);
     to->height = lee_nc_define_height(&to->out);
     to->still_water =
         lee_nc_define_level(&to->out, lake, &still_water, &scalar);
     to->datum = lee_nc_define_datum(&to->out, lake);
-    lee_netcdf_end_definitions(&to->out);
+    lee_netcdf_end_definitions(&to->out, 0);
 }
 
-static double in_degrees(double radians) {
-    const double degrees = fmod(radians * 180.0 / lee_pi, 360.0);
-    return degrees < 0.0 ? degrees + 360.0 : degrees;
+/* How the level of each station stands to its thresholds, wind by wind. */
+static void put_reached(sheet *to, size_t wind) {
+    const lee_problem *problem = &to->from->problem;
+    const size_t count[] = {1, 1};
+    size_t row = 0;
+    for (size_t i = 0; i < problem->station_count; i++) {
+        const lee_station *station = &problem->station[i];
+        const lee_ranged *level = &to->result->wind[wind].station[i].level;
+        for (size_t k = 0; k < station->threshold_count; k++) {
+            const size_t start[] = {row++, wind};
+            const double reached =
+                lee_threshold_reach(&station->threshold[k], level);
+            lee_netcdf_put_block(&to->out, to->reached, start, count, &reached);
+        }
+    }
 }
 
 static void put_wind(sheet *to, size_t row) {
@@ -169,7 +206,7 @@ static void put_wind(sheet *to, size_t row) {
         double value;
         memcpy(&value, (const char *)wind + numbers[k].offset, sizeof value);
         if (numbers[k].is_angle) {
-            value = in_degrees(value);
+            value = lee_nc_degrees(value);
         }
         lee_netcdf_put_block(&to->out, to->number[k], &row, &one, &value);
     }
@@ -183,6 +220,7 @@ static void put_wind(sheet *to, size_t row) {
                                  &value[k]);
         }
     }
+    put_reached(to, row);
 }
 
 lee_status lee_netcdf_steady(const lee_target *target, const lee_case *from,
@@ -197,7 +235,6 @@ lee_status lee_netcdf_steady(const lee_target *target, const lee_case *from,
         .summary = "Set-up, set-down and levels at stations along the axis of "
                    "a lake in equilibrium with given winds, each with its "
                    "range. Planning estimates.",
-        .still_water = result->still_water,
     };
     sheet to = {.from = from, .result = result};
     const lee_status status =
@@ -207,6 +244,7 @@ lee_status lee_netcdf_steady(const lee_target *target, const lee_case *from,
     }
     define(&to, &about, target->date);
     lee_nc_put_stations(&to.out, &to.stations, &from->problem);
+    lee_nc_put_thresholds(&to.out, &to.thresholds, &from->problem);
     for (size_t i = 0; i < result->count; i++) {
         put_wind(&to, i);
     }
