@@ -26,9 +26,10 @@ case "${1:-}" in
 *) echo "usage: sh tests/run.sh [--all]" >&2 && exit 2 ;;
 esac
 
-need $build_packages binutils clang clang-format clang-tidy \
-    libclang-rt-14-dev libcmocka-dev netcdf-bin python3 python3-cftime \
-    python3-netcdf4 python3-numpy udunits-bin ${all:+valgrind} || exit 3
+need $build_packages binutils cdo clang clang-format clang-tidy \
+    libclang-rt-14-dev libcmocka-dev nco netcdf-bin python3 python3-cftime \
+    python3-netcdf4 python3-numpy python3-xarray udunits-bin \
+    ${all:+valgrind} || exit 3
 
 work=build-tests
 mkdir -p "$work"

@@ -2,10 +2,14 @@
 
 The layout is that of "R Internals", section 1.8, Serialization Formats:
 bzip2 around "RDX2\\nX\\n" and big-endian (XDR) items. Items that data frames
-do not hold are refused.
+do not hold are refused. Data sets of a package stand in Rdata.rdb, one after
+another, each with its size and the letter of its packing in front; Rdata.rdx
+says where.
 """
 import bz2
+import lzma
 import struct
+import zlib
 
 NILVALUE, SYMBOL, PAIRLIST = 254, 1, 2
 CHARS, LOGICAL, INTEGER, REAL, STRINGS, LIST = 9, 10, 13, 14, 16, 19
@@ -31,7 +35,9 @@ class Reader:
 
     def header(self):
         magic, self.at = self.data[:7], 7
-        if magic not in (b"RDX2\nX\n", b"RDX3\nX\n"):
+        if magic[:2] == b"X\n":  # a single object
+            self.at = 2
+        elif magic not in (b"RDX2\nX\n", b"RDX3\nX\n"):
             raise ValueError(f"no workspace of R: {magic!r}")
         version, _, _ = self.take("i", 3)
         if version == 3:
@@ -101,3 +107,21 @@ def read(path):
         reader = Reader(bz2.decompress(stream.read()))
     reader.header()
     return reader.item()
+
+
+def _object(data):
+    reader = Reader(data)
+    reader.header()
+    return reader.item()
+
+
+def read_set(folder, name):
+    """One data set of a package, as read() gives it."""
+    index = _object(zlib.decompress((folder / "Rdata.rdx").read_bytes(),
+                                    wbits=31))
+    begin, size = index["variables"][name]
+    packed = (folder / "Rdata.rdb").read_bytes()[begin:begin + size]
+    if packed[4:5] != b"Z":
+        raise ValueError(f"{name} is packed as {packed[4:5]!r}")
+    filters = [{"id": lzma.FILTER_LZMA2, "preset": 6}]
+    return _object(lzma.decompress(packed[5:], lzma.FORMAT_RAW, None, filters))

@@ -51,7 +51,7 @@ def write_winds(path, times, u, v):
         table.writerow(["time", "u [m s-1]", "v [m s-1]"])
         for time, east, north in zip(times, u, v):
             table.writerow([utc(time)] + [
-                "" if math.isnan(part) else f"{part:.6f}"
+                "" if math.isnan(part) else repr(float(part))
                 for part in (east, north)])
 
 
@@ -204,6 +204,52 @@ def judge_gaps(verdicts, program, work, times, u, v):
                    found["pieces"] == len(gone) + 1, found["pieces"])
 
 
+def series(program, case, out):
+    """What drives the water and what it does, unrounded."""
+    done = common.run(program, "run", case, "--no-range", "--no-error", "-q",
+                      "-o", out)
+    if done.returncode != 0:
+        raise SystemExit(f"run {case}: {done.stderr}")
+    with netCDF4.Dataset(out) as file:
+        return {name: numpy.ma.filled(file[name][:], numpy.nan)
+                for name in ("time", "wind_speed", "wind_from_direction",
+                             "water_level")}
+
+
+def judge_grids(verdicts, program, work, checked, u, v):
+    """The record straight out of the two grids: that of the table, to the
+    bit, for both hold the same single-precision numbers."""
+    found = common.summary(program, "check", work / "grid.yaml")["wind"]
+    told = {key for key in checked["wind"] if key not in ("files", "read")}
+    verdicts.holds("check says the same of the grids as of a table of them",
+                   told <= found.keys() and
+                   all(found[key] == checked["wind"][key] for key in told),
+                   [key for key in told
+                    if found.get(key) != checked["wind"][key]])
+    grids = series(program, work / "grid.yaml", work / "grid.nc")
+    table = series(program, work / "bridged.yaml", work / "table.nc")
+    verdicts.holds("every sample and level of a run is the same, to the bit",
+                   all(numpy.array_equal(grids[name], table[name])
+                       for name in grids),
+                   {name: abs(grids[name] - table[name]).max()
+                    for name in grids})
+    speed = numpy.hypot(u, v)
+    good = ~numpy.isnan(speed)
+    verdicts.holds("the winds that drive the water are the grids' own",
+                   numpy.allclose(grids["wind_speed"][good], speed[good],
+                                  rtol=1e-12, atol=0),
+                   grids["wind_speed"][good][:6], speed[good][:6])
+    case = work / "grid.yaml"
+    told = ", unit: hours since 1996-01-05 00:00"
+    case.write_text(case.read_text(encoding="ascii").replace(told, ""),
+                    encoding="ascii")
+    done = common.run(program, "check", case)
+    verdicts.holds("times without units are refused until the case says them",
+                   done.returncode == 4 and done.stdout == "" and
+                   "Ustorm.cdf: time 'timestep' has no units" in done.stderr,
+                   done.returncode, done.stderr)
+
+
 def main():
     root, program = pathlib.Path(sys.argv[1]), os.path.abspath(sys.argv[2])
     data = common.fetch(PACKAGE, FOLDER + "Ustorm.cdf", FOLDER + "Vstorm.cdf")
@@ -229,6 +275,9 @@ def main():
                      v[strongest])
         judge_table(verdicts, table, times)
         judge_gaps(verdicts, program, work, times, u, v)
+        for name in ("Ustorm.cdf", "Vstorm.cdf"):
+            shutil.copy(data / (FOLDER + name), work)
+        judge_grids(verdicts, program, work, checked, u, v)
     verdicts.finish()
 
 
