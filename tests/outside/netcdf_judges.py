@@ -185,7 +185,7 @@ def write(program, command, case, out, *options):
 
 def judge_bytes(verdicts, what, written, program, command, case, *options):
     """Written once more, under another name: equal to the byte."""
-    again = written.with_name("again.nc")
+    again = written.with_name("again-" + written.name)
     write(program, command, case, again, *options)
     verdicts.holds(f"{what} of one date is the same to the byte",
                    again.read_bytes() == written.read_bytes())
