@@ -95,13 +95,39 @@ static bool find_event(const lee_run_plan *plan, lee_span event[],
     return strongest > 0.0;
 }
 
+/* The seiche that a start at rest sets off may outlive the spin-up and make
+ * the highest and lowest levels of a mild run. Of several starts the one that
+ * the strongest pull sets off; true when there is one. */
+static bool find_start(const lee_run_plan *plan, lee_span *start) {
+    const int64_t spin_up = (int64_t)ceil(plan->spin_up);
+    double strongest = 0.0;
+    for (size_t s = 0; s < plan->span_count && spin_up > 0; s++) {
+        const lee_span *span = &plan->span[s];
+        for (size_t i = span->piece.first; i < span->piece.end; i++) {
+            const int64_t time = plan->wind.record->time[i];
+            if (!span->starts_steady && time >= span->from &&
+                time <= span->from + spin_up && plan->pull[i] > strongest) {
+                strongest = plan->pull[i];
+                *start = *span;
+            }
+        }
+    }
+    if (!(strongest > 0.0)) {
+        return false;
+    }
+    const int64_t end = start->judged_from + (int64_t)lead_of(plan);
+    start->to = end < start->to ? end : start->to;
+    return true;
+}
+
+/* The strongest winds, clear of each other, then the start at rest. */
 static size_t find_events(const lee_run_plan *plan,
                           lee_span event[LEE_EVENTS]) {
     size_t count = 0;
-    while (count < LEE_EVENTS && find_event(plan, event, count)) {
+    while (count + 1 < LEE_EVENTS && find_event(plan, event, count)) {
         count++;
     }
-    return count;
+    return count + find_start(plan, &event[count]);
 }
 
 /* One pass over one event: its cells and its step, as shares. */

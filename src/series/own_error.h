@@ -5,8 +5,8 @@
 #include "series/course.h"
 #include "series/run_plan.h"
 
-/* Most events that are looked at. */
-enum { LEE_EVENTS = 3 };
+/* Most events that are looked at: three strong winds and a start at rest. */
+enum { LEE_EVENTS = 4 };
 
 /* Parts of the error, m: the largest over stations (both ends of the axis
  * when there are none), events, highest and lowest level. A place that is dry
