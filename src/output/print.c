@@ -72,8 +72,10 @@ lee_cell lee_show_height(const lee_printer *to, double metres) {
 lee_cell lee_show_small(const lee_printer *to, double metres) {
     lee_cell cell;
     if (is_us(to)) {
-        (void)snprintf(cell.text, sizeof cell.text, "%.*f ft",
-                       metres < 0.1 ? 4 : 2, metres / foot);
+        /* rounded as notes are, which tell the same in SI */
+        (void)snprintf(
+            cell.text, sizeof cell.text, "%.*f ft", metres < 0.1 ? 4 : 2,
+            (metres < 0.1 ? 1e-4 * round(1e4 * metres) : metres) / foot);
     } else if (metres >= 0.1) {
         (void)snprintf(cell.text, sizeof cell.text, "%.2f m", metres);
     } else {

@@ -304,7 +304,7 @@ static void print_panels(const lee_printer *to, const panel *left,
     }
 }
 
-/* What was corrected. */
+/* What was done to samples, and to speeds. */
 
 static void add_count(line *row, size_t count, const char *words) {
     if (count > 0) {
@@ -321,8 +321,8 @@ static void print_counts(const lee_printer *to, const lee_wind_check *record) {
     add_count(&row, record->variable_missing, "variable as missing");
     add_count(&row, record->spikes, "spikes kept");
     add_count(&row, record->beyond_belief, "beyond belief kept");
-    lee_print_row(to, "corrected", "%s",
-                  row.length > 0 ? row.text : "no sample");
+    lee_print_row(to, "record", "%s",
+                  row.length > 0 ? row.text : "kept as it is");
 }
 
 static void print_links(const lee_printer *to, const lee_method *method) {
@@ -339,7 +339,7 @@ static void print_links(const lee_printer *to, const lee_method *method) {
     }
     lee_print_row(
         to, "speeds",
-        "as measured; the fastest is taken x %.3f over the water:", factor);
+        "as measured; the strongest is taken x %.3f over the water:", factor);
     lee_print_row(to, "", "%s", row.text);
 }
 

@@ -3,20 +3,21 @@
 
 #include "series/setting.h"
 
-/* The strongest wind as measured; a calm when there is none. */
-static lee_exposure_sample strongest_of(const lee_exposure_task *task) {
-    const lee_wind_record *record = task->record;
-    double fastest = 0.0;
+/* The wind, as measured, that is the strongest over the water; a calm when
+ * there is none. */
+static lee_exposure_sample strongest_of(const lee_exposure_task *task,
+                                        const lee_wind_record *water) {
+    double strongest = 0.0;
     size_t index = 0;
-    for (size_t i = 0; i < record->n; i++) {
-        const double speed = hypot(record->east[i], record->north[i]);
-        if (speed > fastest) {
-            fastest = speed;
+    for (size_t i = 0; i < water->n; i++) {
+        const double speed = hypot(water->east[i], water->north[i]);
+        if (speed > strongest) {
+            strongest = speed;
             index = i;
         }
     }
-    return fastest > 0.0 ? lee_exposure_sample_of(task, index)
-                         : lee_measured(0.0);
+    return strongest > 0.0 ? lee_exposure_sample_of(task, index)
+                           : lee_measured(0.0);
 }
 
 lee_status lee_corrections_find(const lee_problem *problem,
@@ -31,13 +32,15 @@ lee_status lee_corrections_find(const lee_problem *problem,
         .rule = &problem->wind.gap,
         .step = step,
     };
-    *found = (lee_corrections){.strongest = strongest_of(&task), .step = step};
+    *found = (lee_corrections){.step = step};
     const lee_status status =
         lee_exposure_record(&task, &found->water, &found->summary, error);
     if (status != LEE_OK) {
         lee_corrections_free(found);
+        return status;
     }
-    return status;
+    found->strongest = strongest_of(&task, &found->water);
+    return LEE_OK;
 }
 
 lee_exposure_sample lee_corrections_sample(const lee_problem *problem,

@@ -114,7 +114,7 @@ static lee_status choose_step(const lee_problem *problem, lee_run_plan *plan,
     }
     return lee_notes_add(warnings, error,
                          "solver.step of %g s is cut to %g s, the step of the "
-                         "%s: every time of it is met",
+                         "%s, whose times are all met",
                          asked, most, record <= output ? "wind" : "output");
 }
 

@@ -60,7 +60,7 @@ double lee_setting_speed(const lee_problem *problem, const lee_setting *setting,
 typedef struct lee_corrections {
     lee_wind_record water; /* at 10 m over open water: times, stamp, winds */
     lee_exposure_summary summary;
-    lee_exposure_sample strongest; /* wind of the record, as measured */
+    lee_exposure_sample strongest; /* over the water; as measured */
     int64_t step;                  /* s */
 } lee_corrections;
 

@@ -301,11 +301,12 @@ static lee_status warn_of_duration(lee_wind_estimate *wind, lee_error *error) {
         longest = fmax(longest, wind->water[i].develop_time);
     }
     if (wind->wind.duration < longest) {
-        return lee_notes_add(&wind->warnings, error,
-                             "the wind lasts %.2f h, less than half the first "
-                             "period (%.2f h): levels in time tell what it "
-                             "reaches",
-                             wind->wind.duration / 3600.0, longest / 3600.0);
+        return lee_notes_add(
+            &wind->warnings, error,
+            "the wind lasts %.3g min, less than half the first "
+            "period (%.3g min): levels in time tell what it "
+            "reaches",
+            wind->wind.duration / 60.0, longest / 60.0);
     }
     return LEE_OK;
 }

@@ -208,7 +208,7 @@ static lee_status tell_variable(const reading *r, const lee_wind_series *s,
     const char *said = r->how->column[s->of.column].unit;
     if (status == LEE_OK) {
         status = lee_notes_add(
-            r->told, error, "%s from '%s'%s%s%s%s%s%s",
+            r->told, error, "%s: '%s'%s%s%s%s%s%s",
             lee_wind_column_name(s->of.column), s->of.variable->name,
             other != NULL ? " of " : "", other != NULL ? other : "",
             is_own || said != NULL ? " in " : "",

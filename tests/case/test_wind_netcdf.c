@@ -51,10 +51,10 @@ static void what_was_read_is_kept_for_check(void **state) {
     write_bare(state);
     lee_case c = read_case(state, HOW(", station: '#1', calendar: noleap"));
     static const char *const expected[] = {
-        "eastward from 'u' in m/s, as the case says",
-        "time from 'step', hours since 1996-01-05 00:00, calendar noleap",
+        "eastward: 'u' in m/s, as the case says",
+        "time: 'step', hours since 1996-01-05 00:00, calendar noleap",
         "station 'quay', number 1 of 2",
-        "northward from 'v' in km/h, as the case says",
+        "northward: 'v' in km/h, as the case says",
     };
     const lee_notes *told = &c.problem.wind.record_told;
     assert_int_equal(told->n, 4);

@@ -235,7 +235,7 @@ static void what_was_corrected_is_told(void **state) {
         (lee_correction){.name = "land to water", .factor = 1.2};
     const char *text = draw(&all, LEE_UNITS_SI);
     assert_contains(text, "repeated dropped 12, merged 3\n");
-    assert_contains(text, "the fastest is taken x 1.320 over the water:\n");
+    assert_contains(text, "the strongest is taken x 1.320 over the water:\n");
     assert_contains(text, "height x 1.100, land to water x 1.200\n");
     forget(&all);
 }

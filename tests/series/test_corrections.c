@@ -137,6 +137,9 @@ static void a_check_shows_the_factors_of_the_strongest_wind(void **state) {
     (void)state;
     lee_problem problem = gale(1.0);
     cool(&problem);
+    for (size_t i = 13; i < N; i++) {
+        problem.wind.record.air_temperature[i] = 278.0;
+    }
     problem.exposure.stability = LEE_STABILITY_RATIO;
     lee_problem_check check;
     assert_int_equal(lee_check_problem(&problem, &check, NULL), LEE_OK);
@@ -147,6 +150,27 @@ static void a_check_shows_the_factors_of_the_strongest_wind(void **state) {
     assert_near(method->correction[0].factor, 1.12701, 0.5e-5);
     assert_true(method->correction[0].has_spread);
     assert_true(method->correction[0].spread.least < 1.0);
+    lee_problem_check_free(&check);
+    lee_problem_free(&problem);
+}
+
+/* The air cools while the fastest wind fades: the wind an hour later is the
+ * stronger one over the water. */
+static void a_check_and_a_run_show_the_factors_of_one_wind(void **state) {
+    (void)state;
+    static const lee_run_options plain = {0};
+    lee_problem problem = gale(1.0);
+    cool(&problem);
+    problem.exposure.stability = LEE_STABILITY_RATIO;
+    lee_problem_check check;
+    assert_int_equal(lee_check_problem(&problem, &check, NULL), LEE_OK);
+    lee_run_result result = run(&problem, &plain);
+    const lee_exposure_sample *checked = &check.method.corrected;
+    assert_near(checked->speed, 18.3, 1e-12);
+    assert_near(checked->speed, result.method.corrected.speed, 0.0);
+    assert_near(checked->air_temperature,
+                result.method.corrected.air_temperature, 0.0);
+    lee_run_result_free(&result);
     lee_problem_check_free(&check);
     lee_problem_free(&problem);
 }
@@ -179,6 +203,7 @@ int main(void) {
         cmocka_unit_test(a_long_wind_pulls_by_its_own_coefficient),
         cmocka_unit_test(half_a_turn_of_the_vane_turns_the_steady_wind),
         cmocka_unit_test(a_check_shows_the_factors_of_the_strongest_wind),
+        cmocka_unit_test(a_check_and_a_run_show_the_factors_of_one_wind),
         cmocka_unit_test(winds_left_uncorrected_are_warned_of),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);

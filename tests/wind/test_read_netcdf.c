@@ -36,8 +36,8 @@ static void a_record_read_apart_is_the_same(void **state) {
     assert_components(&record, 1, 2.0, 5.0);
     assert_near(record.ice[1], 0.25, 0.0);
     assert_null(record.pressure);
-    assert_true(is_told(&told, "eastward from 'u' in m s-1"));
-    assert_true(is_told(&told, "time from 'time', hours since 2031-01-10, "
+    assert_true(is_told(&told, "eastward: 'u' in m s-1"));
+    assert_true(is_told(&told, "time: 'time', hours since 2031-01-10, "
                                "calendar standard"));
     lee_notes_free(&told);
     lee_wind_record_free(&record);

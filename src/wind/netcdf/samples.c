@@ -144,7 +144,7 @@ static lee_status find_clock(timing *t, lee_notes *told, lee_error *error) {
     const bool is_own = unit != NULL && lee_cf_is_clock(unit);
     if (status == LEE_OK && told != NULL) {
         status = lee_notes_add(
-            told, error, "time from '%s', %s, calendar %s", t->variable->name,
+            told, error, "time: '%s', %s, calendar %s", t->variable->name,
             is_own ? unit : t->how->column[LEE_WIND_TIME].unit,
             lee_cf_calendar_name(t->clock.calendar));
     }
