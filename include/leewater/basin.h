@@ -83,6 +83,10 @@ typedef struct lee_basin_summary {
 } lee_basin_summary;
 lee_basin_summary lee_profile_summary(const lee_profile *profile, double level);
 
+/* The same of the longest connected water; of equals the first. */
+lee_basin_summary lee_profile_longest_water(const lee_profile *profile,
+                                            double level);
+
 /* One end of the axis. */
 typedef struct lee_end {
     bool is_held;           /* a given level; otherwise a wall */

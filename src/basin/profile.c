@@ -139,31 +139,62 @@ static stretch wet_stretch(const lee_profile *profile, size_t i, double level) {
     };
 }
 
-lee_basin_summary lee_profile_summary(const lee_profile *profile,
-                                      double level) {
-    lee_sum length = {0};
-    lee_sum area = {0};
-    lee_sum volume = {0};
-    double deepest = 0.0;
-    for (size_t i = 0; i + 1 < profile->n; i++) {
-        const stretch s = wet_stretch(profile, i, level);
-        const double *h = s.depth;
-        const double *b = s.width;
-        lee_sum_add(&length, s.length);
-        lee_sum_add(&area, 0.5 * s.length * (b[0] + b[1]));
-        /* Simpson's rule is exact for the product of two lines. */
-        lee_sum_add(&volume, s.length / 6.0 *
+/* What stretches come to, summed without rounding away the small ones. */
+typedef struct tally {
+    lee_sum length;
+    lee_sum area;
+    lee_sum volume;
+    double deepest;
+} tally;
+
+static void add_stretch(tally *to, const stretch *s) {
+    const double *h = s->depth;
+    const double *b = s->width;
+    lee_sum_add(&to->length, s->length);
+    lee_sum_add(&to->area, 0.5 * s->length * (b[0] + b[1]));
+    /* Simpson's rule is exact for the product of two lines. */
+    lee_sum_add(&to->volume, s->length / 6.0 *
                                  (2.0 * h[0] * b[0] + h[0] * b[1] +
                                   h[1] * b[0] + 2.0 * h[1] * b[1]));
-        deepest = fmax(deepest, fmax(h[0], h[1]));
-    }
-    const double a = lee_sum_value(&area);
-    const double v = lee_sum_value(&volume);
+    to->deepest = fmax(to->deepest, fmax(h[0], h[1]));
+}
+
+static lee_basin_summary summary_of(const tally *of) {
+    const double area = lee_sum_value(&of->area);
+    const double volume = lee_sum_value(&of->volume);
     return (lee_basin_summary){
-        .wet_length = lee_sum_value(&length),
-        .area = a,
-        .volume = v,
-        .mean_depth = a > 0.0 ? v / a : 0.0,
-        .max_depth = deepest,
+        .wet_length = lee_sum_value(&of->length),
+        .area = area,
+        .volume = volume,
+        .mean_depth = area > 0.0 ? volume / area : 0.0,
+        .max_depth = of->deepest,
     };
+}
+
+lee_basin_summary lee_profile_summary(const lee_profile *profile,
+                                      double level) {
+    tally all = {.deepest = 0.0};
+    for (size_t i = 0; i + 1 < profile->n; i++) {
+        const stretch s = wet_stretch(profile, i, level);
+        add_stretch(&all, &s);
+    }
+    return summary_of(&all);
+}
+
+lee_basin_summary lee_profile_longest_water(const lee_profile *profile,
+                                            double level) {
+    tally water = {.deepest = 0.0};
+    lee_basin_summary longest = {.wet_length = 0.0};
+    for (size_t i = 0; i + 1 < profile->n; i++) {
+        const stretch s = wet_stretch(profile, i, level);
+        add_stretch(&water, &s);
+        const lee_basin_summary found = summary_of(&water);
+        if (found.wet_length > longest.wet_length) {
+            longest = found;
+        }
+        if (!(level > profile->bed[i + 1])) {
+            water = (tally){.deepest = 0.0};
+        }
+    }
+    return longest;
 }

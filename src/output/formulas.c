@@ -8,6 +8,8 @@
 lee_formula_question lee_ask_formulas(const lee_case *from,
                                       const lee_steady_result *result,
                                       const lee_wind_estimate *wind) {
+    const lee_basin_summary water = lee_profile_longest_water(
+        &from->problem.lake.profile, result->still_water);
     const lee_basin_summary lake =
         lee_profile_summary(&from->problem.lake.profile, result->still_water);
     const lee_method *method = &result->method;
@@ -15,8 +17,9 @@ lee_formula_question lee_ask_formulas(const lee_case *from,
     return (lee_formula_question){
         .speed = wind->speed,
         .along = along,
-        .fetch = lake.wet_length,
-        .depth = lake.mean_depth,
+        .fetch = water.wet_length,
+        .depth = water.mean_depth,
+        .is_part = water.wet_length < lake.wet_length,
         .gravity = method->gravity,
         .pull = wind->return_flow * wind->stress * along /
                 (method->water_density_value * method->gravity),
@@ -87,12 +90,11 @@ void lee_print_formulas(const lee_printer *to,
     const lee_formula *formula;
     (void)fputc('\n', to->stream);
     lee_print_wrapped(to, 0, "", "Handbook formulas and closed forms");
-    (void)fprintf(
-        to->stream,
-        "  wetted axis %s, mean depth %s, %.0f %% of the stress along "
-        "it\n",
-        lee_show_distance(to, asked->fetch).text,
-        lee_show_length(to, asked->depth).text, 100.0 * asked->along);
+    (void)fprintf(to->stream,
+                  "  %s %s, mean depth %s, %.0f %% of the stress along it\n",
+                  asked->is_part ? "longest water" : "wetted axis",
+                  lee_show_distance(to, asked->fetch).text,
+                  lee_show_length(to, asked->depth).text, 100.0 * asked->along);
     (void)fprintf(to->stream, layout, "", lee_length_unit(to), "", "is called",
                   "equals");
     for (size_t i = 0; (formula = lee_formula_at(i)) != NULL; i++) {

@@ -2,18 +2,22 @@
 #ifndef LEEWATER_OUTPUT_FORMULAS_H
 #define LEEWATER_OUTPUT_FORMULAS_H
 
+#include <stdbool.h>
+
 #include "leewater/case.h"
 #include "leewater/series.h"
 #include "output/json_parts.h"
 #include "output/print.h"
 
-/* What formulas are asked: one wind over the wetted axis and the mean depth of
- * a lake. The vector stress along a fixed axis gives the cosine once. */
+/* What formulas are asked: one wind over the length and the mean depth of a
+ * lake, of its longest water when it is parted at rest. The vector stress
+ * along a fixed axis gives the cosine once. */
 typedef struct lee_formula_question {
     double speed; /* 10 m over open water, m s-1 */
     double along; /* share of the stress along the axis, 0 to 1 */
     double fetch; /* m */
     double depth; /* m */
+    bool is_part; /* of the longest of several waters */
     double gravity;
     double pull; /* lambda tau/(rho g) along the axis, m */
 } lee_formula_question;

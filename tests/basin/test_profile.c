@@ -90,6 +90,34 @@ static void the_summary_of_a_mirrored_lake_is_the_same(void **state) {
     lee_profile_free(&profile);
 }
 
+/* Below level 0 a bed from -1 over 2 to -3 m parts two waters: of 4000/3 m, and
+ * from 4000 + 6000 2/5 m on, 3600 m of width 600 m whose depth grows to 3 m. */
+static void the_longest_water_is_told_alone(void **state) {
+    (void)state;
+    lee_profile profile = dig();
+    profile.bed[0] = -1.0;
+    profile.bed[1] = 2.0;
+    const lee_basin_summary longest = lee_profile_longest_water(&profile, 0.0);
+    assert_near(longest.wet_length, 3600.0, 1e-9);
+    assert_near(longest.area, 3600.0 * 600.0, 1e-6);
+    assert_near(longest.mean_depth, 1.5, 1e-12);
+    assert_near(longest.max_depth, 3.0, 1e-15);
+    profile.bed[2] = 1.0;
+    const lee_basin_summary first = lee_profile_longest_water(&profile, 0.0);
+    assert_near(first.wet_length, 4000.0 / 3.0, 1e-9);
+    lee_profile_free(&profile);
+}
+
+static void a_lake_in_one_piece_is_its_own_longest_water(void **state) {
+    (void)state;
+    lee_profile profile = dig();
+    const lee_basin_summary all = lee_profile_summary(&profile, 0.0);
+    const lee_basin_summary longest = lee_profile_longest_water(&profile, 0.0);
+    assert_near(longest.wet_length, all.wet_length, 0.0);
+    assert_near(longest.volume, all.volume, 0.0);
+    lee_profile_free(&profile);
+}
+
 static void a_level_below_the_bed_leaves_nothing(void **state) {
     (void)state;
     lee_profile profile = dig();
@@ -166,6 +194,8 @@ int main(void) {
         cmocka_unit_test(the_last_stretch_keeps_its_bearing_to_the_end),
         cmocka_unit_test(the_summary_integrates_a_partly_dry_beach_exactly),
         cmocka_unit_test(the_summary_of_a_mirrored_lake_is_the_same),
+        cmocka_unit_test(the_longest_water_is_told_alone),
+        cmocka_unit_test(a_lake_in_one_piece_is_its_own_longest_water),
         cmocka_unit_test(a_level_below_the_bed_leaves_nothing),
         cmocka_unit_test(a_sound_profile_passes),
         cmocka_unit_test(a_profile_of_one_row_is_refused),
