@@ -133,7 +133,8 @@ static lee_cf_calendar rule_of(lee_cf_calendar calendar,
     if (calendar != LEE_CF_STANDARD) {
         return calendar;
     }
-    const int64_t digits = date->year * 10000 + date->month * 100 + date->day;
+    const int64_t digits =
+        date->year * 10000 + (int64_t)date->month * 100 + date->day;
     return digits < 15821015 ? LEE_CF_JULIAN : LEE_CF_PROLEPTIC_GREGORIAN;
 }
 

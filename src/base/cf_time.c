@@ -86,9 +86,10 @@ static bool take_word(const char **p, char word[LONGEST_UNIT]) {
 }
 
 bool lee_cf_is_clock(const char *text) {
-    char word[LONGEST_UNIT];
-    return take_word(&text, word) && take_word(&text, word) &&
-           lee_text_same(word, "since");
+    char unit[LONGEST_UNIT];
+    char since[LONGEST_UNIT];
+    return take_word(&text, unit) && take_word(&text, since) &&
+           lee_text_same(since, "since");
 }
 
 static bool is_digit(char c) {

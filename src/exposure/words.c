@@ -165,9 +165,9 @@ size_t lee_exposure_chain(const lee_exposure *exposure, const lee_drag *drag,
             .factor = links.factor[i],
             .is_extrapolated = links.is_extrapolated[i],
             .is_missing = link == LEE_LINK_STABILITY && links.is_missing,
-            .has_spread = summary != NULL && summary->winds > 0,
         };
-        if (told->has_spread) {
+        if (summary != NULL && summary->winds > 0) {
+            told->has_spread = true;
             told->spread = summary->link[i];
         }
         say_link(exposure, link, told);

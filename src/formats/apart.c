@@ -80,15 +80,35 @@ static void limit(int resource, rlim_t value) {
     }
 }
 
-/* Handlers of the caller are no business of the child, nor are its streams. */
-static void settle(const lee_apart_limits *limits) {
-    static const int signals[] = {SIGINT, SIGTERM, SIGALRM, SIGXCPU, SIGSEGV,
-                                  SIGBUS, SIGABRT, SIGFPE,  SIGILL,  SIGHUP};
-    for (size_t i = 0; i < sizeof signals / sizeof signals[0]; i++) {
-        (void)signal(signals[i], SIG_DFL);
+/* Handlers of the caller are no business of the child. An interruption that
+ * the caller ignores (nohup, a job in the background) is ignored on; the
+ * signals of crashes and limits end the child, whatever the caller blocks. */
+static void settle_signals(void) {
+    static const int interruptions[] = {SIGINT, SIGTERM, SIGHUP};
+    static const int ends[] = {SIGALRM, SIGXCPU, SIGPIPE, SIGSEGV,
+                               SIGBUS,  SIGABRT, SIGFPE,  SIGILL};
+    sigset_t unblocked;
+    (void)sigemptyset(&unblocked);
+    for (size_t i = 0; i < sizeof interruptions / sizeof *interruptions; i++) {
+        struct sigaction kept;
+        if (sigaction(interruptions[i], NULL, &kept) == 0 &&
+            kept.sa_handler != SIG_IGN) {
+            (void)signal(interruptions[i], SIG_DFL);
+        }
     }
+    for (size_t i = 0; i < sizeof ends / sizeof *ends; i++) {
+        (void)signal(ends[i], SIG_DFL);
+        (void)sigaddset(&unblocked, ends[i]);
+    }
+    (void)sigprocmask(SIG_UNBLOCK, &unblocked, NULL);
+}
+
+/* Streams of the caller are no business of the child; where standard error
+ * was closed the pipe may have its number. */
+static void settle(const lee_apart_limits *limits, int pipe_end) {
+    settle_signals();
     const int nowhere = open("/dev/null", O_WRONLY | O_CLOEXEC);
-    if (nowhere >= 0) {
+    if (nowhere >= 0 && pipe_end != STDERR_FILENO) {
         (void)dup2(nowhere, STDERR_FILENO);
     }
     limit(RLIMIT_CORE, 0);
@@ -164,6 +184,12 @@ static lee_status judge_death(const char *path, int ended,
         return lee_fail(error, LEE_ERR_INTERRUPTED,
                         "%s: reading was interrupted", path);
     }
+    if (by == SIGKILL) {
+        return lee_fail(error, LEE_ERR_MEMORY,
+                        "%s: reading was killed from outside, as a system "
+                        "short of memory does",
+                        path);
+    }
     return lee_fail(error, LEE_ERR_FORMAT,
                     "%s: is damaged: the library that reads it broke down "
                     "over it",
@@ -209,7 +235,7 @@ lee_status lee_apart(const char *path, const lee_apart_limits *limits,
     const pid_t child = fork();
     if (child == 0) {
         (void)close(ends[0]);
-        settle(limits);
+        settle(limits, ends[1]);
         live(ends[1], work, subject);
     }
     (void)close(ends[1]);

@@ -46,7 +46,8 @@ typedef lee_status lee_apart_work(const void *subject, lee_parcel *found,
  *
  * Errors: those of the work; LEE_ERR_FORMAT when the child dies or exceeds
  * its limits: "path: is damaged ..."; LEE_ERR_INTERRUPTED when it was
- * interrupted; LEE_ERR_MEMORY when no child can be had. */
+ * interrupted, unless the caller ignores that; LEE_ERR_MEMORY when no child can
+ * be had, or it was killed from outside. */
 lee_status lee_apart(const char *path, const lee_apart_limits *limits,
                      lee_apart_work *work, const void *subject,
                      lee_parcel *found, lee_error *error);

@@ -4,6 +4,7 @@
 
 #include <signal.h>
 #include <stdbool.h>
+#include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
 #include <unistd.h>
@@ -67,6 +68,16 @@ static lee_status sleep_long(const void *subject, lee_parcel *found,
     (void)found;
     (void)error;
     (void)sleep(100);
+    return LEE_OK;
+}
+
+/* Long enough for a limit of a second, and over by itself. */
+static lee_status sleep_briefly(const void *subject, lee_parcel *found,
+                                lee_error *error) {
+    (void)subject;
+    (void)found;
+    (void)error;
+    (void)sleep(3);
     return LEE_OK;
 }
 
@@ -154,6 +165,63 @@ static void an_interruption_is_told_as_such(void **state) {
                 "a.nc: reading was interrupted");
 }
 
+/* As under nohup, or in the background of a shell without job control. */
+static void an_interruption_that_the_caller_ignores_is_ignored(void **state) {
+    (void)state;
+    static const int ends[] = {SIGINT, SIGTERM, SIGHUP};
+    for (size_t i = 0; i < sizeof ends / sizeof ends[0]; i++) {
+        lee_parcel found = {0};
+        void (*const before)(int) = signal(ends[i], SIG_IGN);
+        const lee_status status =
+            lee_apart("a.nc", &limits, crash, &ends[i], &found, NULL);
+        (void)signal(ends[i], before);
+        assert_int_equal(status, LEE_OK);
+        lee_parcel_free(&found);
+    }
+}
+
+static void a_limit_holds_where_the_caller_blocks_its_signal(void **state) {
+    (void)state;
+    const lee_apart_limits short_ones = {.seconds = 1};
+    sigset_t alarm_only;
+    sigset_t before;
+    (void)sigemptyset(&alarm_only);
+    (void)sigaddset(&alarm_only, SIGALRM);
+    assert_int_equal(sigprocmask(SIG_BLOCK, &alarm_only, &before), 0);
+    assert_told(&short_ones, sleep_briefly, NULL, LEE_ERR_FORMAT,
+                "a.nc: is damaged, or too slow to read: nothing came of it "
+                "within 1 seconds");
+    (void)sigprocmask(SIG_SETMASK, &before, NULL);
+}
+
+static void a_kill_from_outside_is_no_damage(void **state) {
+    (void)state;
+    const int kill_it = SIGKILL;
+    assert_told(&limits, crash, &kill_it, LEE_ERR_MEMORY,
+                "a.nc: reading was killed from outside, as a system short of "
+                "memory does");
+}
+
+/* The pipe then takes the numbers of standard output and standard error. */
+static void a_result_comes_back_where_the_streams_are_closed(void **state) {
+    (void)state;
+    lee_parcel found = {0};
+    (void)fflush(NULL);
+    const int output = dup(STDOUT_FILENO);
+    const int errors = dup(STDERR_FILENO);
+    (void)close(STDOUT_FILENO);
+    (void)close(STDERR_FILENO);
+    const lee_status status =
+        lee_apart("a.nc", &limits, bring, "levels", &found, NULL);
+    (void)dup2(output, STDOUT_FILENO);
+    (void)dup2(errors, STDERR_FILENO);
+    (void)close(output);
+    (void)close(errors);
+    assert_int_equal(status, LEE_OK);
+    assert_int_equal(found.length, 6);
+    lee_parcel_free(&found);
+}
+
 static void limits_grow_with_the_file(void **state) {
     (void)state;
     const lee_apart_limits none = lee_apart_usual_limits("no-such-file.nc");
@@ -173,6 +241,10 @@ int main(void) {
         cmocka_unit_test(endless_work_is_stopped),
         cmocka_unit_test(work_that_waits_for_ever_is_stopped),
         cmocka_unit_test(an_interruption_is_told_as_such),
+        cmocka_unit_test(an_interruption_that_the_caller_ignores_is_ignored),
+        cmocka_unit_test(a_limit_holds_where_the_caller_blocks_its_signal),
+        cmocka_unit_test(a_kill_from_outside_is_no_damage),
+        cmocka_unit_test(a_result_comes_back_where_the_streams_are_closed),
         cmocka_unit_test(limits_grow_with_the_file),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);

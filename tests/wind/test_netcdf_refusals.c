@@ -100,7 +100,9 @@ static void pressure_reduced_to_sea_level_is_refused(void **state) {
     static const char *const says[] = {
         "p:standard_name = \"air_pressure_at_mean_sea_level\";",
         "p:standard_name = \"air_pressure_at_sea_level\";",
-        "p:long_name = \"Pressure reduced to Mean Sea Level\";"};
+        "p:long_name = \"Pressure reduced to Mean Sea Level\";",
+        "p:long_name = \"Pressure reduced to MSL\";",
+        "p:long_name = \"mean sea-level pressure\";"};
     lee_wind_netcdf how = {0};
     how.column[LEE_WIND_PRESSURE].name = "p";
     for (size_t i = 0; i < sizeof says / sizeof says[0]; i++) {

@@ -145,7 +145,9 @@ void lee_netcdf_put_text(lee_netcdf_out *out, int variable, const char *name,
     }
     for (char *c = clean; *c != '\0'; c++) {
         const bool is_control = (unsigned char)*c < 0x20 && *c != '\n';
-        *c = is_control ? ' ' : *c;
+        if (is_control) {
+            *c = ' ';
+        }
     }
     keep(out, nc_put_att_text(out->id, variable, name, strlen(clean), clean),
          name);

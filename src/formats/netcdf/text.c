@@ -83,7 +83,9 @@ lee_status lee_netcdf_attribute(const lee_netcdf *file,
     size_t length = 0;
     *text = NULL;
     int code = nc_inq_att(of.group, of.variable, name, &type, &length);
-    if (code == NC_ENOTATT || (type != NC_CHAR && type != NC_STRING)) {
+    const bool is_other =
+        code == NC_NOERR && type != NC_CHAR && type != NC_STRING;
+    if (code == NC_ENOTATT || is_other) {
         return LEE_OK;
     }
     if (code == NC_NOERR && length > LONGEST_ATTRIBUTE) {

@@ -213,6 +213,8 @@ static lee_status check_component(const lee_netcdf *file,
 static lee_status check_pressure(const lee_netcdf *file,
                                  const lee_netcdf_variable *variable,
                                  const char *name, lee_error *error) {
+    static const char *const words[] = {"sea level", "sea-level", "sealevel",
+                                        "reduced to", "mslp"};
     char *text = NULL;
     bool is_reduced = name != NULL && strstr(name, "sea_level") != NULL;
     const lee_status status =
@@ -220,9 +222,10 @@ static lee_status check_pressure(const lee_netcdf *file,
     for (char *c = text; c != NULL && *c != '\0'; c++) {
         *c = (char)(*c >= 'A' && *c <= 'Z' ? *c + ('a' - 'A') : *c);
     }
-    is_reduced =
-        is_reduced || (text != NULL && (strstr(text, "sea level") != NULL ||
-                                        strstr(text, "sealevel") != NULL));
+    for (size_t i = 0; i < sizeof words / sizeof words[0]; i++) {
+        is_reduced =
+            is_reduced || (text != NULL && strstr(text, words[i]) != NULL);
+    }
     free(text);
     return status == LEE_OK && is_reduced
                ? lee_fail(error, LEE_ERR_FORMAT,
