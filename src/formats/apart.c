@@ -90,10 +90,8 @@ static void settle_signals(void) {
     sigset_t unblocked;
     (void)sigemptyset(&unblocked);
     for (size_t i = 0; i < sizeof interruptions / sizeof *interruptions; i++) {
-        struct sigaction kept;
-        if (sigaction(interruptions[i], NULL, &kept) == 0 &&
-            kept.sa_handler != SIG_IGN) {
-            (void)signal(interruptions[i], SIG_DFL);
+        if (signal(interruptions[i], SIG_DFL) == SIG_IGN) {
+            (void)signal(interruptions[i], SIG_IGN);
         }
     }
     for (size_t i = 0; i < sizeof ends / sizeof *ends; i++) {

@@ -5,6 +5,7 @@
 
 #include "base/constants.h"
 #include "leewater/calendar.h"
+#include "output/print.h"
 
 void lee_json_begin(lee_json *json, const char *command) {
     lee_json_open_object(json, NULL);
@@ -133,6 +134,5 @@ void lee_json_put_time(lee_json *json, const char *name, bool is_known,
 }
 
 void lee_json_put_degrees(lee_json *json, const char *name, double radians) {
-    const double degrees = fmod(radians * 180.0 / lee_pi, 360.0);
-    lee_json_put_number(json, name, degrees < 0.0 ? degrees + 360.0 : degrees);
+    lee_json_put_number(json, name, lee_compass_degrees(radians));
 }

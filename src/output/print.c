@@ -170,6 +170,11 @@ lee_cell lee_show_bare_direction(double radians) {
     return cell;
 }
 
+double lee_compass_degrees(double radians) {
+    const double degrees = fmod(radians * 180.0 / lee_pi, 360.0);
+    return degrees < 0.0 ? degrees + 360.0 : degrees;
+}
+
 double lee_whole_degrees(double radians) {
     const double degrees = fmod(round(radians * 180.0 / lee_pi), 360.0);
     return (degrees < 0.0 ? degrees + 360.0 : degrees) + 0.0;

@@ -60,6 +60,9 @@ const char *lee_speed_unit(const lee_printer *to);
 /* Degrees of a wind that was given, to a tenth when not whole: "22.5". */
 lee_cell lee_show_bare_direction(double radians);
 
+/* Radians as degrees of [0, 360). */
+double lee_compass_degrees(double radians);
+
 /* Radians as whole degrees of [0, 360); "240 degrees". */
 double lee_whole_degrees(double radians);
 lee_cell lee_show_direction(double radians);

@@ -113,7 +113,10 @@ static char month_mark(const lee_wind_summary *summary, const calendar *plan,
             count++;
         }
     }
-    return count > 0 ? coverage_mark(sum / (double)count) : (char)' ';
+    if (count == 0) {
+        return ' ';
+    }
+    return coverage_mark(sum / (double)count);
 }
 
 static void add_year(line *row, const lee_wind_summary *summary,

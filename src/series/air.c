@@ -72,7 +72,7 @@ static double take(const double *column, size_t index, double value,
         tally->missing++;
         return usual;
     }
-    if (isnan(column[index])) {
+    if (column == NULL || isnan(column[index])) {
         tally->bridged++;
     } else {
         tally->known++;

@@ -47,7 +47,7 @@ static lee_status settle_drags(const lee_problem *problem, lee_setting *setting,
     for (size_t i = 0; (relation = lee_drag_at(i)) != NULL; i++) {
         count += relation->is_for_range ? 1 : 0;
     }
-    setting->member = calloc(count, sizeof *setting->member);
+    setting->member = calloc(count + 1, sizeof *setting->member);
     if (setting->member == NULL) {
         return lee_fail(error, LEE_ERR_MEMORY, "no room for %zu relations",
                         count);

@@ -245,7 +245,7 @@ static lee_status make_optional(joining *all, size_t room, size_t index,
     }
     const lee_wind_column column = optional_column(index);
     double **values = lee_wind_optional(&all->joined, column);
-    *values = calloc(room, sizeof **values);
+    *values = calloc(room + 1, sizeof **values);
     if (*values == NULL) {
         return lee_fail(error, LEE_ERR_MEMORY, "no room for %zu values", room);
     }

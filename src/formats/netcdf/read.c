@@ -256,14 +256,19 @@ static void pick(const plan *p, const lee_netcdf_packing *packing,
 static int read_blocks(const plan *p, const lee_netcdf_packing *packing,
                        double values[]) {
     const size_t end = p->box->start[p->along] + p->box->count[p->along];
-    unsigned char *bytes = malloc(times(
-        step_size(p, &p->read), smaller(p->step, p->read.count[p->along])));
+    const size_t step = p->step;
+    const size_t room =
+        times(step_size(p, &p->read), smaller(step, p->read.count[p->along]));
+    if (room == 0 || step == 0) {
+        return NC_EBADCHUNK; /* a box that is empty is never read */
+    }
+    unsigned char *bytes = malloc(room);
     int code = bytes == NULL ? NC_ENOMEM : NC_NOERR;
     size_t next = 0;
     for (size_t at = p->box->start[p->along]; at < end && code == NC_NOERR;
          at = next) {
         lee_netcdf_box block = p->read;
-        next = smaller((at / p->step + 1) * p->step, end);
+        next = smaller((at / step + 1) * step, end);
         block.start[p->along] = at;
         block.count[p->along] = next - at;
         code = nc_get_vara(p->variable->group, p->variable->id, block.start,

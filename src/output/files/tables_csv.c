@@ -6,7 +6,6 @@
 #include <stddef.h>
 #include <string.h>
 
-#include "base/constants.h"
 #include "formats/atomic_file.h"
 
 #include "output/print.h"
@@ -148,11 +147,6 @@ static void write_next(FILE *out, double value, int decimals) {
     write_value(out, value, decimals);
 }
 
-static double in_degrees(double radians) {
-    const double degrees = fmod(radians * 180.0 / lee_pi, 360.0);
-    return degrees < 0.0 ? degrees + 360.0 : degrees;
-}
-
 /* What a table is written from. */
 typedef struct table {
     const lee_case *from;
@@ -230,7 +224,8 @@ static void write_steady_row(FILE *out, const lee_wind_estimate *wind,
         double value;
         memcpy(&value, (const char *)wind + columns[k].offset, sizeof value);
         (void)fputs(k > 0 ? "," : "", out);
-        write_value(out, columns[k].is_angle ? in_degrees(value) : value,
+        write_value(out,
+                    columns[k].is_angle ? lee_compass_degrees(value) : value,
                     columns[k].decimals);
     }
     for (size_t i = 0; i < problem->station_count; i++) {
@@ -291,7 +286,7 @@ static void write_run_row(FILE *out, const lee_run_result *result, size_t row,
                   result->is_spin_up[row] ? 1 : 0);
     if (with_wind) {
         write_next(out, result->speed[row], 3);
-        write_next(out, in_degrees(result->from[row]), 1);
+        write_next(out, lee_compass_degrees(result->from[row]), 1);
     }
     for (size_t i = 0; i < result->station_count; i++) {
         const lee_station_series *series = &result->station[i];

@@ -5,7 +5,7 @@
 #include <stdio.h>
 #include <string.h>
 
-#include "base/constants.h"
+#include "output/print.h"
 
 int lee_nc_define(lee_netcdf_out *out, const lee_nc_variable *variable,
                   const lee_netcdf_shape *shape) {
@@ -287,8 +287,7 @@ int lee_nc_define_wind_direction(lee_netcdf_out *out,
 }
 
 double lee_nc_degrees(double radians) {
-    const double degrees = fmod(radians * 180.0 / lee_pi, 360.0);
-    return degrees < 0.0 ? degrees + 360.0 : degrees;
+    return lee_compass_degrees(radians);
 }
 
 int lee_nc_define_spin_up(lee_netcdf_out *out, int time_dimension) {

@@ -77,7 +77,10 @@ static lee_status refuse_range(const lee_wind_layout *layout,
 }
 
 static bool has_letter_first(const lee_csv_field *field) {
-    const char c = field->length > 0 ? field->bytes[0] : '\0';
+    if (field->length == 0) {
+        return false;
+    }
+    const char c = field->bytes[0];
     return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z');
 }
 

@@ -123,12 +123,27 @@ static lee_status unpack(const char *path, const lee_parcel *found,
     return LEE_OK;
 }
 
+/* Time for all the files that are read. */
+static lee_apart_limits limits_of(const char *path,
+                                  const lee_wind_netcdf *how) {
+    lee_apart_limits limits = lee_apart_usual_limits(path);
+    for (size_t i = 0; i < LEE_WIND_COLUMNS; i++) {
+        if (how->column[i].path != NULL) {
+            const lee_apart_limits more =
+                lee_apart_usual_limits(how->column[i].path);
+            limits.processor_seconds += more.processor_seconds;
+            limits.seconds += more.seconds;
+        }
+    }
+    return limits;
+}
+
 lee_status lee_wind_netcdf_read_apart(const char *path,
                                       const lee_wind_netcdf *how,
                                       lee_wind_record *record, lee_notes *told,
                                       lee_error *error) {
     const errand asked = {path, how};
-    const lee_apart_limits limits = lee_apart_usual_limits(path);
+    const lee_apart_limits limits = limits_of(path, how);
     lee_parcel found = {0};
     *record = (lee_wind_record){0};
     lee_status status = lee_apart(path, &limits, work, &asked, &found, error);

@@ -52,6 +52,9 @@ static lee_status try_named(const lee_netcdf *file,
                             lee_error *error) {
     char *names = NULL;
     char *rest = NULL;
+    if (of->id < 0) {
+        return LEE_OK; /* stands for a dimension, and has no attributes */
+    }
     lee_status status =
         lee_netcdf_attribute(file, of, "coordinates", &names, error);
     char *name = names == NULL ? NULL : strtok_r(names, " ,\t\n", &rest);

@@ -161,7 +161,7 @@ static lee_status read_degrees(const lee_netcdf *file,
                                const lee_netcdf_dimension *along, bool is_north,
                                double degrees[], lee_error *error) {
     const lee_netcdf_variable line = {
-        .name = along->name, .rank = 1, .dimension = {*along}};
+        .id = -1, .name = along->name, .rank = 1, .dimension = {*along}};
     const lee_netcdf_variable *found = NULL;
     const lee_status status =
         lee_wind_degrees_find(file, &line, is_north, &found, error);
@@ -180,13 +180,12 @@ static lee_status read_degrees(const lee_netcdf *file,
 }
 
 static lee_status nearest_of(const lee_netcdf *file, const lee_wind_netcdf *how,
-                             const lee_netcdf_dimension *along,
-                             const double latitude[], const double longitude[],
-                             search *s, lee_error *error) {
+                             size_t count, double *const degrees[2], search *s,
+                             lee_error *error) {
     double nearest = INFINITY;
-    for (size_t i = 0; i < along->length; i++) {
+    for (size_t i = 0; i < count; i++) {
         const double distance = lee_wind_distance_km(
-            how->longitude, how->latitude, longitude[i], latitude[i]);
+            how->longitude, how->latitude, degrees[0][i], degrees[1][i]);
         if (distance < nearest) {
             nearest = distance;
             s->station = i;
@@ -206,31 +205,35 @@ static lee_status by_position(const lee_netcdf *file,
                               const lee_wind_netcdf *how,
                               const lee_netcdf_dimension *along, search *s,
                               lee_notes *told, lee_error *error) {
-    double *latitude = calloc(along->length + 1, sizeof *latitude);
-    double *longitude = calloc(along->length + 1, sizeof *longitude);
-    lee_status status =
-        latitude == NULL || longitude == NULL
-            ? lee_fail(error, LEE_ERR_MEMORY, "no room for %zu stations",
-                       along->length)
-            : read_degrees(file, along, true, latitude, error);
-    if (status == LEE_OK) {
-        status = read_degrees(file, along, false, longitude, error);
+    const size_t n = along->length;
+    double *const degrees[2] = {calloc(n + 1, sizeof(double)),
+                                calloc(n + 1, sizeof(double))};
+    lee_status status = LEE_OK;
+    if (degrees[0] == NULL || degrees[1] == NULL) {
+        status = lee_fail(error, LEE_ERR_MEMORY, "no room for %zu stations", n);
+        goto done;
+    }
+    for (int k = 0; k < 2 && status == LEE_OK; k++) {
+        status = read_degrees(file, along, k == 1, degrees[k], error);
     }
     if (status == LEE_OK) {
-        status = nearest_of(file, how, along, latitude, longitude, s, error);
+        status = nearest_of(file, how, n, degrees, s, error);
     }
     if (status == LEE_OK && told != NULL) {
-        const size_t i = s->station;
+        const double longitude = degrees[0][s->station];
+        const double latitude = degrees[1][s->station];
         status = lee_notes_add(
             told, error,
             "the station nearest to the position stands at %.4f N %.4f E, "
             "%.1f km from it",
-            latitude[i], longitude[i],
-            lee_wind_distance_km(how->longitude, how->latitude, longitude[i],
-                                 latitude[i]));
+            latitude, longitude,
+            lee_wind_distance_km(how->longitude, how->latitude, longitude,
+                                 latitude));
     }
-    free(latitude);
-    free(longitude);
+
+done:
+    free(degrees[0]);
+    free(degrees[1]);
     return status;
 }
 
