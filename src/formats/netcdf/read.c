@@ -256,10 +256,10 @@ static void pick(const plan *p, const lee_netcdf_packing *packing,
 static int read_blocks(const plan *p, const lee_netcdf_packing *packing,
                        double values[]) {
     const size_t end = p->box->start[p->along] + p->box->count[p->along];
-    const size_t step = p->step;
+    const size_t step = p->step > 0 ? p->step : 1;
     const size_t room =
         times(step_size(p, &p->read), smaller(step, p->read.count[p->along]));
-    if (room == 0 || step == 0) {
+    if (room == 0) {
         return NC_EBADCHUNK; /* a box that is empty is never read */
     }
     unsigned char *bytes = malloc(room);

@@ -189,7 +189,7 @@ static lee_status read_axis(const grid *g, const lee_netcdf_variable *variable,
     const lee_netcdf_box box = lee_netcdf_whole(variable);
     *a = (axis){.n = variable->dimension[0].length};
     const lee_status status = read_all(g, variable, &box, &a->value, error);
-    if (status != LEE_OK) {
+    if (status != LEE_OK || a->value == NULL) {
         return status;
     }
     if (is_longitude) {
@@ -322,9 +322,11 @@ static double spacing_at(size_t rows, size_t columns, size_t at,
 }
 
 static lee_status nearest_of_all(const grid *g, const size_t shape[2],
-                                 const double lon[], const double lat[],
+                                 double *const degrees[2],
                                  lee_wind_place *place, lee_notes *told,
                                  lee_error *error) {
+    const double *lon = degrees[0];
+    const double *lat = degrees[1];
     size_t best = 0;
     double nearest = INFINITY;
     for (size_t i = 0; i < shape[0] * shape[1]; i++) {
@@ -360,8 +362,7 @@ static lee_status place_curved(const grid *g, lee_wind_place *place,
     const size_t skip = latitude->rank - 2;
     const size_t shape[2] = {latitude->dimension[skip].length,
                              latitude->dimension[skip + 1].length};
-    double *lat = NULL;
-    double *lon = NULL;
+    double *degrees[2] = {NULL, NULL}; /* east, north */
     place->row_dimension = latitude->dimension[skip].id;
     place->column_dimension = latitude->dimension[skip + 1].id;
     if (!g->how->has_position) {
@@ -377,15 +378,15 @@ static lee_status place_curved(const grid *g, lee_wind_place *place,
     for (size_t i = 0; i < skip; i++) {
         box.count[i] = 1;
     }
-    lee_status status = read_all(g, latitude, &box, &lat, error);
+    lee_status status = read_all(g, latitude, &box, &degrees[1], error);
     if (status == LEE_OK) {
-        status = read_all(g, g->longitude, &box, &lon, error);
+        status = read_all(g, g->longitude, &box, &degrees[0], error);
     }
-    if (status == LEE_OK) {
-        status = nearest_of_all(g, shape, lon, lat, place, told, error);
+    if (status == LEE_OK && degrees[0] != NULL && degrees[1] != NULL) {
+        status = nearest_of_all(g, shape, degrees, place, told, error);
     }
-    free(lat);
-    free(lon);
+    free(degrees[0]);
+    free(degrees[1]);
     return status;
 }
 

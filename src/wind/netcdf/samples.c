@@ -191,9 +191,10 @@ static lee_status convert(const timing *t, const double number[], bool may_lack,
     return LEE_OK;
 }
 
-/* Reads the numbers at the samples: `box` covers their range. */
+/* Reads the numbers at the samples: `box` covers their range, all there are
+ * when the samples have an index. */
 static lee_status read_times(const timing *t, const lee_netcdf_box *box,
-                             size_t begin, size_t room, bool may_lack,
+                             size_t room, bool may_lack,
                              lee_wind_samples *samples, lee_error *error) {
     double *number = calloc(room + 1, sizeof *number);
     samples->time = calloc(samples->n + 1, sizeof *samples->time);
@@ -205,7 +206,7 @@ static lee_status read_times(const timing *t, const lee_netcdf_box *box,
         lee_netcdf_read(t->file, t->variable, box, NULL, number, error);
     for (size_t i = 0;
          i < samples->n && samples->index != NULL && status == LEE_OK; i++) {
-        number[i] = number[samples->index[i] - begin]; /* never to the left */
+        number[i] = number[samples->index[i]]; /* never to the left */
     }
     if (status == LEE_OK) {
         status = convert(t, number, may_lack, samples, error);
@@ -325,7 +326,8 @@ static lee_status indexed(const timing *t, const lee_netcdf_variable *owner,
         status = no_room(length, error);
     }
     samples->n = 0;
-    for (size_t i = 0; i < length && status == LEE_OK; i++) {
+    for (size_t i = 0; i < length && status == LEE_OK && samples->index != NULL;
+         i++) {
         if (number[i] == (double)station) {
             samples->index[samples->n++] = i;
         }
@@ -356,13 +358,11 @@ static lee_status along_one(const timing *t, lee_wind_samples *samples,
         return status;
     }
     lee_netcdf_box box = lee_netcdf_whole(t->variable);
-    size_t begin = 0;
     if (samples->index == NULL) {
         box.start[0] = samples->first;
         box.count[0] = samples->n;
-        begin = samples->first;
     }
-    return read_times(t, &box, begin, box.count[0], false, samples, error);
+    return read_times(t, &box, box.count[0], false, samples, error);
 }
 
 /* Every station has times of its own: time(station, obs), padded
@@ -397,7 +397,7 @@ static lee_status along_two(const timing *t, const lee_netcdf_variable *of,
         .start = {station, 0            },
           .count = {1,       along->length}
     };
-    return read_times(t, &box, 0, along->length, true, samples, error);
+    return read_times(t, &box, along->length, true, samples, error);
 }
 
 static lee_status read_layout(const timing *t, const lee_netcdf_variable *of,
@@ -408,7 +408,7 @@ static lee_status read_layout(const timing *t, const lee_netcdf_variable *of,
     case 0:
         samples->dimension = -1;
         samples->n = 1;
-        return read_times(t, &one, 0, 1, false, samples, error);
+        return read_times(t, &one, 1, false, samples, error);
     case 1:
         return along_one(t, samples, told, error);
     case 2:
