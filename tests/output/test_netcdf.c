@@ -267,6 +267,31 @@ static void steady_winds_have_set_up_and_its_range(void **state) {
     (void)nc_close(id);
 }
 
+static void a_steady_wind_has_its_warnings(void **state) {
+    hand_made made;
+    make(&made);
+    char *texts[] = {word(&made, 7, "dry shore"), word(&made, 6, "a sill")};
+    made.wind[0].warnings = (lee_notes){2, texts};
+    const int id = open_steady(*state, &made);
+    assert_string_equal(text_of(id, NULL, "wind_warnings"),
+                        "22.00 m s-1 from 240.00 degree: dry shore; a sill");
+    (void)nc_close(id);
+}
+
+static void a_threshold_tells_whether_a_steady_level_reaches_it(void **state) {
+    hand_made made;
+    signed char read[2];
+    int variable;
+    make(&made);
+    const int id = open_steady(*state, &made);
+    assert_int_equal(nc_inq_varid(id, "threshold_reached", &variable),
+                     NC_NOERR);
+    assert_int_equal(nc_get_var_schar(id, variable, read), NC_NOERR);
+    assert_int_equal(read[0], 1); /* 101.755, high 101.89, above 101.8 */
+    assert_int_equal(read[1], 0); /* low 101.65, below 100.9 */
+    (void)nc_close(id);
+}
+
 int main(void) {
     const struct CMUnitTest tests[] = {
         FOLDER_TEST(levels_come_back_to_the_bit),
@@ -285,6 +310,8 @@ int main(void) {
         FOLDER_TEST(a_case_without_stations_is_refused),
         FOLDER_TEST(steady_levels_stand_by_wind_and_station),
         FOLDER_TEST(steady_winds_have_set_up_and_its_range),
+        FOLDER_TEST(a_steady_wind_has_its_warnings),
+        FOLDER_TEST(a_threshold_tells_whether_a_steady_level_reaches_it),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }

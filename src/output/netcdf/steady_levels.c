@@ -132,6 +132,26 @@ static void define_levels(sheet *to, int wind) {
     }
 }
 
+/* The warnings of single winds, a wind a line. An attribute: tools skip
+ * variables of text, and say so. */
+static void put_warnings(sheet *to) {
+    lee_text all = {0};
+    for (size_t k = 0; k < to->result->count; k++) {
+        const lee_wind_estimate *wind = &to->result->wind[k];
+        for (size_t i = 0; i < wind->warnings.n; i++) {
+            if (i > 0) {
+                lee_text_add(&all, "; ");
+            } else {
+                lee_text_add(&all, "%s%.2f m s-1 from %.2f degree: ",
+                             all.length > 0 ? "\n" : "", wind->wind.speed,
+                             lee_nc_degrees(wind->wind.from));
+            }
+            lee_text_add(&all, "%s", wind->warnings.text[i]);
+        }
+    }
+    lee_netcdf_put_built(&to->out, LEE_NETCDF_GLOBAL, "wind_warnings", &all);
+}
+
 static void define_thresholds(sheet *to, int wind) {
     static const lee_nc_variable reached = {
         .name = "threshold_reached",
@@ -175,6 +195,7 @@ static void define(sheet *to, const lee_nc_about *about, int64_t date) {
     }
     define_levels(to, winds.dimension[0]);
     define_thresholds(to, winds.dimension[0]);
+    put_warnings(to);
     to->height = lee_nc_define_height(&to->out);
     to->still_water =
         lee_nc_define_level(&to->out, lake, &still_water, &scalar);
