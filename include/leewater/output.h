@@ -108,9 +108,9 @@ typedef struct lee_field_file lee_field_file;
 lee_status lee_field_file_new(const lee_target *target, const lee_case *from,
                               lee_field_file **file, lee_error *error);
 
-/* For lee_run_options.take_field; field_user is the file.
+/* For lee_run_options.take_field; field_user, here `user`, is the file.
  * Errors: LEE_ERR_FILE, LEE_ERR_MEMORY. */
-lee_status lee_field_file_take(void *file, const lee_field *field,
+lee_status lee_field_file_take(void *user, const lee_field *field,
                                lee_error *error);
 
 /* Adds what is known when the run has ended and gives the file its name.

@@ -1,9 +1,9 @@
 /* summary.c - a record in sums: coverage by month, wind rose, percentiles, and
  * its strongest storms. */
 #include <math.h>
-#include <stdio.h>
 #include <stdlib.h>
 
+#include "base/cf_calendar.h"
 #include "base/constants.h"
 #include "wind/spacing.h"
 
@@ -89,16 +89,17 @@ static void step_month(walk *at) {
 }
 
 static walk month_of(int64_t time) {
-    walk at = {.year = 1970, .month = 1};
-    char text[LEE_TIME_TEXT];
-    (void)sscanf(lee_time_format(time, text), "%d-%d", &at.year, &at.month);
+    const int64_t day = time / 86400 - (time % 86400 < 0 ? 1 : 0);
+    const lee_cf_date date = lee_cf_date_of(LEE_CF_PROLEPTIC_GREGORIAN, day);
+    walk at = {.year = (int)date.year, .month = date.month};
     bound_month(&at);
     return at;
 }
 
 static size_t count_months(const walk *first, const walk *last) {
-    return (size_t)(12 * (last->year - first->year) + last->month -
-                    first->month + 1);
+    const int years = last->year - first->year;
+    const int months = 12 * years + last->month - first->month + 1;
+    return (size_t)months;
 }
 
 /* Coverage is first gathered in seconds, then divided. */
