@@ -334,15 +334,6 @@ static bool has_column(const lee_wind_record *record, size_t offset) {
     return values != NULL;
 }
 
-static bool has_positions(const lee_problem *problem) {
-    for (size_t i = 0; i < problem->station_count; i++) {
-        if (!isnan(problem->station[i].longitude)) {
-            return true;
-        }
-    }
-    return false;
-}
-
 /* Temperatures of the record take part where stability goes by them, its air
  * where the case does not give the density. */
 static bool is_used(const lee_problem *problem, size_t offset) {
@@ -372,9 +363,6 @@ lee_status lee_unused_tell(const lee_problem *problem, lee_notes *unused,
             status = lee_notes_add(unused, error, "%s of the record",
                                    columns[i].name);
         }
-    }
-    if (status == LEE_OK && has_positions(problem)) {
-        status = lee_notes_add(unused, error, "lon and lat of the stations");
     }
     return status;
 }
