@@ -311,9 +311,14 @@ int lee_nc_define_spin_up(lee_netcdf_out *out, int time_dimension) {
 
 void lee_nc_put_spin_up(lee_netcdf_out *out, int variable,
                         const lee_run_result *result) {
-    for (size_t i = 0; i < result->n; i++) {
-        const size_t one = 1;
-        const double flag = result->is_spin_up[i] ? 1.0 : 0.0;
-        lee_netcdf_put_block(out, variable, &i, &one, &flag);
+    enum { BLOCK = 1024 };
+    double flag[BLOCK];
+    for (size_t at = 0; at < result->n; at += BLOCK) {
+        const size_t left = result->n - at;
+        const size_t n = left < BLOCK ? left : BLOCK;
+        for (size_t i = 0; i < n; i++) {
+            flag[i] = result->is_spin_up[at + i] ? 1.0 : 0.0;
+        }
+        lee_netcdf_put_block(out, variable, &at, &n, flag);
     }
 }

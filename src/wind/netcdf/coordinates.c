@@ -101,6 +101,19 @@ lee_status lee_coordinate_find(const lee_netcdf *file,
     return status;
 }
 
+lee_status lee_coordinate_says(const lee_netcdf *file,
+                               const lee_netcdf_variable *variable,
+                               char **standard_name, char **units,
+                               lee_error *error) {
+    *standard_name = NULL;
+    *units = NULL;
+    const lee_status status = lee_netcdf_attribute(
+        file, variable, "standard_name", standard_name, error);
+    return status == LEE_OK
+               ? lee_netcdf_attribute(file, variable, "units", units, error)
+               : status;
+}
+
 /* Is a variable latitudes (kind 1) or longitudes (0)? By standard name, by
  * the units of the conventions [cfconventions 4.1, 4.2], or, when it has
  * neither, by its usual name. */
@@ -118,16 +131,13 @@ static lee_status is_degrees(const lee_netcdf *file,
         {"degrees_north", "degree_north", "degree_N", "degrees_N", "degreeN",
          "degreesN"},
     };
-    char *name = NULL;
-    char *unit = NULL;
+    char *name;
+    char *unit;
     if (variable->kind != LEE_NETCDF_NUMBERS) {
         return LEE_OK;
     }
-    lee_status status =
-        lee_netcdf_attribute(file, variable, "standard_name", &name, error);
-    if (status == LEE_OK) {
-        status = lee_netcdf_attribute(file, variable, "units", &unit, error);
-    }
+    const lee_status status =
+        lee_coordinate_says(file, variable, &name, &unit, error);
     *is_it = name != NULL && strcmp(name, standard[is_north]) == 0;
     for (size_t i = 0; i < 6 && name == NULL && unit != NULL; i++) {
         *is_it = *is_it || strcmp(unit, units[is_north][i]) == 0;

@@ -23,6 +23,13 @@ lee_status lee_coordinate_find(const lee_netcdf *file,
                                const lee_netcdf_variable **found,
                                lee_error *error);
 
+/* What a variable says of itself: its standard name and its units, each NULL
+ * when it has none; free() both, whatever the status. */
+lee_status lee_coordinate_says(const lee_netcdf *file,
+                               const lee_netcdf_variable *variable,
+                               char **standard_name, char **units,
+                               lee_error *error);
+
 /* The place of a dimension among those of a variable, or LEE_NETCDF_RANK. */
 size_t lee_dimension_place(const lee_netcdf_variable *variable, int id);
 

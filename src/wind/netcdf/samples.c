@@ -23,17 +23,14 @@ typedef struct timing {
 static lee_status is_time(const lee_netcdf *file,
                           const lee_netcdf_variable *variable, int kind,
                           bool *is_it, lee_error *error) {
-    char *name = NULL;
-    char *unit = NULL;
+    char *name;
+    char *unit;
     (void)kind;
     if (variable->kind != LEE_NETCDF_NUMBERS) {
         return LEE_OK;
     }
-    lee_status status =
-        lee_netcdf_attribute(file, variable, "standard_name", &name, error);
-    if (status == LEE_OK) {
-        status = lee_netcdf_attribute(file, variable, "units", &unit, error);
-    }
+    const lee_status status =
+        lee_coordinate_says(file, variable, &name, &unit, error);
     *is_it = name != NULL ? strcmp(name, "time") == 0
                           : unit != NULL && lee_cf_is_clock(unit);
     free(name);
